@@ -1,0 +1,14 @@
+import * as people from './0001-people.ts';
+import * as catalogue from './0002-catalogue.ts';
+import * as orders from './0003-orders.ts';
+import * as stockLedger from './0004-stock-ledger.ts';
+import * as paymentsAndMail from './0005-payments-and-mail.ts';
+
+/** Every migration in order; the stored name never changes once it has run anywhere. */
+export const migrations = [
+  { name: '0001-people', ...people },
+  { name: '0002-catalogue', ...catalogue },
+  { name: '0003-orders', ...orders },
+  { name: '0004-stock-ledger', ...stockLedger },
+  { name: '0005-payments-and-mail', ...paymentsAndMail },
+];
