@@ -1,0 +1,7 @@
+// Runs before the first paint, so that a chosen theme never flickers in from the other one.
+try {
+  const chosen = localStorage.getItem('tockwell-theme');
+  if (chosen === 'light' || chosen === 'dark') document.documentElement.dataset.theme = chosen;
+} catch {
+  // Without storage the system's wish decides.
+}
