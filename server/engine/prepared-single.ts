@@ -1,0 +1,127 @@
+import { checkCircuit } from './check-circuit.ts';
+import type { Circuit } from './circuit.ts';
+import { reduceState } from './output-stage.ts';
+import { temperatureFactors } from './warm-circuit.ts';
+
+/**
+ * All of a single-resistor circuit that does not depend on the timing resistor or the capacitance,
+ * reduced to plain numbers at the circuit's temperature. Treat as opaque; it is never written to.
+ */
+export interface PreparedSingle {
+  farads: number;
+  timingFactor: number;
+  capacitorFactor: number;
+  leakageSiemens: number;
+  drainAmps: number;
+  highOpenVolts: number;
+  highOhms: number;
+  highFeedback: number;
+  highBiasVolts: number;
+  lowOpenVolts: number;
+  lowOhms: number;
+  lowFeedback: number;
+  lowBiasVolts: number;
+  delayLowHighSeconds: number;
+  delayHighLowSeconds: number;
+}
+
+/**
+ * Prepares a circuit with a single timing resistor and a constant capacitance for many quick
+ * `periodAt` calls. The circuit's own timing resistance is not used. Throws a `RangeError` on
+ * impossible numbers, steered timing, a capacitance that depends on voltage, or a temperature at
+ * which a coefficient makes a value negative: those need `analyseCycle`.
+ */
+export function prepareSingle(circuit: Circuit): PreparedSingle {
+  checkCircuit(circuit);
+  const { timing, capacitor, comparator } = circuit;
+  if (timing.kind !== 'single') throw new RangeError('Only a single timing resistor is prepared.');
+  if (capacitor.biasHalvingVolts !== null || capacitor.biasCurve) {
+    throw new RangeError('Only a capacitance that does not depend on voltage is prepared.');
+  }
+  const factors = temperatureFactors(circuit);
+  if (!(factors.thresholds > 0 && factors.timing > 0 && factors.capacitor > 0)) {
+    throw new RangeError(`A value would be negative at ${circuit.celsius} °C.`);
+  }
+  const r1Ohms = circuit.r1Ohms * factors.thresholds;
+  const r2Ohms = circuit.r2Ohms * factors.thresholds;
+  const r3Ohms = circuit.r3Ohms * factors.thresholds;
+  const high = reduceState(circuit, 'high', r1Ohms, r2Ohms, r3Ohms);
+  const low = reduceState(circuit, 'low', r1Ohms, r2Ohms, r3Ohms);
+  const halfHysteresis = comparator.hysteresisVolts / 2;
+  return {
+    farads: capacitor.farads,
+    timingFactor: factors.timing,
+    capacitorFactor: factors.capacitor,
+    leakageSiemens: capacitor.leakageOhms === null ? 0 : 1 / capacitor.leakageOhms,
+    drainAmps: comparator.invertingBiasAmps + capacitor.leakageAmps,
+    highOpenVolts: high.openVolts,
+    highOhms: high.ohms,
+    highFeedback: high.feedback,
+    highBiasVolts: high.biasVolts + comparator.offsetVolts + halfHysteresis,
+    lowOpenVolts: low.openVolts,
+    lowOhms: low.ohms,
+    lowFeedback: low.feedback,
+    lowBiasVolts: low.biasVolts + comparator.offsetVolts - halfHysteresis,
+    delayLowHighSeconds: comparator.delayLowHighSeconds,
+    delayHighLowSeconds: comparator.delayHighLowSeconds,
+  };
+}
+
+/** High and low time between output edges; both NaN where the circuit cannot oscillate. */
+export interface Split {
+  highSeconds: number;
+  lowSeconds: number;
+}
+
+const scratch: Split = { highSeconds: NaN, lowSeconds: NaN };
+
+/**
+ * The settled period in seconds with timing resistance `timingOhms` and capacitance `farads` (both
+ * at the reference temperature; the prepared capacitance when left out), or NaN when the circuit
+ * cannot oscillate or a value is not positive. Allocates nothing. Agrees with `analyseCycle` to
+ * rounding. Pass a capacitance only where leakage is the same as in the prepared circuit.
+ */
+export function periodAt(
+  prepared: PreparedSingle,
+  timingOhms: number,
+  farads: number = prepared.farads,
+): number {
+  splitAt(prepared, timingOhms, farads, scratch);
+  return scratch.highSeconds + scratch.lowSeconds;
+}
+
+/** As `periodAt`, writing the high and the low time into `into`, for those who need the duty. */
+export function splitAt(
+  prepared: PreparedSingle,
+  timingOhms: number,
+  farads: number,
+  into: Split,
+): void {
+  const p = prepared;
+  into.highSeconds = NaN;
+  into.lowSeconds = NaN;
+  const ohms = timingOhms * p.timingFactor;
+  const capacitance = farads * p.capacitorFactor;
+  if (!(ohms > 0 && capacitance > 0)) return;
+  const highBranch = ohms + p.highOhms;
+  const lowBranch = ohms + p.lowOhms;
+  const highTrip =
+    (p.highBiasVolts + (p.highFeedback * p.highOpenVolts * ohms) / highBranch) /
+    (1 - (p.highFeedback * p.highOhms) / highBranch);
+  const lowTrip =
+    (p.lowBiasVolts + (p.lowFeedback * p.lowOpenVolts * ohms) / lowBranch) /
+    (1 - (p.lowFeedback * p.lowOhms) / lowBranch);
+  if (!(highTrip > 0 && highTrip > lowTrip)) return;
+  const highDrain = 1 / (1 / highBranch + p.leakageSiemens);
+  const lowDrain = 1 / (1 / lowBranch + p.leakageSiemens);
+  const highEnd = highDrain * (p.highOpenVolts / highBranch - p.drainAmps);
+  const lowEnd = lowDrain * (p.lowOpenVolts / lowBranch - p.drainAmps);
+  if (!(highEnd > highTrip && lowEnd < lowTrip)) return;
+  const highTau = highDrain * capacitance;
+  const lowTau = lowDrain * capacitance;
+  const { delayLowHighSeconds: rise, delayHighLowSeconds: fall } = p;
+  const peak = fall === 0 ? highTrip : highEnd - (highEnd - highTrip) * Math.exp(-fall / highTau);
+  const valley = rise === 0 ? lowTrip : lowEnd - (lowEnd - lowTrip) * Math.exp(-rise / lowTau);
+  into.highSeconds = highTau * Math.log((highEnd - valley) / (highEnd - highTrip)) + fall;
+  into.lowSeconds = lowTau * Math.log((lowEnd - peak) / (lowEnd - lowTrip)) + rise;
+}
