@@ -44,6 +44,10 @@ export function formatSignedPercent(fraction: number, digits = 2): string {
 
 /** The number somebody typed, with a point or a comma; NaN for anything else. */
 export function readNumber(text: string): number {
-  const plain = text.trim().replaceAll(/[\s\u202f\u00a0]/g, '').replace(',', '.').replace(minus, '-');
+  const plain = text
+    .trim()
+    .replaceAll(/[\s\u202f\u00a0]/g, '')
+    .replace(',', '.')
+    .replace(minus, '-');
   return plain === '' || !/^[-+]?(\d+\.?\d*|\.\d+)(e[-+]?\d+)?$/i.test(plain) ? NaN : Number(plain);
 }

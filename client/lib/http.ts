@@ -79,7 +79,9 @@ export async function request<Schema extends z.ZodType>(
   if (!response.ok) throw problemFrom(response, body);
   const parsed = schema.safeParse(body);
   if (!parsed.success) {
-    throw new ConnectionError('The shop answered in a form this page does not know. Load it again.');
+    throw new ConnectionError(
+      'The shop answered in a form this page does not know. Load it again.',
+    );
   }
   return parsed.data;
 }

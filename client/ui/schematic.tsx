@@ -1,0 +1,136 @@
+import { clsx } from 'clsx';
+import type { Drawing, DrawingItem } from '../../server/contracts/drawing.ts';
+import { bindUnits } from '../lib/spaces.ts';
+import { ComparatorSymbol, PartSymbol } from './schematic-symbols.tsx';
+
+export interface SchematicProps {
+  drawing: Drawing;
+  /** Roles lit now; hovering or pressing a part asks to light it. */
+  lit?: ReadonlySet<string>;
+  onLight?: (role: string | null) => void;
+  onPress?: (role: string) => void;
+  label: string;
+}
+
+type Point = readonly [number, number];
+
+function polyline(points: readonly Point[]): string {
+  return points.map(([x, y], index) => `${index === 0 ? 'M' : 'L'}${x} ${y}`).join('');
+}
+
+function Item({ item, unit, lit }: { item: DrawingItem; unit: number; lit: boolean }) {
+  switch (item.kind) {
+    case 'wire':
+      return <path d={polyline(item.points)} />;
+    case 'dot':
+      return (
+        <circle
+          cx={item.at[0]}
+          cy={item.at[1]}
+          r={4 * unit}
+          className={lit ? 'fill-spruce' : 'fill-ink'}
+        />
+      );
+    case 'part':
+      return <PartSymbol symbol={item.symbol} from={item.from} to={item.to} unit={unit} />;
+    case 'comparator':
+      return <ComparatorSymbol {...item} unit={unit} />;
+    case 'ground': {
+      const [x, y] = item.at;
+      return (
+        <path
+          d={`M${x} ${y}v${6 * unit}M${x - 13 * unit} ${y + 6 * unit}h${26 * unit}M${x - 8 * unit} ${y + 11 * unit}h${16 * unit}M${x - 3.5 * unit} ${y + 16 * unit}h${7 * unit}`}
+        />
+      );
+    }
+    case 'label':
+      return <Label item={item} unit={unit} lit={lit} />;
+  }
+}
+
+function Label(props: { item: DrawingItem & { kind: 'label' }; unit: number; lit: boolean }) {
+  const { item, unit } = props;
+  return (
+    <text
+      x={item.at[0]}
+      y={item.at[1]}
+      textAnchor={item.anchor}
+      fontSize={15 * unit}
+      strokeWidth={5 * unit}
+      paintOrder="stroke"
+      className={clsx(
+        'stroke-card',
+        item.weight === 'strong' ? 'font-heavy' : 'font-strong',
+        props.lit ? 'fill-spruce' : item.weight === 'strong' ? 'fill-ink' : 'fill-soft',
+      )}
+    >
+      {bindUnits(item.text)}
+    </text>
+  );
+}
+
+/** The halo behind a lit part, and the wide invisible line that is easy to hit. */
+function Reach({ item, unit, lit }: { item: DrawingItem; unit: number; lit: boolean }) {
+  if (item.kind === 'comparator') {
+    const [x, y] = item.at;
+    return (
+      <path
+        d={`M${x} ${y - item.height / 2}V${y + item.height / 2}L${x + item.width} ${y}Z`}
+        strokeWidth={18 * unit}
+        className={clsx('fill-transparent', lit ? 'stroke-wash' : 'stroke-transparent')}
+      />
+    );
+  }
+  if (item.kind !== 'part') return null;
+  return (
+    <path
+      d={polyline([item.from, item.to])}
+      strokeWidth={30 * unit}
+      strokeLinecap="round"
+      className={lit ? 'stroke-wash' : 'stroke-transparent'}
+    />
+  );
+}
+
+/** The circuit as a line drawing; what is lit here is lit in the list beside it too. */
+export function Schematic({ drawing, lit, onLight, onPress, label }: SchematicProps) {
+  const unit = drawing.width / 640;
+  return (
+    <svg
+      role="img"
+      aria-label={label}
+      viewBox={`0 0 ${drawing.width} ${drawing.height}`}
+      className="block w-full"
+      fill="none"
+      strokeWidth={2 * unit}
+      strokeLinejoin="round"
+      strokeLinecap="round"
+    >
+      {drawing.items.map((item, index) => {
+        const role = 'role' in item ? item.role : undefined;
+        const isLit = role !== undefined && lit?.has(role) === true;
+        return (
+          <g
+            key={index}
+            className={clsx(
+              'transition-colors duration-150',
+              isLit ? 'stroke-spruce' : 'stroke-ink',
+            )}
+            {...(role === undefined
+              ? {}
+              : {
+                  onPointerEnter: () => onLight?.(role),
+                  onPointerLeave: () => onLight?.(null),
+                  onClick: () => onPress?.(role),
+                })}
+          >
+            <Reach item={item} unit={unit} lit={isLit} />
+            <g strokeWidth={isLit ? 3 * unit : undefined}>
+              <Item item={item} unit={unit} lit={isLit} />
+            </g>
+          </g>
+        );
+      })}
+    </svg>
+  );
+}
