@@ -1,0 +1,25 @@
+/** Preferred numbers (IEC 60063) and the invented, repeatable quantities of the demonstration shop. */
+
+export const e6 = [10, 15, 22, 33, 47, 68];
+export const e24 = [
+  10, 11, 12, 13, 15, 16, 18, 20, 22, 24, 27, 30, 33, 36, 39, 43, 47, 51, 56, 62, 68, 75, 82, 91,
+];
+
+/** E96 by its generation rule, as hundreds: 100 … 976. */
+export const e96 = Array.from({ length: 96 }, (_, k) => Math.round(100 * 10 ** (k / 96)));
+
+/** A number that stays a plain decimal: 887 × 10³ instead of 886999.9999. */
+export function scaled(mantissa: number, exponent: number): number {
+  return Number(`${mantissa}e${exponent}`);
+}
+
+/**
+ * An invented count for shelf place `k`: mostly well filled, some low, a few sold out. The same every
+ * time, so that demonstrations and tests agree.
+ */
+export function inventedCount(k: number, usual: number): number {
+  const turn = (k * 7919 + 104729) % 97;
+  if (turn < 5) return 0;
+  if (turn < 14) return 1 + (turn % 7);
+  return Math.round(usual * (0.35 + (turn % 53) / 40));
+}

@@ -1,0 +1,94 @@
+import type { PackRole } from '../contracts/packs.ts';
+import type { RankedPack } from '../engine/search/find-packs.ts';
+import type { BriefInHand } from './brief.ts';
+import { partsOf, type CataloguePart, type PartOf } from './catalogue.ts';
+import type { PartDemand } from './stock.ts';
+
+/** A pack as nothing but its parts: part ids by role, and how two timing resistors are joined. */
+export interface PackChoice {
+  parts: Partial<Record<PackRole, number>>;
+  join: 'series' | 'parallel' | null;
+}
+
+/** What goes into every kit of a brief beside the timing parts. */
+export interface Accessories {
+  decoupling: PartOf<'capacitor'> | null;
+  boardFor: (sections: number) => PartOf<'board'> | null;
+}
+
+/** Supply decoupling: 100 nF next to the comparator (facts collected from makers' guidelines). */
+const decouplingFarads = 100e-9;
+
+/** Chooses decoupling capacitor and boards from stock for a brief; null where the shelf has none. */
+export function chooseAccessories(
+  catalogue: readonly CataloguePart[],
+  { brief }: BriefInHand,
+): Accessories {
+  const stocked = catalogue.filter(
+    (part) => part.mounting === brief.mounting && part.available >= brief.quantity,
+  );
+  const decoupling =
+    partsOf(stocked, 'capacitor').find(
+      ({ facts }) =>
+        facts.dielectric === 'X7R' &&
+        Math.abs(facts.farads / decouplingFarads - 1) < 0.01 &&
+        facts.ratedVolts >= 1.25 * brief.supply.maxVolts,
+    ) ?? null;
+  const boards = partsOf(stocked, 'board');
+  return {
+    decoupling,
+    boardFor: (sections) => boards.find(({ facts }) => facts.sections === sections) ?? null,
+  };
+}
+
+/** The choice of parts behind a found pack. */
+export function choiceOf(
+  pack: RankedPack,
+  inHand: BriefInHand,
+  accessories: Accessories,
+): PackChoice {
+  const { frame, first, second, join } = pack;
+  const parts: PackChoice['parts'] = {
+    U1: frame.comparator.id,
+    R1: frame.thresholds.r1.id,
+    R2: frame.thresholds.r2.id,
+    R3: frame.thresholds.r3.id,
+    ...(second === null ? { R4: first.id } : { R4A: first.id, R4B: second.id }),
+    C1: frame.capacitor.id,
+  };
+  if (frame.pullUp) parts.RP = frame.pullUp.id;
+  if (accessories.decoupling) parts.C2 = accessories.decoupling.id;
+  if (inHand.led && frame.ledResistor) {
+    parts.LED = inHand.led.id;
+    parts.RL = frame.ledResistor.id;
+  }
+  const board = accessories.boardFor(frame.comparator.sections);
+  if (board) parts.PCB = board.id;
+  if (inHand.holder) parts.BH = inHand.holder.id;
+  if (inHand.battery) parts.BAT = inHand.battery.id;
+  return { parts, join };
+}
+
+/** What one kit takes from the shelves. A value used by two roles appears twice. */
+export function demandOfChoice(choice: PackChoice): (PartDemand & { role: PackRole })[] {
+  return (Object.entries(choice.parts) as [PackRole, number][]).map(([role, partId]) => ({
+    role,
+    partId,
+    quantity: 1,
+  }));
+}
+
+/** A sentence when the shelves lack something every kit of the brief needs; null otherwise. */
+export function missingAccessory(inHand: BriefInHand, accessories: Accessories): string | null {
+  const { brief, led, battery, holder } = inHand;
+  const short = (part: CataloguePart | null, what: string) => {
+    if (part !== null && part.available >= brief.quantity) return null;
+    const left = part?.available ?? 0;
+    return `Only ${left} of ${what} ${left === 1 ? 'is' : 'are'} left today and the brief asks for ${brief.quantity}.`;
+  };
+  return (
+    short(accessories.decoupling, 'the decoupling capacitor') ??
+    (led === null ? null : short(led, led.facts.name)) ??
+    (battery === null ? null : (short(battery, battery.facts.name) ?? short(holder, 'the holder')))
+  );
+}

@@ -1,0 +1,52 @@
+import type { PackPromise } from '../contracts/packs.ts';
+import type { ResolvedBrief } from '../contracts/brief.ts';
+import { averageSupplyAmps } from '../engine/supply-current.ts';
+import { analyseCycle } from '../engine/cycle.ts';
+import type { RankedPack } from '../engine/search/find-packs.ts';
+import { formatSi } from '../engine/si-format.ts';
+import { figuresFor, percent, plusMinus, rateWords, significant } from './wording.ts';
+
+/** The promise of a found pack, in numbers and in the words of the maker's unit. */
+export function promiseOf(pack: RankedPack, brief: ResolvedBrief): PackPromise {
+  const { frequencyHz, guaranteed } = pack;
+  const cycle = analyseCycle(pack.circuit);
+  const duty = cycle.kind === 'oscillates' ? cycle.duty : Number.NaN;
+  const amps = averageSupplyAmps(pack.circuit, pack.frame.comparator.quiescentAmps);
+  const half = Math.max(guaranteed.maxHz / frequencyHz - 1, 1 - guaranteed.minHz / frequencyHz);
+  const figures = figuresFor(half);
+  const words = (hertz: number) => rateWords(hertz, brief.target.unit, figures);
+  const [slow, fast] = [words(guaranteed.minHz), words(guaranteed.maxHz)];
+  // A period runs the other way: the fastest kit has the shortest beat.
+  const isPeriod = brief.target.unit === 's' || brief.target.unit === 'ms';
+  const error = frequencyHz / brief.targetHz - 1;
+  return {
+    frequencyHz,
+    error,
+    band: { minHz: guaranteed.minHz, maxHz: guaranteed.maxHz },
+    yieldWithinBand: pack.yieldWithinBand,
+    yieldStandardError: pack.yieldStandardError,
+    duty,
+    averageSupplyAmps: amps,
+    text: {
+      ...words(frequencyHz),
+      band: plusMinus(half),
+      from: isPeriod ? fast.rate : slow.rate,
+      to: isPeriod ? slow.rate : fast.rate,
+      error: errorWords(error),
+      yield: yieldWords(pack.yieldWithinBand),
+      supply: formatSi(amps, 'A', 2),
+    },
+  };
+}
+
+function errorWords(error: number): string {
+  const size = Math.abs(error);
+  if (size < 5e-8) return 'on target';
+  return `${size < 1e-4 ? significant(size * 100, 1) + '\u202f%' : percent(size)} ${error > 0 ? 'fast' : 'slow'}`;
+}
+
+/** Share of kits in words; never rounds up to all of them. */
+function yieldWords(share: number): string {
+  if (share === 1) return '100\u202f%';
+  return percent(Math.floor(share * 1000) / 1000, 3);
+}

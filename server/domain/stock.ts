@@ -1,0 +1,66 @@
+/** A lot as the shelf sees it. Counts are single pieces. */
+export interface LotStock {
+  id: number;
+  partId: number;
+  onHand: number;
+  reserved: number;
+}
+
+/** Pieces of one part that somebody wants. */
+export interface PartDemand {
+  partId: number;
+  quantity: number;
+}
+
+export interface LotShare {
+  lotId: number;
+  partId: number;
+  quantity: number;
+}
+
+export type Allocation =
+  | { kind: 'allocated'; shares: LotShare[] }
+  | { kind: 'short'; short: { partId: number; wanted: number; available: number }[] };
+
+/** Adds up demands for the same part; ascending by part, so that locks are taken in one order. */
+export function mergeDemands(demands: readonly PartDemand[]): PartDemand[] {
+  const byPart = new Map<number, number>();
+  for (const { partId, quantity } of demands) {
+    byPart.set(partId, (byPart.get(partId) ?? 0) + quantity);
+  }
+  return [...byPart].map(([partId, quantity]) => ({ partId, quantity })).sort((a, b) => a.partId - b.partId);
+}
+
+/**
+ * Shares demands out over lots, oldest lot (lowest id) first, all or nothing. Says what is short, and
+ * by how much, when the unreserved stock does not reach.
+ */
+export function allocate(demands: readonly PartDemand[], lots: readonly LotStock[]): Allocation {
+  const shares: LotShare[] = [];
+  const short: { partId: number; wanted: number; available: number }[] = [];
+  for (const { partId, quantity } of mergeDemands(demands)) {
+    let missing = quantity;
+    const own = lots.filter((lot) => lot.partId === partId).sort((a, b) => a.id - b.id);
+    for (const lot of own) {
+      const taken = Math.min(missing, lot.onHand - lot.reserved);
+      if (taken <= 0) continue;
+      shares.push({ lotId: lot.id, partId, quantity: taken });
+      missing -= taken;
+    }
+    if (missing > 0) short.push({ partId, wanted: quantity, available: quantity - missing });
+  }
+  return short.length > 0 ? { kind: 'short', short } : { kind: 'allocated', shares };
+}
+
+/**
+ * How many kits the unreserved stock allows: the least whole number over all parts. A part used by
+ * two roles counts twice. Zero for an empty list.
+ */
+export function makeableKits(
+  perKit: readonly PartDemand[],
+  availableOf: (partId: number) => number,
+): number {
+  const merged = mergeDemands(perKit);
+  if (merged.length === 0) return 0;
+  return Math.min(...merged.map(({ partId, quantity }) => Math.floor(availableOf(partId) / quantity)));
+}

@@ -1,0 +1,122 @@
+import type { SearchBrief, StockedCapacitor, StockedComparator, StockedResistor } from './shelf.ts';
+
+/**
+ * The rules that bound the choice. They make the space of packs finite, so that an exhaustive search
+ * can check the fast one. Sources: timing resistance and capacitance limits, decoupling and bias
+ * from common practice, no source; leakage of electrolytics from the 0.01·C·V rule's consequences.
+ */
+export const limits = {
+  /** Board leakage rules above, output resistance below. */
+  minTimingOhms: 1e3,
+  /** Timing and threshold resistors stay this many times above the output's own resistance or pull-up. */
+  minOverOutput: 20,
+  maxTimingOhms: 1e7,
+  /** Breadboard rows add about 2–5 pF: half a percent of this. */
+  minTimingFarads: 1e-9,
+  strayFarads: 5e-12,
+  /** Delays may take this part of a period before another comparator must do the work. */
+  maxDelayShare: 0.1,
+  minThresholdOhms: 1e4,
+  maxThresholdOhms: 1e6,
+  /** Tolerance of resistors that may set thresholds. */
+  thresholdTolerance: 0.01,
+  preciseTolerance: 0.001,
+  /** Electrolytics are offered only where the maker accepts at least this band. */
+  electrolyticBand: 0.2,
+  /** A capacitor is run at no more than this share of its rated voltage. */
+  ratedVoltsShare: 0.8,
+  minDuty: 0.2,
+  maxDuty: 0.8,
+  /** A duty this near one half needs no shifted thresholds. */
+  equalDutyTolerance: 0.005,
+  /** Shifted thresholds may miss the asked duty by this much. */
+  dutyTolerance: 0.01,
+  /** Input capacitance at the reference node, farads; from memory, typical of small comparators. */
+  inputFarads: 1e-11,
+} as const;
+
+/** True when a comparator can run this brief: supply, speed and output current. */
+export function comparatorSuits(part: StockedComparator, brief: SearchBrief): boolean {
+  const delays = part.delayLowHighSeconds + part.delayHighLowSeconds;
+  return (
+    part.available >= brief.quantity &&
+    part.minSupplyVolts <= brief.minSupplyVolts &&
+    part.maxSupplyVolts >= brief.maxSupplyVolts &&
+    delays * brief.targetHz <= limits.maxDelayShare &&
+    (brief.load === null ||
+      (part.output === 'push-pull' && part.maxOutputAmps >= brief.load.amps))
+  );
+}
+
+/** True when a capacitor may set the time for this brief. Class-2 ceramics never do. */
+export function capacitorSuits(part: StockedCapacitor, brief: SearchBrief): boolean {
+  return (
+    part.available >= brief.quantity &&
+    part.farads >= limits.minTimingFarads &&
+    part.dielectric !== 'X7R' &&
+    (part.dielectric !== 'electrolytic' || brief.band >= limits.electrolyticBand) &&
+    part.ratedVolts * limits.ratedVoltsShare >= brief.maxSupplyVolts
+  );
+}
+
+/**
+ * Ideal value of R1–R3, in ohms: as high as 1 MΩ to save current, lowered until the bias current of
+ * both inputs shifts the thresholds by less than 0.2 % of the supply and until the input capacitance
+ * costs less than 0.2 % of the period, and never under 10 kΩ, a hundred times the output resistance
+ * or twenty times the pull-up.
+ */
+export function idealThresholdOhms(part: StockedComparator, brief: SearchBrief): number {
+  const byBias = (0.006 * brief.minSupplyVolts) / Math.max(Math.abs(part.maxInputBiasAmps), 1e-15);
+  const bySpeed = 0.006 / (brief.targetHz * limits.inputFarads);
+  const pullUp = part.output === 'open-drain' ? idealPullUpOhms(brief) : 0;
+  const floor = Math.max(
+    limits.minThresholdOhms,
+    100 * Math.max(part.highOhms, part.lowOhms),
+    limits.minOverOutput * pullUp,
+  );
+  return Math.max(floor, Math.min(limits.maxThresholdOhms, byBias, bySpeed));
+}
+
+/** Ideal pull-up of an open-drain output, in ohms: half a milliampere at the nominal supply. */
+export function idealPullUpOhms(brief: SearchBrief): number {
+  return brief.supplyVolts / 5e-4;
+}
+
+/** Lowest timing resistance that keeps the duty near the asked one against output resistance and pull-up. */
+export function lowestTimingOhms(part: StockedComparator, pullUpOhms: number | null): number {
+  const output = Math.max(part.highOhms, part.lowOhms, pullUpOhms ?? 0);
+  return Math.max(limits.minTimingOhms, limits.minOverOutput * output);
+}
+
+/** Ideal series resistor of the LED, in ohms; not positive when the supply is too low for the LED. */
+export function idealLedOhms(part: StockedComparator, brief: SearchBrief): number {
+  if (brief.load === null) return Number.POSITIVE_INFINITY;
+  return (brief.supplyVolts - brief.load.forwardVolts) / brief.load.amps - part.highOhms;
+}
+
+/**
+ * The resistor nearest to `idealOhms` by ratio among those that pass, or null. Ties go to the
+ * lower price, then to the lower id.
+ */
+export function nearestResistor(
+  resistors: readonly StockedResistor[],
+  idealOhms: number,
+  passes: (part: StockedResistor) => boolean,
+): StockedResistor | null {
+  let best: StockedResistor | null = null;
+  let bestDistance = Number.POSITIVE_INFINITY;
+  for (const part of resistors) {
+    if (!passes(part)) continue;
+    const distance = Math.abs(Math.log(part.ohms / idealOhms));
+    if (distance < bestDistance - 1e-12 || (distance <= bestDistance + 1e-12 && isBefore(part, best))) {
+      best = part;
+      bestDistance = distance;
+    }
+  }
+  return best;
+}
+
+function isBefore(part: StockedResistor, best: StockedResistor | null): boolean {
+  if (best === null) return true;
+  return part.priceMinor < best.priceMinor || (part.priceMinor === best.priceMinor && part.id < best.id);
+}

@@ -1,0 +1,48 @@
+import type { Database } from './connection.ts';
+
+export interface ShopSettings {
+  name: string;
+  address: string[];
+  email: string;
+  homeCountry: string;
+  /** Net fee per kit, in minor units: bag, build sheet, picking. */
+  kitFeeMinor: number;
+  carriers: string[];
+}
+
+/** The shop's own details and fees; throws when the database was never seeded. */
+export async function shopSettings(db: Database): Promise<ShopSettings> {
+  const row = await db('settings').where({ name: 'shop' }).first('value');
+  if (!row) throw new Error('The settings are missing: run the migrations with their seeds.');
+  return row.value;
+}
+
+export interface TaxRate {
+  country: string;
+  name: string;
+  basisPoints: number;
+  zone: 'home' | 'europe' | 'world';
+}
+
+/** Every country the shop delivers to, by name. */
+export async function taxRates(db: Database): Promise<TaxRate[]> {
+  return db('tax_rates')
+    .join('shipping_zones', 'shipping_zones.country', 'tax_rates.country')
+    .orderBy('tax_rates.name')
+    .select('tax_rates.country', 'tax_rates.name', 'basis_points as basisPoints', 'zone');
+}
+
+export interface ShippingMethod {
+  code: string;
+  name: string;
+  days: string;
+  netMinor: number;
+}
+
+/** The ways of shipping to a zone, in the order they are offered. */
+export async function shippingMethods(db: Database, zone: string): Promise<ShippingMethod[]> {
+  return db('shipping_methods')
+    .where({ zone })
+    .orderBy('position')
+    .select('code', 'name', 'days', 'net_minor as netMinor');
+}

@@ -1,0 +1,86 @@
+import type { SolveRequest } from '../contracts/brief.ts';
+import type { Advice, SolveResponse } from '../contracts/packs.ts';
+import { adviseOn } from '../domain/advice.ts';
+import { resolveBrief, type BriefInHand } from '../domain/brief.ts';
+import { chooseAccessories, choiceOf, missingAccessory } from '../domain/pack-choice.ts';
+import { shelfOf } from '../domain/shelf.ts';
+import { formTimingTables, restock, type TimingTables } from '../engine/search/composites.ts';
+import { findPacks, type FoundPacks } from '../engine/search/find-packs.ts';
+import type { Shelf } from '../engine/search/shelf.ts';
+import type { Deps } from '../ports.ts';
+import { assess, openPackBook, type PackBook } from './pack-book.ts';
+import { Refusal } from './refusal.ts';
+
+const nothing: FoundPacks = { packs: [], considered: 0 };
+
+/**
+ * Finds the packs that today's unreserved stock can make for a brief, best first. A brief that no
+ * physics can serve is refused; one that the shelves cannot hold gets the nearest packs and advice.
+ */
+export async function solveBrief(
+  deps: Pick<Deps, 'db' | 'signer'>,
+  request: SolveRequest,
+): Promise<SolveResponse> {
+  const started = performance.now();
+  const book = await openPackBook(deps.db);
+  const inHand = resolveBrief(request, book.catalogue);
+  if (inHand.kind === 'impossible') {
+    throw new Refusal('impossible-brief', inHand.errors[0]!.message, inHand.errors);
+  }
+  const found = searchShelves(book, inHand, request);
+  const accessories = chooseAccessories(book.catalogue, inHand);
+  const packs = found.packs.map((ranked) =>
+    assess(book, deps.signer, request, inHand, ranked, choiceOf(ranked, inHand, accessories)),
+  );
+  return {
+    brief: inHand.brief,
+    packs: packs.map(({ pack }) => pack).filter((pack) => pack.makeable >= request.quantity),
+    considered: found.considered,
+    elapsedMs: Math.round((performance.now() - started) * 100) / 100,
+    advice: advice(book, inHand, request, found),
+  };
+}
+
+function searchShelves(
+  book: PackBook,
+  inHand: BriefInHand,
+  request: Pick<SolveRequest, 'rank' | 'limit'>,
+): FoundPacks {
+  const accessories = chooseAccessories(book.catalogue, inHand);
+  if (inHand.brief.careLevel !== 'as-stocked') return nothing;
+  if (missingAccessory(inHand, accessories) !== null) return nothing;
+  const shelf = shelfOf(book.catalogue, inHand.brief.mounting, (comparator) =>
+    accessories.boardFor(comparator.facts.sections),
+  );
+  return findPacks(shelf, inHand.search, request.rank, request.limit, timingTables(shelf));
+}
+
+function advice(
+  book: PackBook,
+  inHand: BriefInHand,
+  request: SolveRequest,
+  found: FoundPacks,
+): Advice[] {
+  const missing = missingAccessory(inHand, chooseAccessories(book.catalogue, inHand));
+  const retry = (change: Partial<BriefInHand['brief']>) => {
+    const other = resolveBrief({ ...request, ...change }, book.catalogue);
+    if (other.kind === 'impossible') return null;
+    return searchShelves(book, other, { rank: 'closest', limit: 1 }).packs[0] ?? null;
+  };
+  return adviseOn(inHand.brief, found, missing, retry);
+}
+
+const tablesKept = 4;
+const kept = new Map<string, TimingTables>();
+
+/** Timing tables depend on which resistors the catalogue lists, not on how many are left: keep a few. */
+function timingTables(shelf: Shelf): TimingTables {
+  const key = shelf.resistors.map((part) => `${part.id}:${part.ohms}:${part.tolerance}`).join();
+  let tables = kept.get(key);
+  if (!tables) {
+    tables = formTimingTables(shelf.resistors);
+    if (kept.size >= tablesKept) kept.delete(kept.keys().next().value!);
+    kept.set(key, tables);
+  }
+  return restock(tables, shelf.resistors);
+}
