@@ -215,3 +215,22 @@ export function fieldForPath(path: string): BriefField | undefined {
   };
   return places[first];
 }
+
+/** Sentences from the server, each at the control it speaks of; the first one per control. */
+export function errorsFromProblem(problem: {
+  message: string;
+  fields: readonly { path: string; message: string }[];
+}): BriefErrors {
+  const errors: BriefErrors = {};
+  for (const { path, message } of problem.fields) {
+    const field = fieldForPath(path) ?? 'rate';
+    errors[field] ??= message;
+  }
+  return problem.fields.length === 0 ? { rate: problem.message } : errors;
+}
+
+/** The typed lit share as a fraction that can be drawn; half while it cannot be read. */
+export function litFraction(draft: Pick<BriefDraft, 'lit'>): number {
+  const share = readNumber(draft.lit) / 100;
+  return share >= 0.05 && share <= 0.95 ? share : 0.5;
+}

@@ -1,0 +1,80 @@
+import { useQuery } from '@tanstack/react-query';
+import { Link, Navigate } from 'react-router-dom';
+import type { Basket } from '../../../server/contracts/basket.ts';
+import { useBasket } from '../../features/basket/api/basket.ts';
+import { CheckoutForm } from '../../features/checkout/components/checkout-form.tsx';
+import type { KnownBuyer } from '../../features/checkout/model.ts';
+import { myOrdersOptions, orderOptions } from '../../features/orders/api/orders.ts';
+import { useSession } from '../../lib/session.ts';
+import { bindUnits } from '../../lib/spaces.ts';
+import { usePageTitle } from '../../lib/use-page-title.ts';
+import { ErrorPanel } from '../../ui/error-panel.tsx';
+import { Money } from '../../ui/money.tsx';
+import { Opening, Page } from '../../ui/page.tsx';
+import { Waiting } from '../../ui/waiting.tsx';
+import { paths } from '../paths.ts';
+
+/** What a signed-in buyer need not type again: name, e-mail, and where the last order went. */
+function useKnownBuyer(): KnownBuyer | undefined {
+  const me = useSession();
+  const orders = useQuery({ ...myOrdersOptions(1), enabled: me != null });
+  const lastRef = orders.data?.items[0]?.ref ?? '';
+  const last = useQuery({ ...orderOptions(lastRef, null), enabled: lastRef !== '' });
+  if (me == null) return undefined;
+  return { email: me.email, name: me.name, address: last.data?.shippingAddress };
+}
+
+export function Component() {
+  usePageTitle('Checkout');
+  const basket = useBasket();
+  const known = useKnownBuyer();
+  if (basket.isPending) {
+    return (
+      <Page>
+        <Waiting words="Fetching your basket" />
+      </Page>
+    );
+  }
+  if (basket.isError) {
+    return (
+      <Page className="pt-10">
+        <ErrorPanel error={basket.error} onRetry={() => void basket.refetch()} />
+      </Page>
+    );
+  }
+  if (basket.data.lines.length === 0) return <Navigate to={paths.basket.link()} replace />;
+  return (
+    <Page>
+      <Opening>
+        Where {basket.data.kits === 1 ? 'does' : 'do'}{' '}
+        <strong>{basket.data.kits === 1 ? 'your kit' : `your ${basket.data.kits} kits`}</strong> go,
+        and how?
+      </Opening>
+      <CheckoutForm
+        known={known}
+        acknowledgements={basket.data.acknowledgements}
+        summary={<Summary basket={basket.data} />}
+      />
+    </Page>
+  );
+}
+
+function Summary({ basket }: { basket: Basket }) {
+  return (
+    <section aria-label="What you order">
+      <ul className="border-t-2 border-ink">
+        {basket.lines.map((line) => (
+          <li key={line.id} className="ledger-line flex justify-between gap-4 py-2.5">
+            <span>
+              <strong className="font-heavy">{line.quantity} ×</strong> {bindUnits(line.sentence)}
+            </span>
+            <Money value={line.total} className="font-strong" />
+          </li>
+        ))}
+      </ul>
+      <Link className="link inline-block py-2" to={paths.basket.link()}>
+        Change the basket
+      </Link>
+    </section>
+  );
+}
