@@ -1,11 +1,12 @@
 import { checkCircuit } from './check-circuit.ts';
 import type { Circuit } from './circuit.ts';
-import { reduceState } from './output-stage.ts';
+import { reduceState, type OutputState } from './output-stage.ts';
 import { temperatureFactors } from './warm-circuit.ts';
 
 /**
  * All of a single-resistor circuit that does not depend on the timing resistor or the capacitance,
- * reduced to plain numbers at the circuit's temperature. Treat as opaque; it is never written to.
+ * reduced to plain numbers at the circuit's temperature. Treat as opaque; only `setThresholds` writes
+ * to it.
  */
 export interface PreparedSingle {
   farads: number;
@@ -42,29 +43,58 @@ export function prepareSingle(circuit: Circuit): PreparedSingle {
   if (!(factors.thresholds > 0 && factors.timing > 0 && factors.capacitor > 0)) {
     throw new RangeError(`A value would be negative at ${circuit.celsius} °C.`);
   }
-  const r1Ohms = circuit.r1Ohms * factors.thresholds;
-  const r2Ohms = circuit.r2Ohms * factors.thresholds;
-  const r3Ohms = circuit.r3Ohms * factors.thresholds;
-  const high = reduceState(circuit, 'high', r1Ohms, r2Ohms, r3Ohms);
-  const low = reduceState(circuit, 'low', r1Ohms, r2Ohms, r3Ohms);
-  const halfHysteresis = comparator.hysteresisVolts / 2;
-  return {
+  const prepared: PreparedSingle = {
     farads: capacitor.farads,
     timingFactor: factors.timing,
     capacitorFactor: factors.capacitor,
     leakageSiemens: capacitor.leakageOhms === null ? 0 : 1 / capacitor.leakageOhms,
     drainAmps: comparator.invertingBiasAmps + capacitor.leakageAmps,
-    highOpenVolts: high.openVolts,
-    highOhms: high.ohms,
-    highFeedback: high.feedback,
-    highBiasVolts: high.biasVolts + comparator.offsetVolts + halfHysteresis,
-    lowOpenVolts: low.openVolts,
-    lowOhms: low.ohms,
-    lowFeedback: low.feedback,
-    lowBiasVolts: low.biasVolts + comparator.offsetVolts - halfHysteresis,
+    highOpenVolts: 0,
+    highOhms: 0,
+    highFeedback: 0,
+    highBiasVolts: 0,
+    lowOpenVolts: 0,
+    lowOhms: 0,
+    lowFeedback: 0,
+    lowBiasVolts: 0,
     delayLowHighSeconds: comparator.delayLowHighSeconds,
     delayHighLowSeconds: comparator.delayHighLowSeconds,
   };
+  setThresholds(prepared, circuit, 1, 1, 1);
+  return prepared;
+}
+
+/**
+ * Rewrites `prepared` for R1 to R3 multiplied by the given factors (above 0); `circuit` must be the
+ * one it was prepared from. For kits that differ by their tolerances.
+ */
+export function setThresholds(
+  prepared: PreparedSingle,
+  circuit: Circuit,
+  r1Factor: number,
+  r2Factor: number,
+  r3Factor: number,
+): void {
+  const { thresholds } = temperatureFactors(circuit);
+  const reduce = (state: OutputState) =>
+    reduceState(
+      circuit,
+      state,
+      circuit.r1Ohms * thresholds * r1Factor,
+      circuit.r2Ohms * thresholds * r2Factor,
+      circuit.r3Ohms * thresholds * r3Factor,
+    );
+  const high = reduce('high');
+  const low = reduce('low');
+  const { offsetVolts, hysteresisVolts } = circuit.comparator;
+  prepared.highOpenVolts = high.openVolts;
+  prepared.highOhms = high.ohms;
+  prepared.highFeedback = high.feedback;
+  prepared.highBiasVolts = high.biasVolts + offsetVolts + hysteresisVolts / 2;
+  prepared.lowOpenVolts = low.openVolts;
+  prepared.lowOhms = low.ohms;
+  prepared.lowFeedback = low.feedback;
+  prepared.lowBiasVolts = low.biasVolts + offsetVolts - hysteresisVolts / 2;
 }
 
 /** High and low time between output edges; both NaN where the circuit cannot oscillate. */

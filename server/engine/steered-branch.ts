@@ -142,46 +142,80 @@ function closedSpan(total: number, slope: number, target: number): number {
   return span;
 }
 
-/** dt = C(V) (R + Ro + n·V_t/A) A / (net current) dz, with z = ln(A at the start / A). */
+/**
+ * dt = C(V) (R + Ro + n·V_t/A) A / (net current) dz, with z = ln(A at the start / A). Where bias and
+ * leakage bring the run to rest at z = rest, the integral runs over q with z = rest (1 − e^−q),
+ * which takes the pole out.
+ */
 function quadratureRun(warm: WarmCircuit, path: Path): Run {
-  const { saturationAmps, emissionVolts } = path.diode;
-  const { faradsAt, cornerVolts } = warm.capacitance;
-  const total = path.ohms + path.sourceOhms;
-  const rateFrom = (first: number) => (span: number) => {
-    const whole = first * Math.exp(-span);
-    const amps = Math.max(whole - saturationAmps, 0);
-    const net = netAmps(warm, path, amps);
-    if (net <= 0) return Infinity;
-    return (faradsAt(voltsAt(path, amps)) * (total * whole + emissionVolts)) / net;
+  const wholeAt = (volts: number) => ampsAt(path, volts) + path.diode.saturationAmps;
+  const { cornerVolts } = warm.capacitance;
+  const runFrom = (volts: number) => {
+    const first = wholeAt(volts);
+    const scale = spanScale(warm, path, first);
+    const toScale = (to: number) => scale.fromSpan(Math.log(first / wholeAt(to)));
+    const rate = (x: number) => scale.slope(x) * spanRate(warm, path, first, scale.toSpan(x));
+    return { first, scale, toScale, rate, breaks: cornerVolts.map(toScale) };
   };
-  const wholeAt = (volts: number) => ampsAt(path, volts) + saturationAmps;
-  const breaksFrom = (first: number) => cornerVolts.map((at) => Math.log(first / wholeAt(at)));
   return {
     secondsBetween: (from, to) => {
-      const first = wholeAt(from);
-      return integrate(rateFrom(first), 0, Math.log(first / wholeAt(to)), breaksFrom(first));
+      const { rate, toScale, breaks } = runFrom(from);
+      return integrate(rate, 0, toScale(to), breaks);
     },
     voltsAfter: (from, seconds) => {
       if (seconds === 0) return from;
-      const first = wholeAt(from);
-      const limit = furthestSpan(warm, path, first);
-      const span = invertIntegral(rateFrom(first), 0, limit, seconds, breaksFrom(first));
-      return voltsAt(path, Math.max(first * Math.exp(-span) - saturationAmps, 0));
+      const { first, scale, rate, breaks } = runFrom(from);
+      const x = invertIntegral(rate, 0, scale.limit, seconds, breaks);
+      return voltsAt(path, ampsAfter(path, first, scale.reach(x)));
     },
   };
 }
 
-/**
- * Where a run ends: the forward current has gone, or bias and leakage have eaten all of it, which
- * takes forever; then the end is set a rounding step short of it. The net current falls with the
- * forward current, so bisection finds the place.
- */
-function furthestSpan(warm: WarmCircuit, path: Path, first: number): number {
-  const { saturationAmps } = path.diode;
-  const end = Math.log(first / saturationAmps);
-  const net = (span: number) =>
-    netAmps(warm, path, Math.max(first * Math.exp(-span) - saturationAmps, 0));
-  if (net(end) > 0) return end;
+function ampsAfter(path: Path, first: number, span: number): number {
+  return Math.max(first * Math.exp(-span) - path.diode.saturationAmps, 0);
+}
+
+function spanRate(warm: WarmCircuit, path: Path, first: number, span: number): number {
+  const whole = first * Math.exp(-span);
+  const amps = ampsAfter(path, first, span);
+  const farads = warm.capacitance.faradsAt(voltsAt(path, amps));
+  const ohms = path.ohms + path.sourceOhms;
+  return (farads * (ohms * whole + path.diode.emissionVolts)) / netAmps(warm, path, amps);
+}
+
+/** The variable a run is integrated over, and its relation to the span z. */
+interface SpanScale {
+  limit: number;
+  fromSpan(span: number): number;
+  /** The span at which the rate is taken, and d span / dx there. */
+  toSpan(x: number): number;
+  slope(x: number): number;
+  /** The span reached at x. */
+  reach(x: number): number;
+}
+
+/** Beyond this q the approach to rest is taken as the exponential it has become. */
+const settledAt = 10;
+
+function spanScale(warm: WarmCircuit, path: Path, first: number): SpanScale {
+  const end = Math.log(first / path.diode.saturationAmps);
+  const net = (span: number) => netAmps(warm, path, ampsAfter(path, first, span));
+  if (net(end) > 0) {
+    const same = (span: number) => span;
+    return { limit: end, fromSpan: same, toSpan: same, slope: () => 1, reach: same };
+  }
+  const rest = restingSpan(net, end);
+  return {
+    limit: Infinity,
+    fromSpan: (span) => (span < rest ? -Math.log1p(-span / rest) : Infinity),
+    toSpan: (x) => -rest * Math.expm1(-Math.min(x, settledAt)),
+    slope: (x) => rest * Math.exp(-Math.min(x, settledAt)),
+    reach: (x) => -rest * Math.expm1(-x),
+  };
+}
+
+/** Where bias and leakage have eaten all of a falling current, by bisection. */
+function restingSpan(net: (span: number) => number, end: number): number {
   let low = 0;
   let high = end;
   for (let step = 0; step < 60; step++) {
