@@ -115,10 +115,19 @@ export const deskTodaySchema = z.object({
   late: z.int(),
   soldToday: moneySchema,
   outOfStock: z.int(),
-  lowStock: z.array(z.object({ sku: z.string(), name: z.string(), available: z.int() })),
-  /** Best guaranteed half-band (as a fraction) over a log-spaced grid of rates; null is a hole. */
-  coverage: z.array(z.object({ frequencyHz: z.number(), band: z.number().nullable() })),
+  lowStock: z.array(z.object({ id: z.string(), sku: z.string(), name: z.string(), available: z.int() })),
+  /** What needs the owner today, in sentences, each with where to go. */
   decisions: z.array(z.object({ when: z.string(), text: z.string(), path: z.string(), action: z.string() })),
   ledger: z.array(ledgerEntrySchema),
 });
 export type DeskToday = z.infer<typeof deskTodaySchema>;
+
+/** What today's shelves hold over a log-spaced range of rates, for a logic clock at 5 V. */
+export const coverageSchema = z.object({
+  band: z.number(),
+  /** Best guaranteed half-band as a fraction of the rate; null where no pack comes within 1 % of it. */
+  points: z.array(z.object({ frequencyHz: z.number(), halfBand: z.number().nullable() })),
+  /** Share of the points whose guaranteed band lies within `band`. */
+  covered: z.number(),
+});
+export type Coverage = z.infer<typeof coverageSchema>;

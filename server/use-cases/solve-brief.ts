@@ -41,7 +41,8 @@ export async function solveBrief(
   };
 }
 
-function searchShelves(
+/** Looks through the shelves for a brief in hand. */
+export function searchShelves(
   book: PackBook,
   inHand: BriefInHand,
   request: Pick<SolveRequest, 'rank' | 'limit'>,

@@ -1,0 +1,47 @@
+import type { BuildSheet } from '../contracts/orders.ts';
+import { buildSteps, expectedReadings } from '../domain/build-sheet.ts';
+import { drawSchematic } from '../domain/schematic.ts';
+import type { Deps } from '../ports.ts';
+import { linesOfOrders, type OrderLineRow } from '../store/orders.ts';
+import { Refusal } from './refusal.ts';
+import { requireOwnOrder, type OrderReader } from './view-order.ts';
+
+/** The build sheet of one order line, for its buyer. */
+export async function viewBuildSheet(
+  deps: Pick<Deps, 'db' | 'signer'>,
+  reader: OrderReader,
+  ref: string,
+  lineId: string,
+): Promise<BuildSheet> {
+  const order = await requireOwnOrder(deps, reader, ref);
+  const line = (await linesOfOrders(deps.db, [order.id])).find((one) => one.id === lineId);
+  if (!line) throw new Refusal('not-found', `Order ${ref} has no such line.`);
+  return buildSheetOf(ref, line);
+}
+
+/** Everything a build sheet says, from the frozen pack. */
+export function buildSheetOf(ref: string, line: OrderLineRow): BuildSheet {
+  const { promise, parts, brief } = line;
+  return {
+    ref,
+    lineId: line.id,
+    kits: line.quantity,
+    identifier: line.identifier,
+    sentence: line.sentence,
+    promise,
+    strip: line.strip,
+    parts,
+    drawing: drawSchematic({ parts, join: joinOf(line), supplyLabel: brief.supply.label }),
+    steps: buildSteps(parts),
+    readings: expectedReadings(line.circuit, `${promise.text.rate} ${promise.text.unit}`),
+    cautions: line.cautions,
+  };
+}
+
+/** Whether two timing resistors add (series) or not, told by the circuit's resistance. */
+function joinOf(line: OrderLineRow): 'series' | 'parallel' | null {
+  const second = line.parts.find((part) => part.role === 'R4B');
+  const first = line.parts.find((part) => part.role === 'R4A');
+  if (!second?.ohms || !first?.ohms || line.circuit.timing.kind !== 'single') return null;
+  return line.circuit.timing.ohms > Math.max(first.ohms, second.ohms) ? 'series' : 'parallel';
+}

@@ -1,0 +1,58 @@
+import type { PackPage } from '../contracts/packs.ts';
+import { money } from '../domain/money.ts';
+import { causesSentence, spreadCauses } from '../domain/spread-causes.ts';
+import { drawSchematic } from '../domain/schematic.ts';
+import { analyseCycle } from '../engine/cycle.ts';
+import { sampleWaveform } from '../engine/waveform.ts';
+import type { Deps } from '../ports.ts';
+import { openPackBook, openToken } from './pack-book.ts';
+import { Refusal } from './refusal.ts';
+
+/** A pack in full, worked out from today's shelves and prices. */
+export async function viewPack(
+  deps: Pick<Deps, 'db' | 'signer'>,
+  token: string,
+): Promise<PackPage> {
+  const book = await openPackBook(deps.db);
+  const opened = openToken(book, deps.signer, token);
+  if (opened.kind === 'unknown') {
+    throw new Refusal('not-found', 'This link leads to no pack. Ask for it again from the brief.');
+  }
+  if (opened.kind === 'gone') throw new Refusal('not-found', opened.reason);
+  const { pack, inHand, ranked, price, choice } = opened.assessed;
+  const cycle = analyseCycle(ranked.circuit);
+  if (cycle.kind !== 'oscillates') throw new Error(cycle.reason);
+  const waveform = sampleWaveform(ranked.circuit, cycle, {
+    periods: 3,
+    pointsPerSegment: 40,
+    fromStart: true,
+  });
+  const causes = spreadCauses(ranked, inHand.search);
+  return {
+    brief: inHand.brief,
+    pack,
+    circuit: drawSchematic({
+      parts: pack.parts,
+      join: choice.join,
+      supplyLabel: inHand.brief.supply.label,
+    }),
+    waveform: {
+      output: waveform.output,
+      capacitor: waveform.capacitor,
+      thresholdLowVolts: waveform.thresholdLowVolts,
+      thresholdHighVolts: waveform.thresholdHighVolts,
+      supplyVolts: ranked.circuit.supplyVolts,
+      firstHighSeconds: cycle.firstHighSeconds,
+      periodSeconds: cycle.periodSeconds,
+    },
+    causes,
+    causesText: causesSentence(causes),
+    priceLines: price.lines.map(({ label, grossMinor }) => ({ label, amount: money(grossMinor) })),
+    identifier: `Kit ${token.slice(-8)}`,
+    maker: {
+      name: book.settings.name,
+      address: book.settings.address,
+      email: book.settings.email,
+    },
+  };
+}
