@@ -1,5 +1,5 @@
 import { clsx } from 'clsx';
-import { useDeferredValue } from 'react';
+import { useDeferredValue, useState } from 'react';
 import type { UseQueryResult } from '@tanstack/react-query';
 import type { SolveResponse } from '../../server/contracts/packs.ts';
 import { PutInBasket } from '../features/basket/components/put-in-basket.tsx';
@@ -23,10 +23,17 @@ interface HomeRailProps {
   onAdvice: (change: Record<string, unknown>) => void;
 }
 
+/** The newest answer there was: a refused brief leaves the tags of the one before hanging. */
+function useLastAnswer(newest: SolveResponse | undefined): SolveResponse | undefined {
+  const [last, setLast] = useState(newest);
+  if (newest !== undefined && newest !== last) setLast(newest);
+  return newest ?? last;
+}
+
 /** The rail with what the shelves answer, kept in place while the next answer is worked out. */
 export function HomeRail(props: HomeRailProps) {
   const { solved } = props;
-  const answer = useDeferredValue(solved.data);
+  const answer = useDeferredValue(useLastAnswer(solved.data));
   const stale = solved.isFetching || props.refused;
   if (solved.isError && !isProblem(solved.error)) {
     return (
@@ -46,6 +53,7 @@ export function HomeRail(props: HomeRailProps) {
       <Answered answer={answer} stale={stale} refused={props.refused} />
       <LiveRegion words={stale ? '' : answerInWords(answer)} />
       <div className={clsx('transition-opacity duration-200', props.refused && 'opacity-45')}>
+        {answer.packs.length === 0 && <NothingFits />}
         <div className={answer.advice.length > 0 ? 'mb-10' : undefined}>
           <AdviceList advice={answer.advice} onApply={props.onAdvice} />
         </div>
@@ -69,17 +77,19 @@ function Answered(props: { answer: SolveResponse; stale: boolean; refused: boole
   );
 }
 
+function NothingFits() {
+  return (
+    <EmptyState title="No pack on the shelves fits this brief.">
+      Change one of the facts in the sentence above. The lines below say which change would help.
+    </EmptyState>
+  );
+}
+
 function Packs({ answer }: { answer: SolveResponse }) {
   const { front, behind } = frontAndBehind(answer.packs);
   const kits = answer.brief.quantity;
   const packPath = (token: string) => paths.pack.link(token, kits);
-  if (front.length === 0) {
-    return (
-      <EmptyState title="No pack on the shelves fits this brief.">
-        Change one of the facts in the sentence above; the lines here say which change would help.
-      </EmptyState>
-    );
-  }
+  if (front.length === 0) return null;
   return (
     <>
       <Rail label="Packs that hang first">

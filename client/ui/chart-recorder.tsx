@@ -79,45 +79,47 @@ export function ChartRecorder({ strip }: { strip: PulseStripData }) {
   const y = (level: number) => inset + (1 - level) * (height - 2 * inset);
   const total = traces.beatWidth * traces.beats;
   return (
-    <div ref={frame} className="relative overflow-hidden">
-      <svg aria-hidden="true" width={width} height={height} className="block">
-        {strip.thresholds.map((level, index) => (
-          <path
-            key={index}
-            d={`M0 ${y(level)}H${width}`}
-            className="stroke-soft/60"
-            strokeDasharray="1.5 5"
-          />
-        ))}
-        <g ref={paper}>
-          <path d={`${traces.output}V${y(0)}H0Z`} className="fill-spruce/10" />
-          <path d={traces.output} fill="none" className="stroke-spruce" strokeWidth="2.25" />
-          <path d={traces.capacitor} fill="none" className="stroke-slate" strokeWidth="2" />
-          {Array.from({ length: traces.beats }, (_, beat) => (
+    <div className="relative">
+      <div ref={frame} className="overflow-hidden">
+        <svg aria-hidden="true" width={width} height={height} className="block">
+          {strip.thresholds.map((level, index) => (
             <path
-              key={beat}
-              d={`M${beat * traces.beatWidth} ${height - 8}v8`}
-              className="stroke-soft"
-              strokeWidth="1.5"
+              key={index}
+              d={`M0 ${y(level)}H${width}`}
+              className="stroke-soft/60"
+              strokeDasharray="1.5 5"
             />
           ))}
-          <path d={`M0 ${height - 0.75}H${total}`} className="stroke-line" strokeWidth="1.5" />
-        </g>
-        <path d={`M${penShare * width} 0V${height}`} className="stroke-ink/50" strokeWidth="1" />
-        <circle
-          ref={pen}
-          cx={penShare * width}
-          r="7"
-          className="fill-card stroke-ink data-[lit=true]:fill-marigold"
-          strokeWidth="2"
-        />
-      </svg>
+          <g ref={paper}>
+            <path d={`${traces.output}V${y(0)}H0Z`} className="fill-spruce/10" />
+            <path d={traces.output} fill="none" className="stroke-spruce" strokeWidth="2.25" />
+            <path d={traces.capacitor} fill="none" className="stroke-slate" strokeWidth="2" />
+            {Array.from({ length: traces.beats }, (_, beat) => (
+              <path
+                key={beat}
+                d={`M${beat * traces.beatWidth} ${height - 8}v8`}
+                className="stroke-soft"
+                strokeWidth="1.5"
+              />
+            ))}
+            <path d={`M0 ${height - 0.75}H${total}`} className="stroke-line" strokeWidth="1.5" />
+          </g>
+          <path d={`M${penShare * width} 0V${height}`} className="stroke-ink/50" strokeWidth="1" />
+          <circle
+            ref={pen}
+            cx={penShare * width}
+            r="7"
+            className="fill-card stroke-ink data-[lit=true]:fill-marigold"
+            strokeWidth="2"
+          />
+        </svg>
+      </div>
       {!reduced && (
         <button
           type="button"
           onClick={() => setStopped(!stopped)}
           aria-label={stopped ? 'Let the strip run' : 'Stop the strip'}
-          className="absolute right-4 bottom-3 grid size-11 place-items-center rounded-full border border-line bg-paper text-soft hover:text-ink sm:right-6 sm:size-9"
+          className="absolute top-full right-3 grid size-11 place-items-center text-soft hover:text-ink sm:right-6"
         >
           {stopped ? (
             <Play aria-hidden className="size-4" />

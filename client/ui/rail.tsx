@@ -24,7 +24,7 @@ export function Rail({ children, label }: { children: ReactNode; label: string }
       <div aria-hidden="true" className="rail mx-1" />
       <ul
         aria-label={label}
-        className="grid gap-x-6 gap-y-16 pt-11 md:grid-cols-2 lg:grid-cols-3 lg:gap-x-8"
+        className="grid gap-x-6 gap-y-16 pt-10 md:grid-cols-2 lg:grid-cols-3 lg:gap-x-8"
       >
         {children}
       </ul>

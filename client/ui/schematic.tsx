@@ -1,6 +1,7 @@
 import { clsx } from 'clsx';
 import type { Drawing, DrawingItem } from '../../server/contracts/drawing.ts';
 import { bindUnits } from '../lib/spaces.ts';
+import { viewBoxOf } from './schematic-bounds.ts';
 import { ComparatorSymbol, PartSymbol } from './schematic-symbols.tsx';
 
 export interface SchematicProps {
@@ -99,7 +100,7 @@ export function Schematic({ drawing, lit, onLight, onPress, label }: SchematicPr
     <svg
       role="img"
       aria-label={label}
-      viewBox={`0 0 ${drawing.width} ${drawing.height}`}
+      viewBox={viewBoxOf(drawing)}
       className="block w-full"
       fill="none"
       strokeWidth={2 * unit}

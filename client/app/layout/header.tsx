@@ -32,20 +32,23 @@ function useEntries(): Entry[] {
   ];
 }
 
-/** Name and ways on; on a phone all of them stay in sight, on a second line. */
+/** Name and ways on; on a phone all of them stay in sight, the basket beside the name. */
 export function Header() {
   const entries = useEntries();
   return (
     <header data-shell className="border-b border-line">
-      <Page className="flex flex-wrap items-center justify-between gap-x-8 sm:min-h-[4.5rem]">
+      <Page className="relative flex flex-wrap items-center justify-between gap-x-8 sm:min-h-[4.5rem]">
         <Link to={paths.home.link()} className="flex min-h-14 items-center gap-2.5">
           <Mark className="size-9" />
           <span className="text-title font-heavy tracking-tight">Tockwell</span>
         </Link>
         <nav aria-label="Main" className="-mx-1.5 max-sm:w-full">
-          <ul className="flex flex-wrap gap-x-1 max-sm:justify-between sm:gap-x-3">
+          <ul className="flex flex-wrap gap-x-1 sm:gap-x-3">
             {entries.map((entry) => (
-              <li key={entry.to}>
+              <li
+                key={entry.to}
+                className="max-sm:last:absolute max-sm:last:top-1.5 max-sm:last:right-2.5"
+              >
                 <NavLink
                   to={entry.to}
                   end={entry.end}

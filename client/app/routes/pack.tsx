@@ -4,7 +4,7 @@ import type { PackPage } from '../../../server/contracts/packs.ts';
 import { PutInBasket } from '../../features/basket/components/put-in-basket.tsx';
 import { usePackPage } from '../../features/packs/api/get-pack.ts';
 import { Causes } from '../../features/packs/components/causes.tsx';
-import { Cautions } from '../../features/packs/components/cautions.tsx';
+import { GraveCautions, PlainCautions } from '../../features/packs/components/cautions.tsx';
 import { CircuitPanel } from '../../features/packs/components/circuit-panel.tsx';
 import { LampPreview } from '../../features/packs/components/lamp-preview.tsx';
 import { PriceLines } from '../../features/packs/components/price-lines.tsx';
@@ -50,42 +50,36 @@ function PackView({ page }: { page: PackPage }) {
       <p className="text-soft">From your brief</p>
       <h1 className="max-w-[46em] text-title font-strong">{bindUnits(brief.sentence)}.</h1>
       <PulseStrip strip={pack.strip} withAxis className="mt-6 mb-12 h-16" />
-      <div className="grid items-start gap-x-12 gap-y-8 lg:grid-cols-[1.2fr_1fr]">
-        <CircuitPanel drawing={page.circuit} lit={litSet} onLight={setLit} />
-        <div className="space-y-7">
+      <div className="mb-8 empty:hidden">
+        <GraveCautions cautions={pack.cautions} />
+      </div>
+      <div className="grid items-start gap-x-12 gap-y-10 lg:grid-cols-[1.2fr_1fr]">
+        <div className="space-y-8">
+          <CircuitPanel drawing={page.circuit} lit={litSet} onLight={setLit} />
+          <section aria-labelledby="parts">
+            <h2 id="parts" className="mb-3 text-title font-strong">
+              What is in the bag
+            </h2>
+            <PartsTable
+              parts={pack.parts}
+              lit={litSet}
+              onLight={setLit}
+              caption="Parts of this pack"
+            />
+          </section>
+        </div>
+        <div className="space-y-9">
           <PromiseCard brief={brief} pack={pack} identifier={page.identifier} />
           <Buy page={page} />
-        </div>
-      </div>
-      <div className="mt-8">
-        <Cautions cautions={pack.cautions} />
-      </div>
-      <div className="mt-14 grid items-start gap-x-14 gap-y-14 lg:grid-cols-2">
-        <section aria-labelledby="parts">
-          <h2 id="parts" className="mb-3 text-title font-strong">
-            What is in the bag
-          </h2>
-          <PartsTable
-            parts={pack.parts}
-            lit={litSet}
-            onLight={setLit}
-            caption="Parts of this pack"
-          />
-        </section>
-        <div className="space-y-14">
-          <Causes page={page} />
           <PriceLines page={page} />
+          <PlainCautions cautions={pack.cautions} />
           {brief.load.kind === 'led' && (
-            <section aria-labelledby="lamp" className="space-y-3">
-              <h2 id="lamp" className="text-title font-strong">
-                See the pace
-              </h2>
-              <LampPreview frequencyHz={pack.promise.frequencyHz} duty={pack.promise.duty} />
-            </section>
+            <LampPreview frequencyHz={pack.promise.frequencyHz} duty={pack.promise.duty} />
           )}
         </div>
       </div>
-      <div className="mt-16">
+      <div className="mt-20 space-y-16">
+        <Causes page={page} />
         <WaveformSection page={page} />
       </div>
       <Maker page={page} />

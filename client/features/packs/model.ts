@@ -100,3 +100,15 @@ export function supplyRange(brief: ResolvedBrief): string {
     ? `on ${volts(minVolts)} to ${volts(maxVolts)}`
     : `on ${label} from fresh (${volts(maxVolts)}) to empty (${volts(minVolts)})`;
 }
+
+/** The rate as a clause: "blinks 90.1 times a minute", "ticks at 32.0 kHz", "blinks once in 2.00 s". */
+export function rateClause(
+  text: { rate: string; unit: string },
+  isLight: boolean,
+): { verb: string; rate: string } {
+  const verb = isLight ? 'blinks' : 'ticks';
+  if (text.unit === 'a minute') return { verb, rate: `${text.rate} times a minute` };
+  const period = /^(m?s) a beat$/.exec(text.unit);
+  if (period !== null) return { verb: `${verb} once in`, rate: `${text.rate} ${period[1] ?? 's'}` };
+  return { verb: `${verb} at`, rate: `${text.rate} ${text.unit}` };
+}

@@ -5,7 +5,7 @@ export interface PlacedTag {
   pack: Pack;
   /** 0…1, cheap to dear. */
   x: number;
-  /** 0…1, wide band to steady. */
+  /** 0…1, steady (top) to wide. */
   y: number;
 }
 
@@ -27,11 +27,11 @@ function collides(tag: PlacedTag, others: readonly PlacedTag[]): boolean {
  */
 export function placeTags(packs: readonly Pack[], targetHz: number): PlacedTag[] {
   const across = spread(packs.map((pack) => pack.price.unit.amount));
-  const down = spread(packs.map((pack) => -Math.log(bandOff(pack, targetHz).worse)));
+  const down = spread(packs.map((pack) => Math.log(bandOff(pack, targetHz).worse)));
   const placed: PlacedTag[] = [];
   for (const pack of packs) {
     const home = across(pack.price.unit.amount);
-    const tag = { pack, x: home, y: down(-Math.log(bandOff(pack, targetHz).worse)) };
+    const tag = { pack, x: home, y: down(Math.log(bandOff(pack, targetHz).worse)) };
     for (let step = 1; step <= 60 && collides(tag, placed); step += 1) {
       const shift = Math.ceil(step / 2) * 0.03 * (step % 2 === 0 ? -1 : 1);
       tag.x = Math.max(0, Math.min(1, home + shift));

@@ -11,7 +11,7 @@ export function OrderFacts({ order }: { order: Order }) {
     to.line2,
     `${to.postalCode} ${to.city}`.trim(),
     to.region,
-    to.country,
+    countryName(to.country),
   ];
   return (
     <div className="grid gap-x-14 gap-y-8 sm:grid-cols-2">
@@ -44,6 +44,15 @@ export function OrderFacts({ order }: { order: Order }) {
       </div>
     </div>
   );
+}
+
+/** The country in words; its code where the browser has no name for it. */
+function countryName(code: string): string {
+  try {
+    return new Intl.DisplayNames(['en'], { type: 'region' }).of(code) ?? code;
+  } catch {
+    return code;
+  }
 }
 
 function Sums({ order }: { order: Order }) {

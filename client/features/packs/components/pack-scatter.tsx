@@ -43,44 +43,72 @@ export function PackScatter(props: ScatterProps) {
   );
 }
 
-function Plot({ placed, answer, packPath }: ScatterProps & { placed: PlacedTag[] }) {
+function Plot({ placed, packs, answer, packPath }: ScatterProps & { placed: PlacedTag[] }) {
+  const bands = packs.map((pack) => bandOff(pack, answer.brief.targetHz).worse);
+  const prices = packs
+    .map((pack) => pack.price.unit)
+    .sort((a, b) => a.amount - b.amount)
+    .map(formatMoney);
   return (
-    <div className="grid grid-cols-[auto_1fr] grid-rows-[1fr_auto] gap-x-3">
-      <p className="[transform:rotate(180deg)] self-stretch text-small text-soft [writing-mode:vertical-rl]">
-        <span className="flex justify-between">
-          <span>wider band</span>
-          <span>steadier</span>
+    <div className="grid grid-cols-[auto_1fr] gap-x-3">
+      <p
+        aria-hidden="true"
+        className="flex flex-col justify-between py-1 text-right text-small text-soft"
+      >
+        <span>
+          steadier
+          <span className="block">
+            ±{narrow}
+            {formatPercent(Math.min(...bands))}
+          </span>
+        </span>
+        <span>
+          <span className="block">
+            ±{narrow}
+            {formatPercent(Math.max(...bands))}
+          </span>
+          wider
         </span>
       </p>
-      <ul className="relative h-64 border-b-2 border-l-2 border-steel/70">
-        {placed.map(({ pack, x, y }) => (
-          <li
-            key={pack.token}
-            className="absolute -translate-x-1/2 -translate-y-1/2"
-            style={{ left: `${4 + x * 92}%`, top: `${9 + y * 80}%` }}
-          >
-            <Link
-              to={packPath(pack.token)}
-              className="group relative block"
-              aria-label={words(pack, answer.brief.targetHz)}
-            >
-              <MiniTag />
-              <span
-                aria-hidden="true"
-                className="pointer-events-none absolute bottom-full left-1/2 z-10 mb-1 hidden -translate-x-1/2 rounded-edge bg-ink px-2.5 py-1 text-small whitespace-nowrap text-paper group-hover:block group-focus-visible:block"
-              >
-                {words(pack, answer.brief.targetHz)}
-              </span>
-            </Link>
-          </li>
+      <ul
+        aria-label="Further packs by price and band"
+        className="relative h-72 border-b-2 border-l-2 border-steel/70"
+      >
+        {placed.map((tag) => (
+          <Point key={tag.pack.token} tag={tag} answer={answer} packPath={packPath} />
         ))}
       </ul>
       <span />
-      <p className="mt-1.5 flex justify-between text-small text-soft">
-        <span>cheaper</span>
-        <span>dearer</span>
+      <p aria-hidden="true" className="mt-1.5 flex justify-between text-small text-soft">
+        <span>{prices[0]}, cheaper</span>
+        <span>dearer, {prices.at(-1)}</span>
       </p>
     </div>
+  );
+}
+
+function Point(props: {
+  tag: PlacedTag;
+  answer: SolveResponse;
+  packPath: (token: string) => string;
+}) {
+  const { pack, x, y } = props.tag;
+  const said = words(pack, props.answer.brief.targetHz);
+  return (
+    <li
+      className="absolute -translate-x-1/2 -translate-y-1/2 focus-within:z-10 hover:z-10"
+      style={{ left: `${4 + x * 92}%`, top: `${12 + y * 76}%` }}
+    >
+      <Link to={props.packPath(pack.token)} className="group relative block" aria-label={said}>
+        <MiniTag />
+        <span
+          aria-hidden="true"
+          className={`pointer-events-none absolute bottom-full z-10 mb-1 hidden rounded-edge bg-ink px-2.5 py-1 text-small whitespace-nowrap text-paper group-hover:block group-focus-visible:block ${x < 0.5 ? 'left-0' : 'right-0'}`}
+        >
+          {said}
+        </span>
+      </Link>
+    </li>
   );
 }
 

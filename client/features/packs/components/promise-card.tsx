@@ -2,19 +2,19 @@ import type { ResolvedBrief } from '../../../../server/contracts/brief.ts';
 import type { Pack } from '../../../../server/contracts/packs.ts';
 import { bindUnits, keepTogether, narrow } from '../../../lib/spaces.ts';
 import { Scale } from '../../../ui/scale.tsx';
-import { bandOff, supplyRange } from '../model.ts';
+import { bandOff, rateClause, supplyRange } from '../model.ts';
 
 /** The promise as one framed statement that could be signed, and is: by the identifier under it. */
 export function PromiseCard(props: { brief: ResolvedBrief; pack: Pack; identifier: string }) {
   const { brief, pack } = props;
   const { text } = pack.promise;
-  const verb = brief.load.kind === 'led' ? 'blinks' : 'ticks';
+  const said = rateClause(pack.promise.text, brief.load.kind === 'led');
   const { low, high } = bandOff(pack, brief.targetHz);
   return (
     <section aria-label="The promise" className="framed px-6 pt-7 pb-5 sm:px-8">
       <p className="text-[clamp(1.375rem,1.1rem+1.1vw,1.75rem)] leading-[1.42] font-light [&_strong]:font-heavy">
-        This kit {verb} <strong>{keepTogether(`${text.rate} ${text.unit}`)}</strong>. Every kit we
-        send stays between <strong className="whitespace-nowrap">{text.from}</strong> and{' '}
+        This kit {said.verb} <strong>{keepTogether(said.rate)}</strong>. Every kit we send stays
+        between <strong className="whitespace-nowrap">{text.from}</strong> and{' '}
         <strong className="whitespace-nowrap">{text.to}</strong> from {brief.ambient.minCelsius} to{' '}
         {keepTogether(`${brief.ambient.maxCelsius}${narrow}°C`)}, {bindUnits(supplyRange(brief))}.
       </p>

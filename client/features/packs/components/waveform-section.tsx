@@ -1,5 +1,5 @@
 import type { PackPage } from '../../../../server/contracts/packs.ts';
-import { formatQuantity } from '../../../lib/format-number.ts';
+import { formatDigits, formatQuantity } from '../../../lib/format-number.ts';
 import { Waveform } from '../../../ui/waveform.tsx';
 
 /** From power-on: the picture, and its figures as a list for those who don't see it. */
@@ -16,7 +16,7 @@ export function WaveformSection({ page }: { page: PackPage }) {
   return (
     <section aria-labelledby="waveforms">
       <h2 id="waveforms" className="text-title font-strong">
-        The first high lasts {formatQuantity(longer, '')}times as long, then it settles for good.
+        The first high lasts {formatDigits(longer, 2)} times as long, then it settles for good.
       </h2>
       <p className="mt-1 text-soft">
         The capacitor starts empty, so it has further to climb before the first turn.
