@@ -25,7 +25,7 @@ export const nominalKit: Readonly<KitFactors> = {
 
 /**
  * The rate in hertz of kits of one circuit, by the full model; NaN for a kit that does not
- * oscillate. With a single timing resistor and a constant capacitance a call takes well under a
+ * oscillate. With a single timing resistor and a constant capacitance a call takes about a
  * microsecond. Throws a `RangeError` on impossible numbers in the circuit.
  */
 export function kitRate(circuit: Circuit): (kit: Readonly<KitFactors>) => number {

@@ -7,7 +7,8 @@ const points = 12;
 const rule = gaussLegendreRule(points);
 const relativeTolerance = 1e-13;
 /** Bounds the work where rounding noise, not shape, keeps two estimates apart. */
-const deepest = 18;
+const mostHalvings = 160;
+const mostSteps = 60;
 
 /**
  * Nodes and weights of the Gauss–Legendre rule on −1…1, ascending, exact for polynomials up to
@@ -73,11 +74,16 @@ export function integrate(
     return { start, end, whole: integratePanel(f, start, end) };
   });
   const size = panels.reduce((sum, { whole }) => sum + Math.abs(whole), 0);
+  const effort = { allowed: relativeTolerance * size, halvingsLeft: mostHalvings };
   return panels.reduce(
-    (sum, { start, end, whole }) =>
-      sum + refine(f, start, end, whole, relativeTolerance * size, deepest),
+    (sum, { start, end, whole }) => sum + refine(f, start, end, whole, effort),
     0,
   );
+}
+
+interface Effort {
+  allowed: number;
+  halvingsLeft: number;
 }
 
 function refine(
@@ -85,18 +91,15 @@ function refine(
   from: number,
   to: number,
   whole: number,
-  allowed: number,
-  depth: number,
+  effort: Effort,
 ): number {
   const middle = (from + to) / 2;
   const left = integratePanel(f, from, middle);
   const right = integratePanel(f, middle, to);
   const sum = left + right;
-  if (!(Math.abs(sum - whole) > allowed) || depth === 0) return sum;
-  return (
-    refine(f, from, middle, left, allowed, depth - 1) +
-    refine(f, middle, to, right, allowed, depth - 1)
-  );
+  if (!(Math.abs(sum - whole) > effort.allowed) || effort.halvingsLeft <= 0) return sum;
+  effort.halvingsLeft--;
+  return refine(f, from, middle, left, effort) + refine(f, middle, to, right, effort);
 }
 
 /**
@@ -115,8 +118,9 @@ export function invertIntegral(
   let high = limit;
   let x = from;
   let reached = 0;
-  for (let step = 0; step < 200; step++) {
+  for (let step = 0; step < mostSteps; step++) {
     const missing = target - reached;
+    if (Math.abs(missing) <= 1e-15 * target) return x;
     if (missing > 0) low = x;
     else high = x;
     let next = x + missing / rate(x);

@@ -46,15 +46,11 @@ export function worstCase(
   const rateAt = (offset: number) =>
     kitRate({ ...circuit, comparator: { ...circuit.comparator, offsetVolts: offset } });
   const ends = offsetVolts > 0 ? [centre - offsetVolts, centre + offsetVolts] : [centre];
-  const least = extremeCorner(circuit, tolerances, ends.map(rateAt), -1);
-  const atEnds = extremeCorner(circuit, tolerances, ends.map(rateAt), 1);
-  if (!(offsetVolts > 0)) {
-    return { minHz: least.hz, maxHz: atEnds.hz, minSigns: least.signs, maxSigns: atEnds.signs };
-  }
-  const inside = (offset: number) => extremeCorner(circuit, tolerances, [rateAt(offset)], 1);
+  const { least, most } = extremeCorners(circuit, tolerances, ends.map(rateAt));
+  if (!(offsetVolts > 0)) return worstCaseOf(least, most);
+  const inside = (offset: number) => extremeCorners(circuit, tolerances, [rateAt(offset)]).most;
   const best = inside(goldenMaximum((offset) => inside(offset).hz, ends));
-  const most = best.hz > atEnds.hz ? best : atEnds;
-  return { minHz: least.hz, maxHz: most.hz, minSigns: least.signs, maxSigns: most.signs };
+  return worstCaseOf(least, best.hz > most.hz ? best : most);
 }
 
 interface Corner {
@@ -62,16 +58,22 @@ interface Corner {
   signs: CornerSigns;
 }
 
-function extremeCorner(
+function worstCaseOf(least: Corner, most: Corner): WorstCase {
+  return { minHz: least.hz, maxHz: most.hz, minSigns: least.signs, maxSigns: most.signs };
+}
+
+function extremeCorners(
   circuit: Circuit,
   tolerances: PartTolerances,
   rates: readonly ((kit: KitFactors) => number)[],
-  direction: 1 | -1,
-): Corner {
+): { least: Corner; most: Corner } {
   const corners = cornerSigns(circuit.timing.kind === 'steered').flatMap((signs) =>
     rates.map((rate) => ({ hz: rate(kitAt(signs, tolerances)) || 0, signs })),
   );
-  return corners.reduce((best, next) => (direction * (next.hz - best.hz) > 0 ? next : best));
+  return {
+    least: corners.reduce((best, next) => (next.hz < best.hz ? next : best)),
+    most: corners.reduce((best, next) => (next.hz > best.hz ? next : best)),
+  };
 }
 
 function cornerSigns(steered: boolean): CornerSigns[] {
