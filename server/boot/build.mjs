@@ -23,7 +23,7 @@ const entries = {
   'mail-stand-in': 'server/mail-stand-in/main.ts',
 };
 // Read at run time from beside the bundle, as they are from beside the source.
-const besideBundle = ['server/stripe-mock/card-page.css', 'server/mail-stand-in/mail-page.css'];
+const besideBundle = ['server/stand-in-look/look.css'];
 const clientSources = ['client', 'assets', 'server/contracts', 'server/engine', 'server/domain'];
 const serverSources = ['server', 'migrations', 'seeds'];
 const settings = ['package-lock.json', 'vite.config.ts', 'tsconfig.json'];

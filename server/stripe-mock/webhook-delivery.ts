@@ -1,0 +1,93 @@
+import Stripe from 'stripe';
+import type { Service } from './service.ts';
+import type { Delivery, KeptEvent } from './state.ts';
+
+export interface WebhookTarget {
+  url: string;
+  secret: string;
+}
+
+const patienceMs = 10_000;
+const longestPauseMs = 300_000;
+const mostAttempts = 20;
+const keptDelivered = 1000;
+
+/** 1 s, 2 s, 4 s … to five minutes. */
+export function pauseAfter(attempts: number): number {
+  return Math.min(1000 * 2 ** (attempts - 1), longestPauseMs);
+}
+
+/** Sends one event, signed as the service signs; true when it was taken with a 2xx. */
+export async function sendEvent(
+  event: KeptEvent,
+  { url, secret }: WebhookTarget,
+): Promise<boolean> {
+  const payload = JSON.stringify(event);
+  const signature = Stripe.webhooks.generateTestHeaderString({ payload, secret });
+  try {
+    const answer = await fetch(url, {
+      method: 'POST',
+      headers: { 'content-type': 'application/json; charset=utf-8', 'stripe-signature': signature },
+      body: payload,
+      redirect: 'manual',
+      signal: AbortSignal.timeout(patienceMs),
+    });
+    await answer.arrayBuffer();
+    return answer.ok;
+  } catch {
+    return false;
+  }
+}
+
+/** Delivers what is due, side by side and so in any order, as the service itself does. */
+export class WebhookDelivery {
+  #holding = false;
+  #underWay = new Set<string>();
+
+  constructor(
+    private readonly service: Service,
+    private readonly target: WebhookTarget | null,
+  ) {}
+
+  /** Keeps events back until `release`. */
+  hold(): void {
+    this.#holding = true;
+  }
+
+  release(): Promise<void> {
+    this.#holding = false;
+    return this.deliverDue();
+  }
+
+  async deliverDue(): Promise<void> {
+    if (this.#holding) return;
+    const now = this.service.now();
+    const due = this.service.state.deliveries.filter(
+      ({ eventId, dueAt }) => dueAt <= now && !this.#underWay.has(eventId),
+    );
+    await Promise.all(due.map((delivery) => this.#deliver(delivery)));
+  }
+
+  async #deliver(delivery: Delivery): Promise<void> {
+    const { state } = this.service;
+    const event = state.events[delivery.eventId];
+    this.#underWay.add(delivery.eventId);
+    const taken = !event || !this.target || (await sendEvent(event, this.target));
+    this.#underWay.delete(delivery.eventId);
+    delivery.attempts += 1;
+    delivery.dueAt = this.service.now() + pauseAfter(delivery.attempts);
+    if (taken || delivery.attempts >= mostAttempts) {
+      state.deliveries = state.deliveries.filter((other) => other !== delivery);
+      if (event) event.pending_webhooks = 0;
+      this.#forgetOldest();
+    }
+    this.service.save();
+  }
+
+  /** The service lists events of thirty days; here the last thousand are enough. */
+  #forgetOldest(): void {
+    const { state } = this.service;
+    const settled = Object.values(state.events).filter((event) => event.pending_webhooks === 0);
+    for (const event of settled.slice(0, -keptDelivered)) delete state.events[event.id];
+  }
+}
