@@ -43,7 +43,7 @@ export default defineConfig({
         test: {
           name: 'server',
           environment: 'node',
-          include: [...outsideClient, ...fast].map((part) => `tests/${part}/**/*.test.ts`),
+          include: [...outsideClient, ...fast].map((part) => `tests/${part}/**/*.test.{ts,mjs}`),
         },
       },
       {
