@@ -1,4 +1,5 @@
 import bcrypt from 'bcryptjs';
+import { prepared } from '../server/domain/passwords.ts';
 import type { Knex } from 'knex';
 import { demoCatalogue, type DemoPart } from './demo-catalogue.ts';
 
@@ -50,7 +51,7 @@ export async function seedDemoShop(db: Knex): Promise<boolean> {
 }
 
 async function seedPeople(trx: Knex.Transaction): Promise<void> {
-  const passwordHash = await bcrypt.hash(demoPassword, 10);
+  const passwordHash = await bcrypt.hash(prepared(demoPassword), 10);
   await trx('users')
     .insert(demoPeople.map((person) => ({ ...person, password_hash: passwordHash })))
     .onConflict('email')
@@ -74,14 +75,20 @@ async function seedParts(
   parts: readonly DemoPart[],
   bins: ReadonlyMap<string, number>,
 ): Promise<void> {
-  const inserted: { id: number }[] = await trx.batchInsert('parts', parts.map((part) => part.row), 200).returning('id');
-  const lots = parts.flatMap((part, k) => lotsFor(part, k, inserted[k]!.id, bins));
-  const lotRows: { id: number }[] = await trx
-    .batchInsert('lots', lots.map((lot) => lot.row), 200)
-    .returning('id');
+  const inserted = await insertAll(
+    trx,
+    'parts',
+    parts.map((part) => part.row),
+  );
+  const lots = parts.flatMap((part, k) => lotsFor(part, k, inserted[k]!, bins));
+  const lotIds = await insertAll(
+    trx,
+    'lots',
+    lots.map((lot) => lot.row),
+  );
   const opening = lots
     .map((lot, k) => ({
-      lot_id: lotRows[k]!.id,
+      lot_id: lotIds[k]!,
       delta: lot.count,
       balance: 0,
       reason: 'opening',
@@ -90,6 +97,16 @@ async function seedParts(
     }))
     .filter((entry) => entry.delta > 0);
   await trx.batchInsert('stock_ledger', opening, 200);
+}
+
+/** Inserts rows in order and returns their ids in the same order. */
+async function insertAll(
+  trx: Knex.Transaction,
+  table: string,
+  rows: Record<string, unknown>[],
+): Promise<number[]> {
+  const inserted = await trx.batchInsert<Record<string, unknown>>(table, rows, 200).returning('id');
+  return inserted.map((row) => Number(row.id));
 }
 
 /** One lot for most parts; every ninth has a second, newer one in the loft. */

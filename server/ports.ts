@@ -1,4 +1,5 @@
 import type { Knex } from 'knex';
+import type { BuildSheet } from './contracts/orders.ts';
 
 /** What the use cases need of the outside world. Adapters implement these; tests may too. */
 
@@ -76,11 +77,17 @@ export interface Signer {
   orderToken(ref: string): string;
 }
 
+/** Puts documents on paper, as PDF. */
+export interface Printer {
+  buildSheet(sheet: BuildSheet): Promise<Buffer>;
+}
+
 export interface Deps {
   db: Knex;
   clock: Clock;
   payments: PaymentGateway;
   signer: Signer;
+  printer: Printer;
   /** Where the shop is reached from outside, without a slash at the end. */
   publicUrl: string;
   demo: boolean;

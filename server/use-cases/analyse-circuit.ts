@@ -1,15 +1,20 @@
 import type { AnalyseRequest, AnalyseResponse } from '../contracts/circuits.ts';
 import { createCircuit, type Circuit } from '../engine/circuit.ts';
 import { analyseCycle } from '../engine/cycle.ts';
+import { rateSensitivities } from '../engine/sensitivity.ts';
+import { monteCarlo, rssFraction, worstCase } from '../engine/spread.ts';
 import { averageSupplyAmps } from '../engine/supply-current.ts';
 import { Refusal } from './refusal.ts';
+
+/** Circuits that need quadrature cost far more a kit; more samples than this would hold up the shop. */
+const slowSamples = 100_000;
 
 /** Solves a circuit given part by part; refuses one that cannot oscillate, with the reason. */
 export function analyseCircuit(request: AnalyseRequest): AnalyseResponse {
   const circuit = toCircuit(request);
   const cycle = analyseCycle(circuit);
   if (cycle.kind === 'no-oscillation') throw new Refusal('no-oscillation', cycle.reason);
-  return {
+  const answer: AnalyseResponse = {
     frequencyHz: cycle.frequencyHz,
     periodSeconds: cycle.periodSeconds,
     highSeconds: cycle.highSeconds,
@@ -20,6 +25,9 @@ export function analyseCircuit(request: AnalyseRequest): AnalyseResponse {
     thresholdHighVolts: cycle.thresholdHighVolts,
     averageSupplyAmps: averageSupplyAmps(circuit),
   };
+  requireFinite(answer);
+  if (request.tolerances) answer.spread = spreadOf(circuit, cycle.frequencyHz, request.tolerances);
+  return answer;
 }
 
 function toCircuit(request: AnalyseRequest): Circuit {
@@ -34,4 +42,40 @@ function toCircuit(request: AnalyseRequest): Circuit {
     capacitor,
     comparator,
   });
+}
+
+/** Values at the far ends of the allowed ranges can leave what double precision holds. */
+function requireFinite(answer: AnalyseResponse): void {
+  const broken = Object.entries(answer).find(([, value]) => !Number.isFinite(value));
+  if (!broken) return;
+  throw new Refusal(
+    'impossible-brief',
+    `These values together leave no usable ${broken[0]}; bring the extreme ones nearer to real parts.`,
+  );
+}
+
+function spreadOf(
+  circuit: Circuit,
+  frequencyHz: number,
+  tolerances: NonNullable<AnalyseRequest['tolerances']>,
+): AnalyseResponse['spread'] {
+  const quick = circuit.timing.kind === 'single' && circuit.capacitor.biasHalvingVolts === null;
+  if (!quick && tolerances.samples > slowSamples) {
+    const message = `For steered timing or a bias-dependent capacitor take at most ${slowSamples} samples.`;
+    throw new Refusal('invalid', message, [{ path: 'tolerances.samples', message }]);
+  }
+  const { minHz, maxHz } = worstCase(circuit, tolerances);
+  const { yieldWithinBand, yieldStandardError } = monteCarlo(circuit, tolerances, {
+    distribution: tolerances.distribution,
+    targetHz: tolerances.targetHz ?? frequencyHz,
+    band: tolerances.band,
+    samples: tolerances.samples,
+    seed: tolerances.seed,
+  });
+  return {
+    worstCase: { minHz, maxHz },
+    rssFraction: rssFraction(rateSensitivities(circuit), tolerances),
+    yieldWithinBand,
+    yieldStandardError,
+  };
 }

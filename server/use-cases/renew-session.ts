@@ -1,14 +1,15 @@
 import type { Deps } from '../ports.ts';
-import type { User } from '../store/people.ts';
-import { findSessionUser, lockSessionByRenewal, revokeSession, rotateRenewal } from '../store/people.ts';
+import type { Me } from '../contracts/auth.ts';
+import { lockSessionByRenewal, revokeSession, rotateRenewal } from '../store/people.ts';
 import { inTransaction } from '../store/transaction.ts';
+import { recogniseSession } from './recognise-session.ts';
 import { hashSecret, newSecret } from './sign-in.ts';
 
 /** Requests sent together may still carry the previous secret for this long. */
 const overlapSeconds = 60;
 
 export interface RenewedSession {
-  user: User;
+  me: Me;
   sessionId: string;
   /** The next renewal secret; null when the newest is already with the browser. */
   renewalSecret: string | null;
@@ -32,9 +33,9 @@ export async function renewSession(
       await revokeSession(trx, session.id, now);
       return null;
     }
-    const user = await findSessionUser(trx, session.id, now);
-    if (user === null) return null;
-    const renewed = { user, sessionId: session.id, expiresAt: session.expiresAt };
+    const me = await recogniseSession({ ...deps, db: trx }, session.id);
+    if (me === null) return null;
+    const renewed = { me, sessionId: session.id, expiresAt: session.expiresAt };
     if (session.superseded) return { ...renewed, renewalSecret: null };
     const renewalSecret = newSecret();
     await rotateRenewal(trx, session.id, hashSecret(renewalSecret), now);

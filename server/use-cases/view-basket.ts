@@ -6,6 +6,8 @@ import type { Deps } from '../ports.ts';
 import { basketLines, findBasket, type BasketKeeper, type BasketLine } from '../store/baskets.ts';
 import { openPackBook, openToken, type AssessedPack, type PackBook } from './pack-book.ts';
 
+export type { BasketKeeper };
+
 /** A basket line with its pack worked out from today's shelves and prices. */
 export interface OpenBasketLine {
   line: BasketLine;
