@@ -25,10 +25,11 @@ const hasty = [
  */
 export async function startPostgres(children, dataDir, { throwAway = false } = {}) {
   const password = keptSecrets(dataDir).databasePassword;
-  let binaries = await ensurePostgresBinaries();
+  // The user "postgres" comes with the programs, so those first.
+  await ensurePostgresBinaries();
   const account = postgresAccount();
   const folder = chooseFolder(dataDir, account);
-  binaries = await ensurePostgresBinaries(majorOfFolder(folder));
+  const binaries = await ensurePostgresBinaries(majorOfFolder(folder));
   await initialise(folder, binaries, account, password);
   await clearLeftovers(folder);
 

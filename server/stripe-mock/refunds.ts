@@ -48,7 +48,8 @@ function chargeFor(service: Service, asked: RefundParameters): Stripe.Charge {
   }
   const intent = service.state.intents[asked.payment_intent];
   if (!intent) throw missingResource('payment_intent', asked.payment_intent);
-  const charge = service.state.charges[String(intent.latest_charge)];
+  const latest = intent.latest_charge;
+  const charge = typeof latest === 'string' ? service.state.charges[latest] : undefined;
   if (!charge) {
     throw invalidRequest(
       `${intent.id} has no successful charge to refund.`,

@@ -7,7 +7,7 @@ beforeEach(async () => {
   shop = await openMockShop();
   const { id, url } = await shop.stripe.checkout.sessions.create(checkout());
   await fillIn(url, goodCard);
-  intent = String((await shop.stripe.checkout.sessions.retrieve(id)).payment_intent);
+  intent = (await shop.stripe.checkout.sessions.retrieve(id)).payment_intent as string;
 });
 afterEach(() => shop.close());
 
