@@ -40,12 +40,15 @@ await launch(async (children) => {
   const databaseUrl = await shop.openDatabase(children, dataDir, process.env);
   const options = { dataDir, databaseUrl, port, publicPort, env: process.env };
   const env = await shop.shopEnvironment(options);
-  await shop.migrate(source('server/migrate.ts'), env);
   const scripts = {
     payments: source('server/stripe-mock/main.ts'),
     mail: source('server/mail-stand-in/main.ts'),
   };
-  await shop.startStandIns(children, scripts, env, process.env, toTerminal);
+  // Neither waits for the other, so they run side by side.
+  await Promise.all([
+    shop.startStandIns(children, scripts, env, process.env, toTerminal),
+    shop.migrate(source('server/migrate.ts'), env),
+  ]);
   await keepServerFresh(children, env);
   const url = `http://127.0.0.1:${publicPort}`;
   const viteEnv = { ...env, TOCKWELL_API_URL: `http://127.0.0.1:${port}` };

@@ -73,16 +73,18 @@ export function migrate(script, env) {
   );
 }
 
-/** Starts the stand-ins that this environment calls for, and waits until they answer. */
-export async function startStandIns(children, scripts, env, givenEnv, logTo) {
+/** Starts the stand-ins that this environment calls for; resolves when all of them answer. */
+export function startStandIns(children, scripts, env, givenEnv, logTo) {
+  const waits = [];
   if (!givenEnv.STRIPE_SECRET_KEY) {
     children.start('payment stand-in', scripts.payments, { env, logFile: logTo('payments') });
-    await waitFor(`${env.STRIPE_API_URL}/health`, 'payment stand-in');
+    waits.push(waitFor(`${env.STRIPE_API_URL}/health`, 'payment stand-in'));
   }
   if (!givenEnv.SMTP_URL) {
     children.start('mail stand-in', scripts.mail, { env, logFile: logTo('mail') });
-    await waitFor(`${env.MAIL_PAGE_URL}/api/mails`, 'mail stand-in');
+    waits.push(waitFor(`${env.MAIL_PAGE_URL}/api/mails`, 'mail stand-in'));
   }
+  return Promise.all(waits);
 }
 
 /** Waits until an address answers 200; a service that never does is a failure in words. */

@@ -15,9 +15,12 @@ export async function startShop(children, dataDir, givenEnv, options) {
   const databaseUrl = await shop.openDatabase(children, dataDir, givenEnv, options);
   const env = await shop.shopEnvironment({ dataDir, databaseUrl, port, env: givenEnv });
   const logTo = (name) => path.join(dataDir, 'logs', `${name}.log`);
-  await shop.migrate(bundle('migrate'), env);
   const scripts = { payments: bundle('stripe-mock'), mail: bundle('mail-stand-in') };
-  await shop.startStandIns(children, scripts, env, givenEnv, logTo);
+  // Neither waits for the other, so they run side by side.
+  await Promise.all([
+    shop.startStandIns(children, scripts, env, givenEnv, logTo),
+    shop.migrate(bundle('migrate'), env),
+  ]);
   children.start('server', bundle('main'), { env, logFile: logTo('server') });
   await shop.waitFor(`http://${env.HOST}:${port}/api/ready`, 'server');
   return { url: `http://127.0.0.1:${port}`, env };

@@ -40,6 +40,6 @@ function indent(text) {
     .trimEnd()
     .split('\n')
     .slice(-25)
-    .map((line) => `  ${line}`)
+    .map((line) => `  ${line.slice(0, 300)}`)
     .join('\n');
 }
