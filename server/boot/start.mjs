@@ -3,7 +3,7 @@ import { build } from './build.mjs';
 import { tellReady } from './demo-signs.mjs';
 import { launch } from './launch.mjs';
 import { claimDataFolder } from './launcher-note.mjs';
-import { dataFolder, inProject } from './project.mjs';
+import { dataFolder, inProject, isEntryPoint } from './project.mjs';
 import * as shop from './shop.mjs';
 
 const bundle = (name) => ['--enable-source-maps', inProject('dist', 'server', `${name}.js`)];
@@ -26,7 +26,7 @@ export async function startShop(children, dataDir, givenEnv, options) {
   return { url: `http://127.0.0.1:${port}`, env };
 }
 
-if (process.argv[1] === inProject('server', 'boot', 'start.mjs')) {
+if (isEntryPoint(import.meta.url)) {
   await launch(async (children) => {
     const dataDir = dataFolder();
     process.on('exit', claimDataFolder(dataDir));

@@ -198,7 +198,7 @@ function drawLed(values: Values): DrawingItem[] {
     part('resistor', 'RL', [x, y], [x, y + 96]),
     ...names('RL', valueOf(values, 'RL'), [x + 18, y + 42], 'start'),
     part('led', 'LED', [x, y + 96], [x, y + 180]),
-    ...names('LED', valueOf(values, 'LED'), [x + 26, y + 134], 'start'),
+    ...names('LED', valueOf(values, 'LED'), [x + 34, y + 136], 'start'),
     { kind: 'ground', at: [x, y + 180] },
   ];
 }
