@@ -56,8 +56,6 @@ export const refundParameters = z.strictObject({
 });
 export type RefundParameters = z.infer<typeof refundParameters>;
 
-export const expandParameters = z.strictObject({ expand });
-
 export const listParameters = z.strictObject({
   limit: integer.pipe(z.number().int().min(1).max(100)).default(10),
   starting_after: z.string().optional(),
@@ -66,7 +64,6 @@ export const listParameters = z.strictObject({
   type: z.string().optional(),
   expand,
 });
-export type ListParameters = z.infer<typeof listParameters>;
 
 /** Reads a form body by its schema; the first thing wrong with it is the API's error. */
 export function readParameters<Output>(schema: z.ZodType<Output>, body: unknown): Output {

@@ -12,7 +12,12 @@ export const mayCall: Record<string, readonly string[]> = {
     'server/contracts (types)',
     'migrations',
   ],
-  'server/adapters': ['server/ports.ts', 'server/domain', 'server/engine (types)'],
+  'server/adapters': [
+    'server/ports.ts',
+    'server/domain',
+    'server/engine (types)',
+    'server/contracts (types)',
+  ],
   'server/use-cases': [
     'server/domain',
     'server/engine',
