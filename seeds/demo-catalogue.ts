@@ -173,7 +173,11 @@ interface CapacitorFamily {
 }
 
 const decadeFarads = (mantissas: readonly number[], from: number, to: number, last: number) =>
-  [...new Set([...decades(mantissas, from, to), last].map((farads) => Number(farads.toPrecision(3))))]
+  [
+    ...new Set(
+      [...decades(mantissas, from, to), last].map((farads) => Number(farads.toPrecision(3))),
+    ),
+  ]
     .filter((farads) => farads <= last * (1 + 1e-9))
     .sort((a, b) => a - b);
 
@@ -227,7 +231,12 @@ const capacitorFamilies: CapacitorFamily[] = [
     ratedVolts: 63,
     cost: (farads) => 9 + Math.round(farads * 1.1e7),
     usual: 120,
-    farads: decadeFarads([...e6, 56, 82].sort((a, b) => a - b), -9, -7, 10e-6),
+    farads: decadeFarads(
+      [...e6, 56, 82].sort((a, b) => a - b),
+      -9,
+      -7,
+      10e-6,
+    ),
   },
   {
     code: 'CX',
@@ -352,15 +361,177 @@ function capacitors(): DemoPart[] {
 
 /** [code, output, sections, min V, max V, tLH, tHL, max delay, bias, max bias, max offset, hysteresis, high Ω, low Ω, max out A, quiescent A, cost] */
 const comparatorModels = [
-  ['C1', 'push-pull', 1, 1.6, 5.5, 6e-6, 6e-6, 14e-6, 1e-12, 4e-11, 4e-3, 2e-3, 45, 40, 0.012, 6e-7, 88],
-  ['C2', 'push-pull', 2, 1.6, 5.5, 6e-6, 6e-6, 14e-6, 1e-12, 4e-11, 4e-3, 2e-3, 45, 40, 0.012, 1.2e-6, 124],
-  ['C3', 'push-pull', 1, 1.8, 5.5, 2.6e-7, 2.2e-7, 6e-7, 2e-12, 6e-11, 4e-3, 1.5e-3, 30, 28, 0.02, 9e-6, 96],
-  ['C4', 'open-drain', 2, 2, 36, 1.3e-6, 6e-7, 2.6e-6, -2.5e-8, -1e-7, 5e-3, 0, 0, 60, 0.006, 4e-4, 42],
-  ['C5', 'open-drain', 4, 2, 36, 1.3e-6, 6e-7, 2.6e-6, -2.5e-8, -1e-7, 5e-3, 0, 0, 60, 0.006, 8e-4, 58],
-  ['C6', 'push-pull', 1, 2.7, 5.5, 2.8e-8, 2.6e-8, 6e-8, 2e-12, 8e-11, 5e-3, 2e-3, 25, 22, 0.03, 1.1e-3, 158],
-  ['C7', 'push-pull', 2, 3, 16, 9e-7, 7e-7, 2e-6, 5e-12, 1e-10, 5e-3, 0, 70, 60, 0.015, 2.4e-5, 132],
-  ['C8', 'open-drain', 1, 1.6, 5.5, 9e-6, 7e-6, 2e-5, 1e-12, 4e-11, 4e-3, 2e-3, 0, 55, 0.01, 6e-7, 84],
-  ['C9', 'push-pull', 4, 1.8, 5.5, 4.5e-7, 4e-7, 1e-6, 2e-12, 6e-11, 4e-3, 1.5e-3, 40, 36, 0.015, 3.6e-5, 176],
+  [
+    'C1',
+    'push-pull',
+    1,
+    1.6,
+    5.5,
+    6e-6,
+    6e-6,
+    14e-6,
+    1e-12,
+    4e-11,
+    4e-3,
+    2e-3,
+    45,
+    40,
+    0.012,
+    6e-7,
+    88,
+  ],
+  [
+    'C2',
+    'push-pull',
+    2,
+    1.6,
+    5.5,
+    6e-6,
+    6e-6,
+    14e-6,
+    1e-12,
+    4e-11,
+    4e-3,
+    2e-3,
+    45,
+    40,
+    0.012,
+    1.2e-6,
+    124,
+  ],
+  [
+    'C3',
+    'push-pull',
+    1,
+    1.8,
+    5.5,
+    2.6e-7,
+    2.2e-7,
+    6e-7,
+    2e-12,
+    6e-11,
+    4e-3,
+    1.5e-3,
+    30,
+    28,
+    0.02,
+    9e-6,
+    96,
+  ],
+  [
+    'C4',
+    'open-drain',
+    2,
+    2,
+    36,
+    1.3e-6,
+    6e-7,
+    2.6e-6,
+    -2.5e-8,
+    -1e-7,
+    5e-3,
+    0,
+    0,
+    60,
+    0.006,
+    4e-4,
+    42,
+  ],
+  [
+    'C5',
+    'open-drain',
+    4,
+    2,
+    36,
+    1.3e-6,
+    6e-7,
+    2.6e-6,
+    -2.5e-8,
+    -1e-7,
+    5e-3,
+    0,
+    0,
+    60,
+    0.006,
+    8e-4,
+    58,
+  ],
+  [
+    'C6',
+    'push-pull',
+    1,
+    2.7,
+    5.5,
+    2.8e-8,
+    2.6e-8,
+    6e-8,
+    2e-12,
+    8e-11,
+    5e-3,
+    2e-3,
+    25,
+    22,
+    0.03,
+    1.1e-3,
+    158,
+  ],
+  [
+    'C7',
+    'push-pull',
+    2,
+    3,
+    16,
+    9e-7,
+    7e-7,
+    2e-6,
+    5e-12,
+    1e-10,
+    5e-3,
+    0,
+    70,
+    60,
+    0.015,
+    2.4e-5,
+    132,
+  ],
+  [
+    'C8',
+    'open-drain',
+    1,
+    1.6,
+    5.5,
+    9e-6,
+    7e-6,
+    2e-5,
+    1e-12,
+    4e-11,
+    4e-3,
+    2e-3,
+    0,
+    55,
+    0.01,
+    6e-7,
+    84,
+  ],
+  [
+    'C9',
+    'push-pull',
+    4,
+    1.8,
+    5.5,
+    4.5e-7,
+    4e-7,
+    1e-6,
+    2e-12,
+    6e-11,
+    4e-3,
+    1.5e-3,
+    40,
+    36,
+    0.015,
+    3.6e-5,
+    176,
+  ],
 ] as const;
 
 const sectionWords = { 1: 'single', 2: 'dual', 4: 'quad' } as const;
@@ -455,7 +626,12 @@ function boards(): DemoPart[] {
 }
 
 function power(): DemoPart[] {
-  return ([['AA', 2.4], ['AAA', 1.0]] as const).flatMap(([size, ampHours], s) =>
+  return (
+    [
+      ['AA', 2.4],
+      ['AAA', 1.0],
+    ] as const
+  ).flatMap(([size, ampHours], s) =>
     [2, 3, 4].flatMap((cells, k): DemoPart[] => [
       {
         row: {
@@ -496,28 +672,39 @@ function power(): DemoPart[] {
 }
 
 function diodes(): DemoPart[] {
-  return ([['D1', 2.5e-9, 1.75, 1.11, 3], ['D2', 1.5e-7, 1.05, 0.69, 2]] as const).map(
-    ([code, saturation, emission, gap, exponent], k) => ({
-      row: {
-        sku: `TW-${code}`,
-        kind: 'diode',
-        name: k === 0 ? 'Diode, silicon signal' : 'Diode, Schottky signal',
-        mounting: 'through-hole',
-        cost_minor: 3,
-        price_minor: 9,
-        grams: 0.2,
-        saturation_amps: saturation,
-        emission_coefficient: emission,
-        energy_gap_electron_volts: gap,
-        saturation_temperature_exponent: exponent,
-      },
-      bin: `R-1${1 + k}`,
-      count: 380,
-    }),
-  );
+  return (
+    [
+      ['D1', 2.5e-9, 1.75, 1.11, 3],
+      ['D2', 1.5e-7, 1.05, 0.69, 2],
+    ] as const
+  ).map(([code, saturation, emission, gap, exponent], k) => ({
+    row: {
+      sku: `TW-${code}`,
+      kind: 'diode',
+      name: k === 0 ? 'Diode, silicon signal' : 'Diode, Schottky signal',
+      mounting: 'through-hole',
+      cost_minor: 3,
+      price_minor: 9,
+      grams: 0.2,
+      saturation_amps: saturation,
+      emission_coefficient: emission,
+      energy_gap_electron_volts: gap,
+      saturation_temperature_exponent: exponent,
+    },
+    bin: `R-1${1 + k}`,
+    count: 380,
+  }));
 }
 
 /** Every part of the demonstration shop with its bin and count. Invented; no real part is meant. */
 export function demoCatalogue(): DemoPart[] {
-  return [...resistors(), ...capacitors(), ...comparators(), ...leds(), ...boards(), ...power(), ...diodes()];
+  return [
+    ...resistors(),
+    ...capacitors(),
+    ...comparators(),
+    ...leds(),
+    ...boards(),
+    ...power(),
+    ...diodes(),
+  ];
 }

@@ -113,7 +113,12 @@ async function insertAll(
 function lotsFor(part: DemoPart, k: number, partId: number, bins: ReadonlyMap<string, number>) {
   const month = String(1 + (k % 9)).padStart(2, '0');
   const first = {
-    row: { part_id: partId, bin_id: bins.get(part.bin), code: `26${month}-A`, received_on: `2026-${month}-12` },
+    row: {
+      part_id: partId,
+      bin_id: bins.get(part.bin),
+      code: `26${month}-A`,
+      received_on: `2026-${month}-12`,
+    },
     count: part.count,
   };
   if (k % 9 !== 4 || part.count === 0) return [first];

@@ -1,11 +1,13 @@
 import { createServer } from 'node:http';
 import pg from 'pg';
 import { pino } from 'pino';
+import { seedDemoOrders } from '../seeds/demo-orders.ts';
 import { createSmtpMail } from './adapters/smtp-mail.ts';
 import { composeDeps } from './compose.ts';
 import { readConfig } from './config.ts';
 import { createApp } from './http/app.ts';
 import { startWorker } from './jobs/worker.ts';
+import { warmSearch } from './use-cases/solve-brief.ts';
 
 const config = readConfig(process.env);
 const log = pino({ level: config.logLevel });
@@ -22,8 +24,12 @@ const app = createApp(deps, {
   logger: log,
 });
 const server = createServer({ requestTimeout: 30_000, headersTimeout: 15_000 }, app);
+await warmSearch(deps);
+if (config.demo && config.stripe.apiUrl !== null) await seedDemoOrders(deps);
 const worker = await startWorker({ ...deps, mail }, pool, log);
-server.listen(config.port, config.host, () => log.info(`listening on ${config.host}:${config.port}`));
+server.listen(config.port, config.host, () =>
+  log.info(`listening on ${config.host}:${config.port}`),
+);
 
 let stopping = false;
 /** Stops taking requests, finishes those under way and the jobs in hand, then ends. */
@@ -40,4 +46,5 @@ async function stop(): Promise<void> {
   await deps.db.destroy();
 }
 
-for (const signal of ['SIGTERM', 'SIGINT', 'SIGHUP'] as const) process.on(signal, () => void stop());
+for (const signal of ['SIGTERM', 'SIGINT', 'SIGHUP'] as const)
+  process.on(signal, () => void stop());

@@ -2,7 +2,9 @@ import { z } from 'zod';
 import { moneySchema, quantity, line } from './common.ts';
 import { packSchema } from './packs.ts';
 
-export const kitCountSchema = quantity('The quantity', 1, 500, '').int('The quantity must be a whole number.');
+export const kitCountSchema = quantity('The quantity', 1, 500, '').int(
+  'The quantity must be a whole number.',
+);
 
 export const addToBasketSchema = z.object({
   token: line('The pack', 2000),

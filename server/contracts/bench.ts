@@ -44,7 +44,13 @@ export const benchOrderSchema = z.object({
   /** The address as it stands on the label, line by line. */
   address: z.array(z.string()),
   lines: z.array(
-    z.object({ id: z.string(), sentence: z.string(), quantity: z.int(), parts: z.array(packPartSchema), cautions: z.array(z.string()) }),
+    z.object({
+      id: z.string(),
+      sentence: z.string(),
+      quantity: z.int(),
+      parts: z.array(packPartSchema),
+      cautions: z.array(z.string()),
+    }),
   ),
   picks: z.array(pickSchema),
   shipment: z.object({ carrier: z.string(), tracking: z.string() }).nullable(),

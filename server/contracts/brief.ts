@@ -56,13 +56,17 @@ export const briefSchema = z.object({
   careLevel: z
     .enum(careLevels, { error: `The care level must be one of ${careLevels.join(', ')}.` })
     .default('as-stocked'),
-  quantity: quantity('The quantity', 1, 500, '').int('The quantity must be a whole number.').default(1),
+  quantity: quantity('The quantity', 1, 500, '')
+    .int('The quantity must be a whole number.')
+    .default(1),
 });
 export type BriefInput = z.input<typeof briefSchema>;
 export type ParsedBrief = z.output<typeof briefSchema>;
 
 export const solveRequestSchema = briefSchema.extend({
-  rank: z.enum(ranks, { error: `The rank must be one of ${ranks.join(', ')}.` }).default('best-value'),
+  rank: z
+    .enum(ranks, { error: `The rank must be one of ${ranks.join(', ')}.` })
+    .default('best-value'),
   limit: quantity('The limit', 1, 50, '').int('The limit must be a whole number.').default(10),
 });
 export type SolveRequestInput = z.input<typeof solveRequestSchema>;

@@ -11,7 +11,9 @@ const diodeModelSchema = z.object({
   saturationAmps: quantity('The saturation current', 1e-20, 1e-2, 'A'),
   emissionCoefficient: quantity('The emission coefficient', 0.5, 10, ''),
   energyGapElectronVolts: quantity('The energy gap', 0.1, 5, 'eV').default(1.11),
-  saturationTemperatureExponent: quantity('The saturation temperature exponent', 0, 10, '').default(3),
+  saturationTemperatureExponent: quantity('The saturation temperature exponent', 0, 10, '').default(
+    3,
+  ),
 });
 
 export const timingSchema = z.discriminatedUnion(
@@ -34,7 +36,9 @@ export const analyseRequestSchema = z.object({
   referenceCelsius: quantity('The reference temperature', -100, 300, '°C').default(25),
   thresholds: z.object({ r1Ohms: ohms('R1'), r2Ohms: ohms('R2'), r3Ohms: ohms('R3') }),
   timing: timingSchema,
-  resistorTemperatureCoefficientPerKelvin: perKelvin('The resistor temperature coefficient').default(0),
+  resistorTemperatureCoefficientPerKelvin: perKelvin(
+    'The resistor temperature coefficient',
+  ).default(0),
   capacitor: z.object({
     farads: quantity('The capacitance', 1e-15, 100, 'F'),
     leakageOhms: quantity('The leakage resistance', 1, 1e18, 'Ω').nullable().default(null),
@@ -44,9 +48,11 @@ export const analyseRequestSchema = z.object({
   }),
   comparator: z
     .object({
-      output: z.enum(['push-pull', 'open-drain'], {
-        error: 'The output must be "push-pull" or "open-drain".',
-      }).default('push-pull'),
+      output: z
+        .enum(['push-pull', 'open-drain'], {
+          error: 'The output must be "push-pull" or "open-drain".',
+        })
+        .default('push-pull'),
       highVolts: quantity('The high output', -1000, 1000, 'V').nullable().default(null),
       lowVolts: quantity('The low output', -1000, 1000, 'V').default(0),
       highOhms: parasiticOhms('The high output resistance').default(0),

@@ -28,7 +28,12 @@ export const moneySchema = z.object({ amount: z.int(), currency: z.string().leng
 export type Money = z.infer<typeof moneySchema>;
 
 export const pageQuerySchema = z.object({
-  page: z.coerce.number({ error: 'page must be a whole number from 1.' }).int().min(1).max(100_000).default(1),
+  page: z.coerce
+    .number({ error: 'page must be a whole number from 1.' })
+    .int()
+    .min(1)
+    .max(100_000)
+    .default(1),
   pageSize: z.coerce
     .number({ error: 'pageSize must be a whole number from 1 to 500.' })
     .int()

@@ -1,5 +1,12 @@
 import { z } from 'zod';
-import { line, moneySchema, mountingSchema, pageOf, pageQuerySchema, timestampSchema } from './common.ts';
+import {
+  line,
+  moneySchema,
+  mountingSchema,
+  pageOf,
+  pageQuerySchema,
+  timestampSchema,
+} from './common.ts';
 import { orderSchema, orderStatusSchema } from './orders.ts';
 import { partKindSchema, partSchema } from './parts.ts';
 
@@ -22,19 +29,36 @@ export const deskPartSchema = z.object({
   reserved: z.int(),
   active: z.boolean(),
   lots: z.array(
-    z.object({ id: z.string(), code: z.string(), bin: z.string(), onHand: z.int(), reserved: z.int(), receivedOn: z.string() }),
+    z.object({
+      id: z.string(),
+      code: z.string(),
+      bin: z.string(),
+      onHand: z.int(),
+      reserved: z.int(),
+      receivedOn: z.string(),
+    }),
   ),
 });
 export type DeskPart = z.infer<typeof deskPartSchema>;
 export const deskPartsPageSchema = pageOf(deskPartSchema);
 export type DeskPartsPage = z.infer<typeof deskPartsPageSchema>;
 
-export const stockReasons = ['counted', 'received', 'damaged', 'lost', 'found', 'returned'] as const;
+export const stockReasons = [
+  'counted',
+  'received',
+  'damaged',
+  'lost',
+  'found',
+  'returned',
+] as const;
 
 export const changePriceSchema = z.object({
   /** Net price of one piece in minor units. */
   unitPrice: z.object({
-    amount: z.int('The price must be a whole number of cents.').min(0, 'A price cannot be negative.').max(100_000_00, 'The price is above 100,000.'),
+    amount: z
+      .int('The price must be a whole number of cents.')
+      .min(0, 'A price cannot be negative.')
+      .max(100_000_00, 'The price is above 100,000.'),
     currency: z.literal('EUR', { error: 'Prices are in EUR.' }),
   }),
   reason: line('The reason', 200, 3),
@@ -43,7 +67,10 @@ export const changePriceSchema = z.object({
 export const changeStockSchema = z.object({
   lotId: line('The lot', 40),
   /** What is in the bin now. */
-  onHand: z.int('The count must be a whole number.').min(0, 'A bin cannot hold fewer than none.').max(10_000_000, 'The count is too large.'),
+  onHand: z
+    .int('The count must be a whole number.')
+    .min(0, 'A bin cannot hold fewer than none.')
+    .max(10_000_000, 'The count is too large.'),
   reason: z.enum(stockReasons, { error: `The reason must be one of ${stockReasons.join(', ')}.` }),
   note: line('The note', 200, 3),
 });
@@ -60,7 +87,13 @@ export const ledgerEntrySchema = z.object({
 export const partHistorySchema = z.object({
   ledger: z.array(ledgerEntrySchema),
   audit: z.array(
-    z.object({ at: timestampSchema, who: z.string(), what: z.string(), from: z.string().nullable(), to: z.string().nullable() }),
+    z.object({
+      at: timestampSchema,
+      who: z.string(),
+      what: z.string(),
+      from: z.string().nullable(),
+      to: z.string().nullable(),
+    }),
   ),
 });
 export type PartHistory = z.infer<typeof partHistorySchema>;
@@ -85,7 +118,13 @@ export type DeskOrdersPage = z.infer<typeof deskOrdersPageSchema>;
 
 export const deskOrderSchema = orderSchema.extend({
   payments: z.array(
-    z.object({ at: timestampSchema, what: z.string(), amount: moneySchema, status: z.string(), reference: z.string() }),
+    z.object({
+      at: timestampSchema,
+      what: z.string(),
+      amount: moneySchema,
+      status: z.string(),
+      reference: z.string(),
+    }),
   ),
   refundable: moneySchema,
   /** Where a refund leaves the parts: still on the shelf or gone with the parcel. */
@@ -115,9 +154,13 @@ export const deskTodaySchema = z.object({
   late: z.int(),
   soldToday: moneySchema,
   outOfStock: z.int(),
-  lowStock: z.array(z.object({ id: z.string(), sku: z.string(), name: z.string(), available: z.int() })),
+  lowStock: z.array(
+    z.object({ id: z.string(), sku: z.string(), name: z.string(), available: z.int() }),
+  ),
   /** What needs the owner today, in sentences, each with where to go. */
-  decisions: z.array(z.object({ when: z.string(), text: z.string(), path: z.string(), action: z.string() })),
+  decisions: z.array(
+    z.object({ when: z.string(), text: z.string(), path: z.string(), action: z.string() }),
+  ),
   ledger: z.array(ledgerEntrySchema),
 });
 export type DeskToday = z.infer<typeof deskTodaySchema>;

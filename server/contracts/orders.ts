@@ -4,7 +4,14 @@ import { packPartSchema, promiseSchema, cautionSchema } from './packs.ts';
 import { drawingSchema, pulseStripSchema } from './drawing.ts';
 
 export const orderStatuses = [
-  'awaiting_payment', 'paid', 'picking', 'packed', 'shipped', 'on_hold', 'cancelled', 'refunded',
+  'awaiting_payment',
+  'paid',
+  'picking',
+  'packed',
+  'shipped',
+  'on_hold',
+  'cancelled',
+  'refunded',
 ] as const;
 export const orderStatusSchema = z.enum(orderStatuses);
 export type OrderStatus = z.infer<typeof orderStatusSchema>;

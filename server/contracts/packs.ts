@@ -5,7 +5,21 @@ import { drawingSchema, pulseStripSchema } from './drawing.ts';
 import { partKindSchema } from './parts.ts';
 
 export const packRoles = [
-  'U1', 'R1', 'R2', 'R3', 'R4', 'R4A', 'R4B', 'RP', 'C1', 'C2', 'LED', 'RL', 'PCB', 'BAT', 'BH',
+  'U1',
+  'R1',
+  'R2',
+  'R3',
+  'R4',
+  'R4A',
+  'R4B',
+  'RP',
+  'C1',
+  'C2',
+  'LED',
+  'RL',
+  'PCB',
+  'BAT',
+  'BH',
 ] as const;
 export const packRoleSchema = z.enum(packRoles);
 export type PackRole = z.infer<typeof packRoleSchema>;
@@ -37,7 +51,15 @@ export const packPartSchema = z.object({
 });
 export type PackPart = z.infer<typeof packPartSchema>;
 
-export const cautionCodes = ['flash', 'low-voltage-only', 'soldering', 'polarity', 'not-for-safety', 'small-parts', 'battery'] as const;
+export const cautionCodes = [
+  'flash',
+  'low-voltage-only',
+  'soldering',
+  'polarity',
+  'not-for-safety',
+  'small-parts',
+  'battery',
+] as const;
 export const cautionSchema = z.object({
   code: z.enum(cautionCodes),
   text: z.string(),

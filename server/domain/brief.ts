@@ -137,7 +137,11 @@ function resolveLed(
   if (load.kind === 'logic') return { led: null };
   const leds = partsOf(catalogue, 'led').filter((part) => part.mounting === mounting);
   const led = leds.find((part) => part.facts.colour === load.colour);
-  if (!led) return { path: 'load.colour', message: `The shop has no ${load.colour} LED for this mounting.` };
+  if (!led)
+    return {
+      path: 'load.colour',
+      message: `The shop has no ${load.colour} LED for this mounting.`,
+    };
   const glows = (part: PartOf<'led'>) => supply.volts - part.facts.forwardVolts >= ledHeadroomVolts;
   if (!glows(led)) {
     const colours = leds.filter(glows).map((part) => part.facts.colour);

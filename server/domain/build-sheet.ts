@@ -10,7 +10,8 @@ type Reading = BuildSheet['readings'][number];
 
 /** The order of assembly: lowest parts first, polarised parts with their mark, power last. */
 export function buildSteps(parts: readonly PackPart[]): Step[] {
-  const roles = (wanted: (part: PackPart) => boolean) => parts.filter(wanted).map((part) => part.role);
+  const roles = (wanted: (part: PackPart) => boolean) =>
+    parts.filter(wanted).map((part) => part.role);
   const chips = parts.some((part) => part.mounting === 'surface-mount' && part.kind === 'resistor');
   const steps: Step[] = [
     {

@@ -28,7 +28,10 @@ export type FactsOf<Kind extends PartKind> = Extract<PartFacts, { kind: Kind }>;
 export type PartOf<Kind extends PartKind> = CataloguePart & { facts: FactsOf<Kind> };
 
 /** Narrows a part to a kind. */
-export function isKind<Kind extends PartKind>(part: CataloguePart, kind: Kind): part is PartOf<Kind> {
+export function isKind<Kind extends PartKind>(
+  part: CataloguePart,
+  kind: Kind,
+): part is PartOf<Kind> {
   return part.facts.kind === kind;
 }
 

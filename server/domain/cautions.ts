@@ -66,6 +66,9 @@ export function cautionsFor(facts: CautionFacts): Caution[] {
       'Fit alkaline AA or AAA cells only, all of one age; never solder to a cell, short it or charge it.',
     );
   }
-  say('small-parts', 'Small parts: keep away from young children. For makers of 14 and older; not a toy.');
+  say(
+    'small-parts',
+    'Small parts: keep away from young children. For makers of 14 and older; not a toy.',
+  );
   return cautions;
 }

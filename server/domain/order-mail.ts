@@ -38,7 +38,12 @@ interface MailLine {
 
 const amount = (minor: number) => `€${nbsp}${(minor / 100).toFixed(2)}`;
 const day = (date: Date) =>
-  date.toLocaleDateString('en-GB', { weekday: 'long', day: 'numeric', month: 'long', timeZone: 'UTC' });
+  date.toLocaleDateString('en-GB', {
+    weekday: 'long',
+    day: 'numeric',
+    month: 'long',
+    timeZone: 'UTC',
+  });
 
 /** Postal address line by line, the country's code last. */
 export function addressLines(address: Address): string[] {
@@ -68,7 +73,10 @@ export function confirmationMail(facts: {
     { kind: 'text', text: `Thank you. Order ${order.ref} is paid and waits for the bench.` },
     {
       kind: 'list',
-      items: lines.map((line) => `${line.quantity} × ${line.sentence}. ${promiseLine(line.promise)}. ${amount(line.lineGrossMinor)}. Identifier ${line.identifier}.`),
+      items: lines.map(
+        (line) =>
+          `${line.quantity} × ${line.sentence}. ${promiseLine(line.promise)}. ${amount(line.lineGrossMinor)}. Identifier ${line.identifier}.`,
+      ),
     },
     {
       kind: 'list',
@@ -79,7 +87,9 @@ export function confirmationMail(facts: {
       ],
     },
     { kind: 'text', text: `It goes to: ${addressLines(order.shipTo).join(', ')}.` },
-    ...(order.shipBy === null ? [] : [{ kind: 'text' as const, text: `It leaves us by ${day(order.shipBy)}.` }]),
+    ...(order.shipBy === null
+      ? []
+      : [{ kind: 'text' as const, text: `It leaves us by ${day(order.shipBy)}.` }]),
     { kind: 'link', text: 'Follow the order and open its build sheets', href: link },
     ...cautionBlocks(lines),
     {
@@ -132,11 +142,13 @@ type Block =
 
 function cautionBlocks(lines: readonly MailLine[]): Block[] {
   const texts = [...new Set(lines.flatMap((line) => line.cautions.map((caution) => caution.text)))];
-  return [{ kind: 'text', text: 'Before you build:' }, { kind: 'list', items: texts }];
+  return [
+    { kind: 'text', text: 'Before you build:' },
+    { kind: 'list', items: texts },
+  ];
 }
 
-const escape = (text: string) =>
-  text.replace(/[&<>"']/g, (sign) => `&#${sign.charCodeAt(0)};`);
+const escape = (text: string) => text.replace(/[&<>"']/g, (sign) => `&#${sign.charCodeAt(0)};`);
 
 function compose(subject: string, blocks: readonly Block[], shop: Shop): Mail {
   const sender = [...shop.address, shop.email].join('\n');

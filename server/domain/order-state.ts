@@ -2,15 +2,7 @@ import type { OrderStatus } from '../contracts/orders.ts';
 
 /** What can happen to an order. */
 export type OrderEvent =
-  | 'pay'
-  | 'expire'
-  | 'claim'
-  | 'release'
-  | 'pack'
-  | 'ship'
-  | 'refund'
-  | 'hold'
-  | 'resume';
+  'pay' | 'expire' | 'claim' | 'release' | 'pack' | 'ship' | 'refund' | 'hold' | 'resume';
 
 export type Transition = { kind: 'moved'; to: OrderStatus } | { kind: 'refused'; reason: string };
 

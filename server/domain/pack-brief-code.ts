@@ -1,4 +1,10 @@
-import { briefSchema, careLevels, ledColours, targetUnits, type ParsedBrief } from '../contracts/brief.ts';
+import {
+  briefSchema,
+  careLevels,
+  ledColours,
+  targetUnits,
+  type ParsedBrief,
+} from '../contracts/brief.ts';
 import { packRoles, type PackRole } from '../contracts/packs.ts';
 import type { PackChoice } from './pack-choice.ts';
 
@@ -52,7 +58,12 @@ export function readPackContent(text: string): PackTokenContent | null {
   } catch {
     return null;
   }
-  if (!Array.isArray(raw) || raw[0] !== version || !Array.isArray(raw[2]) || !Array.isArray(raw[3])) {
+  if (
+    !Array.isArray(raw) ||
+    raw[0] !== version ||
+    !Array.isArray(raw[2]) ||
+    !Array.isArray(raw[3])
+  ) {
     return null;
   }
   const [, join, flat, b] = raw;
@@ -79,5 +90,8 @@ export function readPackContent(text: string): PackTokenContent | null {
     quantity: b[10],
   });
   if (!brief.success) return null;
-  return { choice: { parts, join: join === 1 ? 'series' : join === 2 ? 'parallel' : null }, brief: brief.data };
+  return {
+    choice: { parts, join: join === 1 ? 'series' : join === 2 ? 'parallel' : null },
+    brief: brief.data,
+  };
 }

@@ -8,7 +8,21 @@ import { nbsp } from './wording.ts';
 
 /** The order in which a bill of materials lists roles. */
 const roleOrder: readonly PackRole[] = [
-  'U1', 'R1', 'R2', 'R3', 'R4', 'R4A', 'R4B', 'C1', 'RP', 'LED', 'RL', 'C2', 'PCB', 'BH', 'BAT',
+  'U1',
+  'R1',
+  'R2',
+  'R3',
+  'R4',
+  'R4A',
+  'R4B',
+  'C1',
+  'RP',
+  'LED',
+  'RL',
+  'C2',
+  'PCB',
+  'BH',
+  'BAT',
 ];
 
 const dielectricWords: Record<FactsOf<'capacitor'>['dielectric'], string> = {
@@ -44,7 +58,8 @@ export function markingOf(part: CataloguePart): Marking {
         : (capacitorCode(farads, tolerance) ?? capacitorCode(farads));
     return { bands: null, code, text: code ?? formatFarads(farads) };
   }
-  if (isKind(part, 'comparator')) return { bands: null, code: part.facts.sku, text: part.facts.sku };
+  if (isKind(part, 'comparator'))
+    return { bands: null, code: part.facts.sku, text: part.facts.sku };
   return { bands: null, code: null, text: '' };
 }
 

@@ -77,7 +77,13 @@ function drawRail(supplyLabel: string, right: number): DrawingItem[] {
       [grid.nodeP[0], rail],
       [right, rail],
     ]),
-    { kind: 'label', at: [right + 10, rail + 5], text: `+ ${supplyLabel}`, anchor: 'start', weight: 'strong' },
+    {
+      kind: 'label',
+      at: [right + 10, rail + 5],
+      text: `+ ${supplyLabel}`,
+      anchor: 'start',
+      weight: 'strong',
+    },
   ];
 }
 
@@ -108,17 +114,27 @@ function drawComparator(values: Values): DrawingItem[] {
     part('resistor', 'R3', [px + 70, grid.feedbackTop], [ox, grid.feedbackTop]),
     ...names('R3', valueOf(values, 'R3'), [(px + 70 + ox) / 2, grid.feedbackTop - 32], 'middle'),
     wire([[ox, grid.feedbackTop], grid.output]),
-    { kind: 'comparator', role: 'U1', at: [left, oy], width: 96, height: 100, invertingAbove: false },
-    { kind: 'label', at: [left + 36, oy + 5], text: 'U1', anchor: 'middle', weight: 'strong', role: 'U1' },
+    {
+      kind: 'comparator',
+      role: 'U1',
+      at: [left, oy],
+      width: 96,
+      height: 100,
+      invertingAbove: false,
+    },
+    {
+      kind: 'label',
+      at: [left + 36, oy + 5],
+      text: 'U1',
+      anchor: 'middle',
+      weight: 'strong',
+      role: 'U1',
+    },
     wire([[left + 96, oy], grid.output]),
     dot(grid.output),
     wire([grid.output, [ox + 40, oy]]),
     { kind: 'label', at: [ox + 46, oy - 8], text: 'out', anchor: 'start', weight: 'strong' },
-    wire([
-      [left, oy + 25],
-      [grid.nodeN[0], oy + 25],
-      grid.nodeN,
-    ]),
+    wire([[left, oy + 25], [grid.nodeN[0], oy + 25], grid.nodeN]),
   ];
 }
 
@@ -224,7 +240,9 @@ function describe(facts: SchematicFacts, has: (role: PackRole) => boolean): stri
     timing,
     'C1 runs from the inverting input to ground.',
     ...(has('RP') ? ['RP runs from the supply to the output.'] : []),
-    ...(has('LED') ? ['RL and the LED run from the output to ground; the LED’s cathode is at ground.'] : []),
+    ...(has('LED')
+      ? ['RL and the LED run from the output to ground; the LED’s cathode is at ground.']
+      : []),
     ...(has('C2') ? ['C2 runs from the supply to ground, close to U1.'] : []),
     'U1 takes the supply at its supply pin and ground at its ground pin.',
   ];

@@ -1,5 +1,9 @@
 /** The shop's working week and cut-off; hours and days in UTC, as Merrow Quay keeps it. */
-export const shippingRule = { cutOffHour: 14, leaveHour: 16, workingDays: [1, 2, 3, 4, 5] } as const;
+export const shippingRule = {
+  cutOffHour: 14,
+  leaveHour: 16,
+  workingDays: [1, 2, 3, 4, 5],
+} as const;
 
 /**
  * When a paid order must have left: 16:00 of the same day when paid before 14:00 on a working day,
@@ -7,7 +11,8 @@ export const shippingRule = { cutOffHour: 14, leaveHour: 16, workingDays: [1, 2,
  */
 export function shipBy(paidAt: Date): Date {
   const day = new Date(paidAt);
-  const works = (date: Date) => (shippingRule.workingDays as readonly number[]).includes(date.getUTCDay());
+  const works = (date: Date) =>
+    (shippingRule.workingDays as readonly number[]).includes(date.getUTCDay());
   if (!works(day) || day.getUTCHours() >= shippingRule.cutOffHour) {
     do day.setUTCDate(day.getUTCDate() + 1);
     while (!works(day));

@@ -32,7 +32,7 @@ export function spreadCauses(pack: RankedPack, brief: SearchBrief): SpreadCause[
     Math.abs(capacitor.temperatureCoefficientPerKelvin) * kelvin +
     capacitor.temperatureSpread;
   const timing = timingFraction(pack, kelvin);
-  const whole = (Math.log(pack.guaranteed.maxHz / Math.max(pack.guaranteed.minHz, 1e-300))) / 2;
+  const whole = Math.log(pack.guaranteed.maxHz / Math.max(pack.guaranteed.minHz, 1e-300)) / 2;
   const rest = Math.max(0, whole - thresholds - capacitance - timing);
   const causes = [
     { role: 'C1', label: 'Capacitor C1', fraction: capacitance },

@@ -28,7 +28,9 @@ export function mergeDemands(demands: readonly PartDemand[]): PartDemand[] {
   for (const { partId, quantity } of demands) {
     byPart.set(partId, (byPart.get(partId) ?? 0) + quantity);
   }
-  return [...byPart].map(([partId, quantity]) => ({ partId, quantity })).sort((a, b) => a.partId - b.partId);
+  return [...byPart]
+    .map(([partId, quantity]) => ({ partId, quantity }))
+    .sort((a, b) => a.partId - b.partId);
 }
 
 /**
@@ -62,5 +64,7 @@ export function makeableKits(
 ): number {
   const merged = mergeDemands(perKit);
   if (merged.length === 0) return 0;
-  return Math.min(...merged.map(({ partId, quantity }) => Math.floor(availableOf(partId) / quantity)));
+  return Math.min(
+    ...merged.map(({ partId, quantity }) => Math.floor(availableOf(partId) / quantity)),
+  );
 }

@@ -111,7 +111,14 @@ function securityHeaders(secure: boolean) {
 function serveClient(app: Express, clientDir: string): void {
   const page = path.resolve(clientDir, 'index.html');
   if (!existsSync(page)) throw new Error(`No built client in ${clientDir}; run the build first.`);
-  app.use('/assets', express.static(path.resolve(clientDir, 'assets'), { immutable: true, maxAge: '1y', fallthrough: false }));
+  app.use(
+    '/assets',
+    express.static(path.resolve(clientDir, 'assets'), {
+      immutable: true,
+      maxAge: '1y',
+      fallthrough: false,
+    }),
+  );
   app.use(express.static(path.resolve(clientDir), { index: false, maxAge: '1h' }));
   app.get('/{*splat}', (_req, res) => {
     res.set('Cache-Control', 'no-cache').sendFile(page);

@@ -3,7 +3,12 @@ import { signInSchema, signUpSchema, type Me } from '../contracts/auth.ts';
 import type { Deps } from '../ports.ts';
 import { signIn, signUp, type OpenedSession, type Visitor } from '../use-cases/sign-in.ts';
 import { signOut } from '../use-cases/sign-out.ts';
-import { clearSessionCookies, writeRenewalCookie, writeSessionCookie, type CookieSettings } from './session-cookies.ts';
+import {
+  clearSessionCookies,
+  writeRenewalCookie,
+  writeSessionCookie,
+  type CookieSettings,
+} from './session-cookies.ts';
 import { guestKeyHash, requireSignedIn, signedIn } from './visitor.ts';
 
 /** Sign-up, sign-in, sign-out, and who is signed in. */

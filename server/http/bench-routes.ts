@@ -2,16 +2,14 @@ import { Router, type Request } from 'express';
 import { pickRequestSchema, shipRequestSchema } from '../contracts/bench.ts';
 import { pageQuerySchema } from '../contracts/common.ts';
 import type { Deps } from '../ports.ts';
-import {
-  claimOrder,
-  listQueue,
-  packOrder,
-  releaseOrder,
-  shipOrder,
-  tickPick,
-  viewBenchOrder,
-  type Packer,
-} from '../use-cases/work-the-bench.ts';
+import type { Packer } from '../use-cases/bench-order.ts';
+import { claimOrder } from '../use-cases/claim-order.ts';
+import { listQueue } from '../use-cases/list-queue.ts';
+import { packOrder } from '../use-cases/pack-order.ts';
+import { releaseOrder } from '../use-cases/release-order.ts';
+import { shipOrder } from '../use-cases/ship-order.ts';
+import { tickPick } from '../use-cases/tick-pick.ts';
+import { viewBenchOrder } from '../use-cases/view-bench-order.ts';
 import { idempotent } from './idempotent.ts';
 import { guard, requireSignedIn } from './visitor.ts';
 

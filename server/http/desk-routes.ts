@@ -13,15 +13,13 @@ import { correctStock } from '../use-cases/correct-stock.ts';
 import { mapCoverage } from '../use-cases/map-coverage.ts';
 import { refundOrder } from '../use-cases/refund-order.ts';
 import { Refusal } from '../use-cases/refusal.ts';
-import {
-  listAuditPage,
-  listDeskOrders,
-  listDeskPartsPage,
-  viewDeskOrder,
-  viewDeskPart,
-  viewPartHistory,
-  viewToday,
-} from '../use-cases/run-the-desk.ts';
+import { listAuditPage } from '../use-cases/list-audit.ts';
+import { listDeskOrders } from '../use-cases/list-desk-orders.ts';
+import { listDeskPartsPage } from '../use-cases/list-desk-parts.ts';
+import { viewDeskOrder } from '../use-cases/view-desk-order.ts';
+import { viewDeskPart } from '../use-cases/view-desk-part.ts';
+import { viewPartHistory } from '../use-cases/view-part-history.ts';
+import { viewToday } from '../use-cases/view-today.ts';
 import { idempotent } from './idempotent.ts';
 import { guard, requireSignedIn } from './visitor.ts';
 

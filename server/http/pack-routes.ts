@@ -22,7 +22,8 @@ export function packRoutes(deps: Pick<Deps, 'db' | 'signer' | 'demo' | 'mailPage
     limit: solvesPerMinute,
     standardHeaders: 'draft-8',
     legacyHeaders: false,
-    handler: (_req, res) => sendProblem(res, 'too-many-requests', 'Too many requests; wait a minute.'),
+    handler: (_req, res) =>
+      sendProblem(res, 'too-many-requests', 'Too many requests; wait a minute.'),
   });
 
   router.get('/shop', async (_req, res) => {

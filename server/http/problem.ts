@@ -39,12 +39,21 @@ function fieldErrors(error: ZodError): FieldError[] {
 }
 
 const bodyProblems: Record<string, [ProblemKind, string]> = {
-  'entity.parse.failed': ['unreadable-request', 'The body is not valid JSON; check quotes, commas and brackets.'],
+  'entity.parse.failed': [
+    'unreadable-request',
+    'The body is not valid JSON; check quotes, commas and brackets.',
+  ],
   'entity.too.large': ['too-large', 'The body is larger than 100 kB; send less at once.'],
-  'encoding.unsupported': ['unsupported-type', 'Send the body uncompressed or as gzip, deflate or br.'],
+  'encoding.unsupported': [
+    'unsupported-type',
+    'Send the body uncompressed or as gzip, deflate or br.',
+  ],
   'charset.unsupported': ['unsupported-type', 'Send the body as UTF-8.'],
   'request.aborted': ['unreadable-request', 'The body ended early.'],
-  'request.size.invalid': ['unreadable-request', 'The body is not as long as its Content-Length says.'],
+  'request.size.invalid': [
+    'unreadable-request',
+    'The body is not as long as its Content-Length says.',
+  ],
   'stream.encoding.set': ['unreadable-request', 'The body could not be read.'],
 };
 

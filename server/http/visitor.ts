@@ -124,7 +124,11 @@ export function basketKeeper(req: Request): BasketKeeper | null {
 }
 
 /** Whose basket; a guest without one gets a key. */
-export function openBasketKeeper(req: Request, res: Response, cookies: CookieSettings): BasketKeeper {
+export function openBasketKeeper(
+  req: Request,
+  res: Response,
+  cookies: CookieSettings,
+): BasketKeeper {
   const known = basketKeeper(req);
   if (known !== null) return known;
   const key = newSecret();

@@ -58,7 +58,9 @@ export async function setLineQuantity(
   lineId: string,
   quantity: number,
 ): Promise<boolean> {
-  const changed = await db('basket_lines').where({ basket_id: basketId, id: lineId }).update({ quantity });
+  const changed = await db('basket_lines')
+    .where({ basket_id: basketId, id: lineId })
+    .update({ quantity });
   return changed === 1;
 }
 
@@ -68,12 +70,20 @@ export async function removeLine(db: Database, basketId: string, lineId: string)
 }
 
 /** Takes the given lines' kits out of a basket once they are ordered; later additions stay. */
-export async function emptyBasket(db: Database, basketId: string, tokens: readonly string[]): Promise<void> {
+export async function emptyBasket(
+  db: Database,
+  basketId: string,
+  tokens: readonly string[],
+): Promise<void> {
   await db('basket_lines').where({ basket_id: basketId }).whereIn('token', tokens).delete();
 }
 
 /** Moves a guest's lines into a user's basket at sign-in and forgets the guest's. */
-export async function mergeBaskets(db: Database, guestId: string, userBasketId: string): Promise<void> {
+export async function mergeBaskets(
+  db: Database,
+  guestId: string,
+  userBasketId: string,
+): Promise<void> {
   for (const line of await basketLines(db, guestId)) {
     await addBasketLine(db, userBasketId, line.token, line.quantity);
   }

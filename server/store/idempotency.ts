@@ -28,7 +28,9 @@ export async function claimKey(
     [scope, key, requestHash],
   );
   if (rows.length > 0) return null;
-  const row = await db('idempotency_keys').where({ scope, key }).first('request_hash', 'status', 'body');
+  const row = await db('idempotency_keys')
+    .where({ scope, key })
+    .first('request_hash', 'status', 'body');
   return row ? { requestHash: row.request_hash, status: row.status, body: row.body } : null;
 }
 

@@ -77,7 +77,11 @@ export async function markSent(db: Database, outboxId: number, at: Date): Promis
 }
 
 /** Notes a failed try; the job queue tries again later. */
-export async function noteMailFailure(db: Database, outboxId: number, error: string): Promise<void> {
+export async function noteMailFailure(
+  db: Database,
+  outboxId: number,
+  error: string,
+): Promise<void> {
   await db('mail_outbox')
     .where({ id: outboxId })
     .update({ last_error: error.slice(0, 500), attempts: db.raw('attempts + 1') });

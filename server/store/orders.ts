@@ -69,7 +69,10 @@ export interface NewOrder {
 }
 
 /** Adds an order that waits for payment, with the next number of the shop's own. */
-export async function addOrder(db: Database, order: NewOrder): Promise<{ id: number; ref: string }> {
+export async function addOrder(
+  db: Database,
+  order: NewOrder,
+): Promise<{ id: number; ref: string }> {
   const [row] = await db('orders')
     .insert({
       ref: db.raw(`'TQ-' || nextval('order_number')`),
@@ -177,7 +180,9 @@ export async function findOrder(db: Database, ref: string): Promise<OrderRow | n
 
 /** An order by reference, its row locked for the rest of the transaction; null when there is none. */
 export async function lockOrder(db: Database, ref: string): Promise<OrderRow | null> {
-  return (await orders(db).where('orders.ref', ref).forUpdate('orders').first(orderColumns)) ?? null;
+  return (
+    (await orders(db).where('orders.ref', ref).forUpdate('orders').first(orderColumns)) ?? null
+  );
 }
 
 /** As lockOrder, by id. */
@@ -194,7 +199,11 @@ export interface StatusChange {
 }
 
 /** Moves an order to a status and whatever changes with it. */
-export async function setStatus(db: Database, orderId: number, change: StatusChange): Promise<void> {
+export async function setStatus(
+  db: Database,
+  orderId: number,
+  change: StatusChange,
+): Promise<void> {
   const columns: Record<string, unknown> = { status: change.status };
   if (change.claimedBy !== undefined) {
     columns.claimed_by = change.claimedBy;
@@ -270,7 +279,9 @@ export async function listOrders(
   const rows = await matching
     .clone()
     .orderByRaw(
-      filter.order === 'newest' ? 'orders.placed_at desc, orders.id desc' : 'orders.ship_by asc nulls last, orders.id asc',
+      filter.order === 'newest'
+        ? 'orders.placed_at desc, orders.id desc'
+        : 'orders.ship_by asc nulls last, orders.id asc',
     )
     .limit(filter.pageSize)
     .offset((filter.page - 1) * filter.pageSize)
@@ -342,7 +353,10 @@ export async function ordersToday(
 ): Promise<{ waiting: number; late: number; soldMinor: number }> {
   const [row] = (await db('orders').select(
     db.raw(`count(*) filter (where status in ('paid', 'picking', 'packed')) as waiting`),
-    db.raw(`count(*) filter (where status in ('paid', 'picking', 'packed') and ship_by < ?) as late`, [now]),
+    db.raw(
+      `count(*) filter (where status in ('paid', 'picking', 'packed') and ship_by < ?) as late`,
+      [now],
+    ),
     db.raw(
       `coalesce(sum(total_minor) filter (where paid_at >= ? and status <> 'refunded'), 0)::bigint as "soldMinor"`,
       [since],

@@ -72,7 +72,10 @@ const factColumns: Record<PartKind, readonly (readonly [string, string])[]> = {
 };
 
 function columns(...facts: string[]): [string, string][] {
-  return facts.map((fact) => [fact, fact.replace(/[A-Z]/g, (letter) => `_${letter.toLowerCase()}`)]);
+  return facts.map((fact) => [
+    fact,
+    fact.replace(/[A-Z]/g, (letter) => `_${letter.toLowerCase()}`),
+  ]);
 }
 
 function toPart(row: PartRow): CataloguePart {
@@ -187,7 +190,8 @@ export async function listDeskParts(
     if (filter.kind) query.where('kind', filter.kind);
     if (filter.mounting) query.where('mounting', filter.mounting);
     if (filter.stock === 'in') query.whereRaw('on_hand - reserved > 0');
-    if (filter.stock === 'low') query.whereRaw('on_hand - reserved between 1 and ?', [lowStockBelow - 1]);
+    if (filter.stock === 'low')
+      query.whereRaw('on_hand - reserved between 1 and ?', [lowStockBelow - 1]);
     if (filter.stock === 'out') query.whereRaw('on_hand - reserved <= 0');
     if (filter.search) matchSearch(query, db, filter.search);
   });
@@ -211,7 +215,10 @@ function matchSearch(query: ReturnType<Database['from']>, db: Database, search: 
       .orWhereILike('name', pattern)
       .orWhereIn(
         'id',
-        db('lots').join('bins', 'bins.id', 'lots.bin_id').whereILike('bins.code', pattern).select('part_id'),
+        db('lots')
+          .join('bins', 'bins.id', 'lots.bin_id')
+          .whereILike('bins.code', pattern)
+          .select('part_id'),
       );
   });
 }
@@ -222,7 +229,10 @@ export async function setPrice(db: Database, partId: number, priceMinor: number)
 }
 
 /** Takes the part's row lock for the rest of the transaction. */
-export async function lockPart(db: Database, partId: number): Promise<{ priceMinor: number } | null> {
+export async function lockPart(
+  db: Database,
+  partId: number,
+): Promise<{ priceMinor: number } | null> {
   const row = await db('parts').where({ id: partId }).forUpdate().first('price_minor');
   return row ? { priceMinor: row.price_minor } : null;
 }

@@ -20,7 +20,12 @@ export async function findUserByEmail(db: Database, email: string): Promise<User
 /** Adds a user; throws the database's unique violation when the address is taken. */
 export async function addUser(db: Database, user: Omit<User, 'id'>): Promise<User> {
   const [row] = await db('users')
-    .insert({ email: user.email, name: user.name, role: user.role, password_hash: user.passwordHash })
+    .insert({
+      email: user.email,
+      name: user.name,
+      role: user.role,
+      password_hash: user.passwordHash,
+    })
     .returning(userColumns);
   return row;
 }
@@ -83,7 +88,9 @@ export async function lockSessionByRenewal(
 ): Promise<RenewableSession | null> {
   const row = await liveSessions(db, now)
     .where((either) => {
-      either.where('sessions.renewal_hash', renewalHash).orWhere('sessions.previous_renewal_hash', renewalHash);
+      either
+        .where('sessions.renewal_hash', renewalHash)
+        .orWhere('sessions.previous_renewal_hash', renewalHash);
     })
     .forUpdate('sessions')
     .first('sessions.id', 'sessions.expires_at', 'sessions.renewal_hash', 'sessions.renewed_at');

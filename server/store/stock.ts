@@ -8,14 +8,7 @@ export interface LotRow extends LotStock {
 }
 
 export type StockReason =
-  | 'opening'
-  | 'counted'
-  | 'received'
-  | 'damaged'
-  | 'lost'
-  | 'found'
-  | 'returned'
-  | 'shipped';
+  'opening' | 'counted' | 'received' | 'damaged' | 'lost' | 'found' | 'returned' | 'shipped';
 
 export interface Actor {
   id: string | null;
@@ -71,7 +64,12 @@ export async function holdShares(
   shares: readonly LotShare[],
 ): Promise<void> {
   await db('reservations').insert(
-    shares.map(({ lotId, quantity }) => ({ order_id: orderId, lot_id: lotId, quantity, state: 'held' })),
+    shares.map(({ lotId, quantity }) => ({
+      order_id: orderId,
+      lot_id: lotId,
+      quantity,
+      state: 'held',
+    })),
   );
 }
 
@@ -170,7 +168,10 @@ export interface LedgerPosting {
 }
 
 /** Posts entries to the stock ledger; each moves what its lot has on hand. */
-export async function postToLedger(db: Database, postings: readonly LedgerPosting[]): Promise<void> {
+export async function postToLedger(
+  db: Database,
+  postings: readonly LedgerPosting[],
+): Promise<void> {
   for (const posting of postings) {
     await db('stock_ledger').insert({
       lot_id: posting.lotId,

@@ -21,7 +21,9 @@ export async function answerOnce(
   if (key.length < 8 || key.length > 200) {
     throw new Refusal('invalid', 'The Idempotency-Key needs 8 to 200 characters.');
   }
-  const hash = createHash('sha256').update(JSON.stringify(request.body ?? null)).digest('hex');
+  const hash = createHash('sha256')
+    .update(JSON.stringify(request.body ?? null))
+    .digest('hex');
   const kept = await claimKey(deps.db, scope, key, hash);
   if (kept !== null) {
     if (kept.requestHash !== hash) {
@@ -31,7 +33,10 @@ export async function answerOnce(
       );
     }
     if (kept.status === null) {
-      throw new Refusal('conflict', 'The same request is still being worked on; ask again in a moment.');
+      throw new Refusal(
+        'conflict',
+        'The same request is still being worked on; ask again in a moment.',
+      );
     }
     return { status: kept.status, body: kept.body };
   }

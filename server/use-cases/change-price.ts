@@ -6,8 +6,8 @@ import { writeAudit } from '../store/audit.ts';
 import { findPart, lockPart, setPrice } from '../store/parts.ts';
 import type { Actor } from '../store/stock.ts';
 import { inTransaction } from '../store/transaction.ts';
-import { viewDeskPart } from './run-the-desk.ts';
 import { Refusal } from './refusal.ts';
+import { viewDeskPart } from './view-desk-part.ts';
 
 /** Sets the net price of a part and writes down who did it and why. */
 export async function changePrice(
@@ -19,7 +19,8 @@ export async function changePrice(
   await inTransaction(deps.db, async (trx) => {
     const before = await lockPart(trx, partId);
     const part = before === null ? null : await findPart(trx, partId);
-    if (before === null || part === null) throw new Refusal('not-found', 'The catalogue has no such part.');
+    if (before === null || part === null)
+      throw new Refusal('not-found', 'The catalogue has no such part.');
     await setPrice(trx, partId, change.unitPrice.amount);
     await writeAudit(trx, {
       at: deps.clock.now(),

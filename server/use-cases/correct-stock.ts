@@ -4,8 +4,8 @@ import { writeAudit } from '../store/audit.ts';
 import { findPart } from '../store/parts.ts';
 import { lockLot, postToLedger, type Actor } from '../store/stock.ts';
 import { inTransaction } from '../store/transaction.ts';
-import { viewDeskPart } from './run-the-desk.ts';
 import { Refusal } from './refusal.ts';
+import { viewDeskPart } from './view-desk-part.ts';
 
 export interface StockCorrection {
   lotId: string;

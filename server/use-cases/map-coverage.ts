@@ -5,7 +5,7 @@ import { resolveBrief } from '../domain/brief.ts';
 import { worseEnd } from '../engine/search/guaranteed-band.ts';
 import type { Deps } from '../ports.ts';
 import { openPackBook, type PackBook } from './pack-book.ts';
-import { searchShelves } from './solve-brief.ts';
+import { steadiestOnShelves } from './solve-brief.ts';
 
 const fromHz = 0.01;
 const toHz = 100_000;
@@ -47,7 +47,7 @@ function halfBandAt(book: PackBook, frequencyHz: number): number | null {
   });
   const inHand = resolveBrief(brief, book.catalogue);
   if (inHand.kind === 'impossible') return null;
-  const [pack] = searchShelves(book, inHand, { rank: 'steadiest', limit: 1 }).packs;
+  const pack = steadiestOnShelves(book, inHand);
   if (!pack || pack.distance > 0.01) return null;
   return worseEnd(pack.guaranteed, frequencyHz);
 }

@@ -66,11 +66,14 @@ export function assess(
   choice: PackChoice,
 ): AssessedPack {
   const demand = demandOfChoice(choice);
-  const parts = inBillOrder(demand.map(({ role, partId }) => toPackPart(role, book.byId.get(partId)!)));
+  const parts = inBillOrder(
+    demand.map(({ role, partId }) => toPackPart(role, book.byId.get(partId)!)),
+  );
   const price = priceOf(book, choice);
   const kits = parsed.quantity;
   const cycle = analyseCycle(ranked.circuit);
-  if (cycle.kind !== 'oscillates') throw new Error(`A found pack does not oscillate: ${cycle.reason}`);
+  if (cycle.kind !== 'oscillates')
+    throw new Error(`A found pack does not oscillate: ${cycle.reason}`);
   const pack: Pack = {
     token: signer.seal(writePackContent({ choice, brief: parsed })),
     topology: ranked.topology,
@@ -131,10 +134,14 @@ export function openToken(book: PackBook, signer: Signer, token: string): Opened
   if (inHand.kind === 'impossible') return { kind: 'gone', reason: inHand.errors[0]!.message };
   const missing = Object.entries(choice.parts).find(([, id]) => !book.byId.has(id));
   if (missing) {
-    return { kind: 'gone', reason: `The shop no longer keeps the part for ${missing[0]}; ask for a new pack.` };
+    return {
+      kind: 'gone',
+      reason: `The shop no longer keeps the part for ${missing[0]}; ask for a new pack.`,
+    };
   }
   const ranked = rankedFromChoice(book, choice, inHand);
-  if (ranked === null) return { kind: 'gone', reason: 'This pack no longer works; ask for a new one.' };
+  if (ranked === null)
+    return { kind: 'gone', reason: 'This pack no longer works; ask for a new one.' };
   return { kind: 'opened', parsed, assessed: assess(book, signer, parsed, inHand, ranked, choice) };
 }
 

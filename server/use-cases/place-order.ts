@@ -87,7 +87,11 @@ async function writeOrder(
   if (basketId === null || stored.length === 0) {
     throw new Refusal('basket-empty', 'Your basket is empty; put a pack in first.');
   }
-  const { rate, methods } = await destination(trx, input.shippingAddress.country, 'shippingAddress.country');
+  const { rate, methods } = await destination(
+    trx,
+    input.shippingAddress.country,
+    'shippingAddress.country',
+  );
   const method = methods.find((one) => one.code === input.shippingMethod);
   if (!method) {
     const message = `Choose one of ${methods.map((one) => one.code).join(', ')} for this country.`;
@@ -96,7 +100,10 @@ async function writeOrder(
   const book = await openPackBook(trx);
   const opened = openLines(book, deps.signer, stored);
   if (opened.length < stored.length) {
-    throw new Refusal('basket-changed', 'A pack in your basket is no longer made; open the basket and choose again.');
+    throw new Refusal(
+      'basket-changed',
+      'A pack in your basket is no longer made; open the basket and choose again.',
+    );
   }
   const priced = priceLines(book, opened, rate.basisPoints);
   requireMakeable(priced.lines);

@@ -6,7 +6,13 @@ import { PaymentRefused, type Deps } from '../ports.ts';
 import { writeAudit } from '../store/audit.ts';
 import type { Database } from '../store/connection.ts';
 import { queueMail } from '../store/mail-outbox.ts';
-import { addOrderEvent, lockOrder, lockOrderById, setStatus, type OrderRow } from '../store/orders.ts';
+import {
+  addOrderEvent,
+  lockOrder,
+  lockOrderById,
+  setStatus,
+  type OrderRow,
+} from '../store/orders.ts';
 import {
   addRefund,
   findPaymentByIntent,
@@ -55,7 +61,9 @@ export async function refundOrder(
       throw new Refusal('wrong-state', `${why} There is nothing to refund.`);
     }
     // A refusal is remembered under its key at the service, so a new try needs a new one.
-    const tries = (await refundsOfOrder(trx, order.id)).filter((one) => one.status === 'failed').length;
+    const tries = (await refundsOfOrder(trx, order.id)).filter(
+      (one) => one.status === 'failed',
+    ).length;
     const digest = createHash('sha256').update(payment.sessionId).digest('hex').slice(0, 24);
     const key = `refund-${digest}-${tries}`;
     const refundId = await addRefund(trx, {
@@ -73,7 +81,10 @@ export async function refundOrder(
   } catch (error) {
     if (!(error instanceof PaymentRefused)) throw error;
     await settleRefund(deps.db, asked.refundId, { status: 'failed', refundId: null });
-    throw new Refusal('payment-refused', `The payment service refused the refund: ${error.message}`);
+    throw new Refusal(
+      'payment-refused',
+      `The payment service refused the refund: ${error.message}`,
+    );
   }
 }
 
@@ -89,7 +100,8 @@ async function finishRefund(
     if (order === null) throw new Refusal('not-found', `There is no order ${ref}.`);
     await settleRefund(trx, refund.refundId, { status: 'done', refundId: refund.serviceId });
     const payment = (await paymentsOfOrder(trx, order.id)).find((one) => one.status === 'captured');
-    if (payment) await closeRefunded(deps, trx, order, payment, `Refunded in full: ${reason}`, actor.name);
+    if (payment)
+      await closeRefunded(deps, trx, order, payment, `Refunded in full: ${reason}`, actor.name);
     await writeAudit(trx, {
       at: deps.clock.now(),
       actor,
@@ -116,7 +128,13 @@ async function closeRefunded(
   if (step.kind === 'refused') return;
   if (holdsStock(order.status)) await moveReservations(trx, order.id, 'released');
   await setStatus(trx, order.id, { status: step.to, claimedBy: null });
-  await addOrderEvent(trx, order.id, { at: deps.clock.now(), who, what, from: order.status, to: step.to });
+  await addOrderEvent(trx, order.id, {
+    at: deps.clock.now(),
+    who,
+    what,
+    from: order.status,
+    to: step.to,
+  });
   await queueMail(trx, {
     messageKey: `refund-${order.ref}`,
     orderId: order.id,

@@ -24,7 +24,11 @@ export async function sendMail(
       await markSent(trx, outboxId, deps.clock.now());
     });
   } catch (error) {
-    await noteMailFailure(deps.db, outboxId, error instanceof Error ? error.message : String(error));
+    await noteMailFailure(
+      deps.db,
+      outboxId,
+      error instanceof Error ? error.message : String(error),
+    );
     throw error;
   }
 }

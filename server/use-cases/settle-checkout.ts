@@ -14,7 +14,12 @@ import {
   setStatus,
   type OrderRow,
 } from '../store/orders.ts';
-import { findPaymentBySession, markCaptured, setPaymentStatus, type PaymentRow } from '../store/payments.ts';
+import {
+  findPaymentBySession,
+  markCaptured,
+  setPaymentStatus,
+  type PaymentRow,
+} from '../store/payments.ts';
 import { forgetReleased, holdShares, lockLotsOfParts, moveReservations } from '../store/stock.ts';
 import { shopSettings } from '../store/settings.ts';
 import { inTransaction } from '../store/transaction.ts';
@@ -59,11 +64,21 @@ async function settlePaid(
   }
   // Paid after the reservation lapsed: the parts may still be there.
   if (order.status === 'cancelled' && !(await promiseAgain(trx, order.id))) {
-    return hold(trx, order, at, 'Paid after the reservation lapsed and the parts are gone; the owner decides');
+    return hold(
+      trx,
+      order,
+      at,
+      'Paid after the reservation lapsed and the parts are gone; the owner decides',
+    );
   }
   await moveReservations(trx, order.id, 'allocated');
   const leave = shipBy(at);
-  await setStatus(trx, order.id, { status: step.to, paidAt: at, shipBy: leave, reservedUntil: null });
+  await setStatus(trx, order.id, {
+    status: step.to,
+    paidAt: at,
+    shipBy: leave,
+    reservedUntil: null,
+  });
   await addOrderEvent(trx, order.id, {
     at,
     who: 'Payment',
@@ -98,7 +113,8 @@ async function promiseAgain(trx: Database, orderId: number): Promise<boolean> {
 
 async function hold(trx: Database, order: OrderRow, at: Date, what: string): Promise<string> {
   const step = nextStatus(order.status, 'hold');
-  if (step.kind === 'moved') await setStatus(trx, order.id, { status: step.to, reservedUntil: null });
+  if (step.kind === 'moved')
+    await setStatus(trx, order.id, { status: step.to, reservedUntil: null });
   await addOrderEvent(trx, order.id, {
     at,
     who: 'Payment',

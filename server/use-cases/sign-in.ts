@@ -74,9 +74,16 @@ export async function signUp(
     });
   } catch (error) {
     if (!breaksConstraint(error, 'users_email_once')) throw error;
-    throw new Refusal('invalid', 'There is already an account for this e-mail address; sign in instead.', [
-      { path: 'email', message: 'There is already an account for this address; sign in instead.' },
-    ]);
+    throw new Refusal(
+      'invalid',
+      'There is already an account for this e-mail address; sign in instead.',
+      [
+        {
+          path: 'email',
+          message: 'There is already an account for this address; sign in instead.',
+        },
+      ],
+    );
   }
 }
 
@@ -94,13 +101,19 @@ export async function signIn(
   const who = { email: input.email, address: visitor.address };
   const failures = await countSignInFailures(deps.db, { ...who, since });
   if (failures.byEmail >= failuresPerEmail || failures.byAddress >= failuresPerAddress) {
-    throw new Refusal('too-many-requests', 'Too many failed sign-ins. Wait a quarter of an hour, then try again.');
+    throw new Refusal(
+      'too-many-requests',
+      'Too many failed sign-ins. Wait a quarter of an hour, then try again.',
+    );
   }
   const user = await findUserByEmail(deps.db, input.email);
   const matches = await bcrypt.compare(prepared(input.password), user?.passwordHash ?? nobodyHash);
   if (user === null || !matches) {
     await noteSignInFailure(deps.db, { ...who, at: now });
-    throw new Refusal('wrong-credentials', 'E-mail address and password do not match. Check both and try again.');
+    throw new Refusal(
+      'wrong-credentials',
+      'E-mail address and password do not match. Check both and try again.',
+    );
   }
   return inTransaction(deps.db, async (trx) => {
     await forgetSignInFailures(trx, input.email);

@@ -1,11 +1,16 @@
-import type { SolveRequest } from '../contracts/brief.ts';
+import { solveRequestSchema, type SolveRequest } from '../contracts/brief.ts';
 import type { Advice, SolveResponse } from '../contracts/packs.ts';
 import { adviseOn } from '../domain/advice.ts';
 import { resolveBrief, type BriefInHand } from '../domain/brief.ts';
 import { chooseAccessories, choiceOf, missingAccessory } from '../domain/pack-choice.ts';
 import { shelfOf } from '../domain/shelf.ts';
 import { formTimingTables, restock, type TimingTables } from '../engine/search/composites.ts';
-import { findPacks, type FoundPacks } from '../engine/search/find-packs.ts';
+import {
+  findPacks,
+  findSteadiestPack,
+  type FoundPacks,
+  type RankedPack,
+} from '../engine/search/find-packs.ts';
 import type { Shelf } from '../engine/search/shelf.ts';
 import type { Deps } from '../ports.ts';
 import { assess, openPackBook, type PackBook } from './pack-book.ts';
@@ -41,19 +46,38 @@ export async function solveBrief(
   };
 }
 
-/** Looks through the shelves for a brief in hand. */
-export function searchShelves(
+function searchShelves(
   book: PackBook,
   inHand: BriefInHand,
   request: Pick<SolveRequest, 'rank' | 'limit'>,
 ): FoundPacks {
+  const shelf = shelfFor(book, inHand);
+  if (shelf === null) return nothing;
+  return findPacks(shelf, inHand.search, request.rank, request.limit, timingTables(shelf));
+}
+
+/** The steadiest pack for a brief in hand, or null: what the coverage map asks for. */
+export function steadiestOnShelves(book: PackBook, inHand: BriefInHand): RankedPack | null {
+  const shelf = shelfFor(book, inHand);
+  return shelf && findSteadiestPack(shelf, inHand.search, timingTables(shelf));
+}
+
+/** The shelf a brief may take from; null when something every kit needs is missing. */
+function shelfFor(book: PackBook, inHand: BriefInHand): Shelf | null {
   const accessories = chooseAccessories(book.catalogue, inHand);
-  if (inHand.brief.careLevel !== 'as-stocked') return nothing;
-  if (missingAccessory(inHand, accessories) !== null) return nothing;
-  const shelf = shelfOf(book.catalogue, inHand.brief.mounting, (comparator) =>
+  if (inHand.brief.careLevel !== 'as-stocked') return null;
+  if (missingAccessory(inHand, accessories) !== null) return null;
+  return shelfOf(book.catalogue, inHand.brief.mounting, (comparator) =>
     accessories.boardFor(comparator.facts.sections),
   );
-  return findPacks(shelf, inHand.search, request.rank, request.limit, timingTables(shelf));
+}
+
+/** Forms the timing tables of both mountings ahead of the first brief. */
+export async function warmSearch(deps: Pick<Deps, 'db' | 'signer'>): Promise<void> {
+  for (const mounting of ['through-hole', 'surface-mount'] as const) {
+    const brief = { target: { value: 1, unit: 'Hz' as const }, mounting };
+    await solveBrief(deps, solveRequestSchema.parse(brief));
+  }
 }
 
 function advice(

@@ -84,6 +84,8 @@ export async function viewBasket(
     lines,
     kits: lines.reduce((sum, line) => sum + line.quantity, 0),
     total: money(lines.reduce((sum, line) => sum + line.total.amount, 0)),
-    acknowledgements: [...new Map(cautions.map(({ code, text }) => [code, { code, text }])).values()],
+    acknowledgements: [
+      ...new Map(cautions.map(({ code, text }) => [code, { code, text }])).values(),
+    ],
   };
 }

@@ -105,7 +105,10 @@ export async function listMyOrders(
   page: { page: number; pageSize: number },
 ): Promise<Page<OrderSummary>> {
   const { orders, total } = await listOrders(deps.db, { userId, order: 'newest', ...page });
-  const lines = await linesOfOrders(deps.db, orders.map((order) => order.id));
+  const lines = await linesOfOrders(
+    deps.db,
+    orders.map((order) => order.id),
+  );
   const items = orders.map((order) => {
     const own = lines.filter((line) => line.orderId === order.id);
     return {

@@ -8,9 +8,7 @@ import { loadCatalogue } from '../store/parts.ts';
 import { shopSettings } from '../store/settings.ts';
 
 /** What the forms need to know of the shop before anybody types. */
-export async function viewShop(
-  deps: Pick<Deps, 'db' | 'demo' | 'mailPageUrl'>,
-): Promise<Shop> {
+export async function viewShop(deps: Pick<Deps, 'db' | 'demo' | 'mailPageUrl'>): Promise<Shop> {
   const [settings, catalogue] = await Promise.all([shopSettings(deps.db), loadCatalogue(deps.db)]);
   const colours = new Set<string>(partsOf(catalogue, 'led').map((part) => part.facts.colour));
   return {

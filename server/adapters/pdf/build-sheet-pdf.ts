@@ -79,7 +79,11 @@ function printParts(paper: Sheet, sheet: BuildSheet, from: number): number {
   let y = heading(paper, 'Parts in the bag, for one kit', from);
   for (const part of sheet.parts) {
     y = roomFor(paper, y, 28);
-    paper.rect(area.left, y + 5, 11, 11).lineWidth(0.8).strokeColor(ink.text).stroke();
+    paper
+      .rect(area.left, y + 5, 11, 11)
+      .lineWidth(0.8)
+      .strokeColor(ink.text)
+      .stroke();
     write(paper, part.role, area.left + 20, y + 4, { size: 11, weight: 800, width: 40 });
     drawComponent(paper, part, area.left + 62, y);
     const text = area.left + 168;
@@ -99,9 +103,16 @@ function printSteps(paper: Sheet, sheet: BuildSheet, from: number): number {
   let y = heading(paper, 'Order of assembly', from);
   sheet.steps.forEach((step, k) => {
     y = roomFor(paper, y, 44);
-    paper.rect(area.left, y + 3, 11, 11).lineWidth(0.8).strokeColor(ink.text).stroke();
+    paper
+      .rect(area.left, y + 3, 11, 11)
+      .lineWidth(0.8)
+      .strokeColor(ink.text)
+      .stroke();
     const roles = step.roles.length > 0 ? ` (${step.roles.join(', ')})` : '';
-    const below = write(paper, `${k + 1}. ${step.title}${roles}`, area.left + 20, y, { size: 11, weight: 800 });
+    const below = write(paper, `${k + 1}. ${step.title}${roles}`, area.left + 20, y, {
+      size: 11,
+      weight: 800,
+    });
     y = write(paper, step.text, area.left + 20, below, { size: 10 }) + 4;
   });
   return y;
@@ -112,8 +123,16 @@ function printReadings(paper: Sheet, sheet: BuildSheet, from: number): number {
   for (const reading of sheet.readings) {
     y = roomFor(paper, y, 36);
     const left = write(paper, reading.point, area.left, y, { size: 10, weight: 800, width: 150 });
-    const expect = write(paper, reading.expect, area.left + 160, y, { size: 10, weight: 600, width: 347 });
-    const how = write(paper, reading.how, area.left + 160, expect, { size: 9.5, colour: ink.soft, width: 347 });
+    const expect = write(paper, reading.expect, area.left + 160, y, {
+      size: 10,
+      weight: 600,
+      width: 347,
+    });
+    const how = write(paper, reading.how, area.left + 160, expect, {
+      size: 9.5,
+      colour: ink.soft,
+      width: 347,
+    });
     y = Math.max(left, how) + 4;
   }
   return y;
@@ -124,11 +143,15 @@ function printCautions(paper: Sheet, sheet: BuildSheet, from: number): void {
   for (const caution of sheet.cautions) {
     y = roomFor(paper, y, 34);
     paper.moveTo(area.left + 1, y + 2).lineTo(area.left + 1, y + 12);
-    paper.lineWidth(caution.mustAcknowledge ? 3 : 1.2).strokeColor(ink.text).stroke();
-    y = write(paper, caution.text, area.left + 10, y, {
-      size: 9.5,
-      weight: caution.mustAcknowledge ? 800 : 400,
-    }) + 3;
+    paper
+      .lineWidth(caution.mustAcknowledge ? 3 : 1.2)
+      .strokeColor(ink.text)
+      .stroke();
+    y =
+      write(paper, caution.text, area.left + 10, y, {
+        size: 9.5,
+        weight: caution.mustAcknowledge ? 800 : 400,
+      }) + 3;
   }
   write(
     paper,
@@ -145,9 +168,15 @@ function numberPages(paper: Sheet, sheet: BuildSheet): void {
     paper.switchToPage(k);
     // Below the margin: without this, writing there would add a page.
     paper.page.margins.bottom = 0;
-    write(paper, `Order ${sheet.ref}, kit ${sheet.identifier}. Page ${k + 1} of ${count}`, area.left, area.bottom + 12, {
-      size: 8.5,
-      colour: ink.soft,
-    });
+    write(
+      paper,
+      `Order ${sheet.ref}, kit ${sheet.identifier}. Page ${k + 1} of ${count}`,
+      area.left,
+      area.bottom + 12,
+      {
+        size: 8.5,
+        colour: ink.soft,
+      },
+    );
   }
 }

@@ -48,7 +48,12 @@ function line(sheet: Sheet, points: Point[]): void {
 }
 
 function drawGround(sheet: Sheet, [x, y]: Point): void {
-  [16, 10, 4].forEach((half, k) => line(sheet, [[x - half, y + 5 * k], [x + half, y + 5 * k]]));
+  [16, 10, 4].forEach((half, k) =>
+    line(sheet, [
+      [x - half, y + 5 * k],
+      [x + half, y + 5 * k],
+    ]),
+  );
 }
 
 function drawLabel(sheet: Sheet, item: Extract<DrawingItem, { kind: 'label' }>): void {
@@ -71,22 +76,42 @@ function drawComparator(sheet: Sheet, item: Extract<DrawingItem, { kind: 'compar
   sheet.lineWidth(1.8).stroke();
   const plus = item.invertingAbove ? y + half / 2 : y - half / 2;
   const minus = item.invertingAbove ? y - half / 2 : y + half / 2;
-  line(sheet, [[x + 8, plus], [x + 18, plus]]);
-  line(sheet, [[x + 13, plus - 5], [x + 13, plus + 5]]);
-  line(sheet, [[x + 8, minus], [x + 18, minus]]);
+  line(sheet, [
+    [x + 8, plus],
+    [x + 18, plus],
+  ]);
+  line(sheet, [
+    [x + 13, plus - 5],
+    [x + 13, plus + 5],
+  ]);
+  line(sheet, [
+    [x + 8, minus],
+    [x + 18, minus],
+  ]);
 }
 
 /** Draws a two-ended part in a frame whose x axis runs from one end to the other. */
 function drawPart(sheet: Sheet, item: Extract<DrawingItem, { kind: 'part' }>): void {
   const [dx, dy] = [item.to[0] - item.from[0], item.to[1] - item.from[1]];
   const length = Math.hypot(dx, dy);
-  sheet.save().translate(...item.from).rotate((Math.atan2(dy, dx) * 180) / Math.PI);
+  sheet
+    .save()
+    .translate(...item.from)
+    .rotate((Math.atan2(dy, dx) * 180) / Math.PI);
   const middle = length / 2;
-  const body = item.symbol === 'resistor' ? 22 : item.symbol === 'led' || item.symbol === 'diode' ? 9 : 4;
-  line(sheet, [[0, 0], [middle - body, 0]]);
-  line(sheet, [[middle + body, 0], [length, 0]]);
+  const body =
+    item.symbol === 'resistor' ? 22 : item.symbol === 'led' || item.symbol === 'diode' ? 9 : 4;
+  line(sheet, [
+    [0, 0],
+    [middle - body, 0],
+  ]);
+  line(sheet, [
+    [middle + body, 0],
+    [length, 0],
+  ]);
   if (item.symbol === 'resistor') drawZigzag(sheet, middle - body, middle + body);
-  else if (item.symbol === 'led' || item.symbol === 'diode') drawDiode(sheet, middle, item.symbol === 'led');
+  else if (item.symbol === 'led' || item.symbol === 'diode')
+    drawDiode(sheet, middle, item.symbol === 'led');
   else drawPlates(sheet, middle, item.symbol === 'polarised-capacitor');
   sheet.restore();
 }
@@ -100,19 +125,41 @@ function drawZigzag(sheet: Sheet, from: number, to: number): void {
 }
 
 function drawPlates(sheet: Sheet, at: number, polarised: boolean): void {
-  line(sheet, [[at - 4, -15], [at - 4, 15]]);
-  line(sheet, [[at + 4, -15], [at + 4, 15]]);
+  line(sheet, [
+    [at - 4, -15],
+    [at - 4, 15],
+  ]);
+  line(sheet, [
+    [at + 4, -15],
+    [at + 4, 15],
+  ]);
   if (!polarised) return;
-  line(sheet, [[at - 14, -14], [at - 14, -6]]);
-  line(sheet, [[at - 18, -10], [at - 10, -10]]);
+  line(sheet, [
+    [at - 14, -14],
+    [at - 14, -6],
+  ]);
+  line(sheet, [
+    [at - 18, -10],
+    [at - 10, -10],
+  ]);
 }
 
 function drawDiode(sheet: Sheet, at: number, shines: boolean): void {
   sheet.polygon([at - 9, -10], [at - 9, 10], [at + 9, 0]).stroke();
-  line(sheet, [[at + 9, -10], [at + 9, 10]]);
+  line(sheet, [
+    [at + 9, -10],
+    [at + 9, 10],
+  ]);
   if (!shines) return;
   for (const shift of [-4, 5]) {
-    line(sheet, [[at + shift, -14], [at + shift + 7, -23]]);
-    line(sheet, [[at + shift + 3, -22], [at + shift + 7, -23], [at + shift + 7, -19]]);
+    line(sheet, [
+      [at + shift, -14],
+      [at + shift + 7, -23],
+    ]);
+    line(sheet, [
+      [at + shift + 3, -22],
+      [at + shift + 7, -23],
+      [at + shift + 7, -19],
+    ]);
   }
 }

@@ -15,7 +15,9 @@ export function drawStrip(sheet: Sheet, strip: PulseStripData, box: Box): void {
     box.y + (1 - y) * box.height,
   ];
   const trace = (points: [number, number][]) => {
-    points.forEach((point, k) => (k === 0 ? sheet.moveTo(...at(point)) : sheet.lineTo(...at(point))));
+    points.forEach((point, k) =>
+      k === 0 ? sheet.moveTo(...at(point)) : sheet.lineTo(...at(point)),
+    );
   };
   sheet.save();
   trace(strip.output);
@@ -26,7 +28,10 @@ export function drawStrip(sheet: Sheet, strip: PulseStripData, box: Box): void {
   sheet.lineWidth(1.4).strokeColor(ink.spruce).stroke();
   for (const level of strip.thresholds) {
     const [, y] = at([0, level]);
-    sheet.moveTo(box.x, y).lineTo(box.x + box.width, y).dash(1.5, { space: 3 });
+    sheet
+      .moveTo(box.x, y)
+      .lineTo(box.x + box.width, y)
+      .dash(1.5, { space: 3 });
     sheet.lineWidth(0.5).strokeColor(ink.soft).stroke().undash();
   }
   trace(strip.capacitor);

@@ -36,7 +36,8 @@ function subsetOf(character: string): Subset {
 }
 
 /** The font library cannot measure an empty glyph, so on paper the wider no-break space stands in. */
-const onPaper = (text: string) => text.replaceAll('\u202f', '\u00a0').replaceAll('\u03bc', '\u00b5');
+const onPaper = (text: string) =>
+  text.replaceAll('\u202f', '\u00a0').replaceAll('\u03bc', '\u00b5');
 
 /** Splits a text into runs that one font file can draw. */
 export function fontRuns(text: string): { subset: Subset; text: string }[] {

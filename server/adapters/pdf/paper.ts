@@ -4,7 +4,14 @@ import { fontFile, fontRuns, type Weight } from './fonts.ts';
 export type Sheet = PDFKit.PDFDocument;
 
 /** Ink that survives a black-and-white printer. */
-export const ink = { text: '#1E2A2E', soft: '#54605F', line: '#B9AE97', spruce: '#0E5C50', slate: '#4A5A86', brick: '#A8321F' };
+export const ink = {
+  text: '#1E2A2E',
+  soft: '#54605F',
+  line: '#B9AE97',
+  spruce: '#0E5C50',
+  slate: '#4A5A86',
+  brick: '#A8321F',
+};
 
 /** A4 by default; what is drawn stays inside an area that US Letter also holds. */
 export const area = { left: 44, right: 551, top: 44, bottom: 742 };
@@ -13,7 +20,12 @@ export const area = { left: 44, right: 551, top: 44, bottom: 742 };
 export function openSheet(title: string): Sheet {
   return new PDFDocument({
     size: 'A4',
-    margins: { left: area.left, right: 595 - area.right, top: area.top, bottom: 842 - area.bottom - 30 },
+    margins: {
+      left: area.left,
+      right: 595 - area.right,
+      top: area.top,
+      bottom: 842 - area.bottom - 30,
+    },
     bufferPages: true,
     lang: 'en',
     displayTitle: true,

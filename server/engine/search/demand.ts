@@ -53,5 +53,7 @@ export function demandMakeable(
   quantity: number,
 ): boolean {
   const demand = demandOf(parts);
-  return parts.every((part) => part === null || part.available >= quantity * taken(demand, part.id));
+  return parts.every(
+    (part) => part === null || part.available >= quantity * taken(demand, part.id),
+  );
 }

@@ -61,11 +61,24 @@ export function findPacks(
     'best-value': findBestValue(aimed, tables, brief),
     steadiest: findSteadiest(aimed, tables, brief),
   };
-  const packs = arrange(winners, rank, closest, limit).map((candidate) => promise(candidate, brief));
+  const packs = arrange(winners, rank, closest, limit).map((candidate) =>
+    promise(candidate, brief),
+  );
   for (const pack of packs) {
     pack.wins = (Object.keys(winners) as Rank[]).filter((name) => isSamePack(winners[name], pack));
   }
   return { packs, considered };
+}
+
+/** The steadiest pack alone, with its promise; null when no frame of the shelf can run the brief. */
+export function findSteadiestPack(
+  shelf: Shelf,
+  brief: SearchBrief,
+  tables: TimingTables = formTimingTables(shelf.resistors),
+): RankedPack | null {
+  const aimed = framesFor(shelf, brief).map((frame) => aimFrame(frame, brief));
+  const steadiest = findSteadiest(aimed, tables, brief);
+  return steadiest === null ? null : { ...promise(steadiest, brief), wins: ['steadiest'] };
 }
 
 /** The winner of the asked rank first, then the other winners, then varied close packs. */
@@ -78,7 +91,11 @@ function arrange(
   const order: Rank[] = [rank, 'best-value', 'closest', 'steadiest'];
   const chosen: Candidate[] = [];
   const add = (candidate: Candidate | null) => {
-    if (candidate && chosen.length < limit && !chosen.some((other) => isSamePack(other, candidate))) {
+    if (
+      candidate &&
+      chosen.length < limit &&
+      !chosen.some((other) => isSamePack(other, candidate))
+    ) {
       chosen.push(candidate);
     }
   };

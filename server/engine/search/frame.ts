@@ -45,7 +45,10 @@ export function framesFor(shelf: Shelf, brief: SearchBrief): Frame[] {
       if (!demandMakeable(fixed, brief.quantity)) continue;
       const demand = demandOf(fixed);
       const minTimingOhms = lowestTimingOhms(comparator, pullUp?.ohms ?? null);
-      const fixedPrice = fixed.reduce((sum, part) => sum + (part?.priceMinor ?? 0), comparator.priceMinor);
+      const fixedPrice = fixed.reduce(
+        (sum, part) => sum + (part?.priceMinor ?? 0),
+        comparator.priceMinor,
+      );
       for (const capacitor of capacitors) {
         const priceMinor = fixedPrice + capacitor.priceMinor;
         frames.push({
@@ -104,7 +107,9 @@ export function frameCircuit(frame: Frame, brief: SearchBrief, timingOhms = 1): 
     capacitor: {
       farads: capacitor.farads,
       leakageOhms:
-        capacitor.insulationSeconds === null ? null : capacitor.insulationSeconds / capacitor.farads,
+        capacitor.insulationSeconds === null
+          ? null
+          : capacitor.insulationSeconds / capacitor.farads,
       leakageAmps: capacitor.leakageAmps,
     },
     comparator: {

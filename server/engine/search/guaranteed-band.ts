@@ -107,7 +107,9 @@ function passiveCorner(
   const { r1, r2, r3 } = frame.thresholds;
   const part = frame.capacitor;
   const capacitorTolerance =
-    part.tolerance + Math.abs(part.temperatureCoefficientPerKelvin) * kelvin + part.temperatureSpread;
+    part.tolerance +
+    Math.abs(part.temperatureCoefficientPerKelvin) * kelvin +
+    part.temperatureSpread;
   const circuit = frameCircuit(frame, brief, timingCorner(candidate, kelvin, sign));
   circuit.supplyVolts = shared.supplyVolts;
   circuit.r1Ohms = r1.ohms * (1 + sign * widenedResistor(r1, kelvin));

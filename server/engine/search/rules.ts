@@ -43,8 +43,7 @@ export function comparatorSuits(part: StockedComparator, brief: SearchBrief): bo
     part.minSupplyVolts <= brief.minSupplyVolts &&
     part.maxSupplyVolts >= brief.maxSupplyVolts &&
     delays * brief.targetHz <= limits.maxDelayShare &&
-    (brief.load === null ||
-      (part.output === 'push-pull' && part.maxOutputAmps >= brief.load.amps))
+    (brief.load === null || (part.output === 'push-pull' && part.maxOutputAmps >= brief.load.amps))
   );
 }
 
@@ -108,7 +107,10 @@ export function nearestResistor(
   for (const part of resistors) {
     if (!passes(part)) continue;
     const distance = Math.abs(Math.log(part.ohms / idealOhms));
-    if (distance < bestDistance - 1e-12 || (distance <= bestDistance + 1e-12 && isBefore(part, best))) {
+    if (
+      distance < bestDistance - 1e-12 ||
+      (distance <= bestDistance + 1e-12 && isBefore(part, best))
+    ) {
       best = part;
       bestDistance = distance;
     }
@@ -118,5 +120,7 @@ export function nearestResistor(
 
 function isBefore(part: StockedResistor, best: StockedResistor | null): boolean {
   if (best === null) return true;
-  return part.priceMinor < best.priceMinor || (part.priceMinor === best.priceMinor && part.id < best.id);
+  return (
+    part.priceMinor < best.priceMinor || (part.priceMinor === best.priceMinor && part.id < best.id)
+  );
 }

@@ -60,11 +60,16 @@ function shiftedSets(
   brief: SearchBrief,
 ): ThresholdSet[] {
   const usable = (part: StockedResistor) =>
-    part.tolerance <= limits.thresholdTolerance * (1 + 1e-9) && part.available >= 3 * brief.quantity;
+    part.tolerance <= limits.thresholdTolerance * (1 + 1e-9) &&
+    part.available >= 3 * brief.quantity;
   const sets: { set: ThresholdSet; miss: number }[] = [];
   for (const r3 of resistors) {
     if (!usable(r3) || r3.ohms > 2 * idealOhms || r3.ohms < idealOhms / 2) continue;
-    const r1 = nearestResistor(resistors, r3.ohms * Math.expm1((1 - brief.duty) * swingLog), usable);
+    const r1 = nearestResistor(
+      resistors,
+      r3.ohms * Math.expm1((1 - brief.duty) * swingLog),
+      usable,
+    );
     const r2 = nearestResistor(resistors, r3.ohms * Math.expm1(brief.duty * swingLog), usable);
     if (r1 === null || r2 === null) continue;
     const set = { r1, r2, r3 };

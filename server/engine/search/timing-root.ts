@@ -24,7 +24,9 @@ export function timingRoot(prepared: PreparedSingle, periodSeconds: number): num
   let side = 0;
   for (let k = 0; k < iterationsAtMost && high - low > 1e-13; k += 1) {
     const slope = highExcess - lowExcess;
-    let middle = Number.isFinite(slope) ? high - (highExcess * (high - low)) / slope : (low + high) / 2;
+    let middle = Number.isFinite(slope)
+      ? high - (highExcess * (high - low)) / slope
+      : (low + high) / 2;
     if (!(middle > low && middle < high)) middle = (low + high) / 2;
     const value = excess(middle);
     if (value === 0) return Math.exp(middle);

@@ -1,0 +1,42 @@
+import type { DeskOrdersPage } from '../contracts/desk.ts';
+import type { OrderStatus } from '../contracts/orders.ts';
+import { money } from '../domain/money.ts';
+import type { Deps } from '../ports.ts';
+import { linesOfOrders, listOrders } from '../store/orders.ts';
+import { sentenceOfLines } from './view-order.ts';
+
+/** A page of orders, newest first. */
+export async function listDeskOrders(
+  deps: Pick<Deps, 'db'>,
+  filter: {
+    search?: string | undefined;
+    status?: OrderStatus | undefined;
+    page: number;
+    pageSize: number;
+  },
+): Promise<DeskOrdersPage> {
+  const { status, ...rest } = filter;
+  const { orders, total } = await listOrders(deps.db, {
+    ...rest,
+    ...(status ? { statuses: [status] } : {}),
+    order: 'newest',
+  });
+  const lines = await linesOfOrders(
+    deps.db,
+    orders.map((order) => order.id),
+  );
+  const items = orders.map((order) => {
+    const own = lines.filter((line) => line.orderId === order.id);
+    return {
+      ref: order.ref,
+      status: order.status,
+      placedAt: order.placedAt.toISOString(),
+      email: order.email,
+      name: order.shipTo.name,
+      kits: own.reduce((sum, line) => sum + line.quantity, 0),
+      total: money(order.totalMinor),
+      sentence: sentenceOfLines(own),
+    };
+  });
+  return { items, page: filter.page, pageSize: filter.pageSize, total };
+}
