@@ -92,6 +92,7 @@ function Packs({ answer }: { answer: SolveResponse }) {
   if (front.length === 0) return null;
   return (
     <>
+      <h2 className="sr-only">Packs that hang first</h2>
       <Rail label="Packs that hang first">
         {front.map((pack, index) => (
           <RailHook key={pack.token}>

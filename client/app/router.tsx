@@ -27,12 +27,8 @@ const pages: RouteObject[] = [
   page(paths.help.pattern, () => import('./routes/help.tsx')),
   page(paths.terms.pattern, () => import('./routes/terms.tsx')),
   page(paths.privacy.pattern, () => import('./routes/privacy.tsx')),
-  page(paths.bench.pattern, async () => ({
-    Component: (await import('../features/bench/bench-routes.tsx')).BenchRoutes,
-  })),
-  page(paths.desk.pattern, async () => ({
-    Component: (await import('../features/desk/desk-routes.tsx')).DeskRoutes,
-  })),
+  page(paths.bench.pattern, () => import('./routes/bench.tsx')),
+  page(paths.desk.pattern, () => import('./routes/desk.tsx')),
   page('*', () => import('./routes/not-found.tsx')),
 ];
 

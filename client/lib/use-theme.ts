@@ -1,4 +1,4 @@
-import { useSyncExternalStore } from 'react';
+import { useLayoutEffect, useSyncExternalStore } from 'react';
 import { z } from 'zod';
 
 const key = 'tockwell-theme';
@@ -31,9 +31,35 @@ export function chooseTheme(theme: Theme): void {
   } catch {
     // Storage may be refused; the choice then simply is not remembered.
   }
-  for (const listener of listeners) listener();
+  tellListeners();
 }
 
 export function useTheme(): Theme {
   return useSyncExternalStore(subscribe, currentTheme);
+}
+
+function wasChosen(): boolean {
+  try {
+    return themeSchema.safeParse(localStorage.getItem(key)).success;
+  } catch {
+    return false;
+  }
+}
+
+function tellListeners(): void {
+  for (const listener of listeners) listener();
+}
+
+/** Night while this page is open, for as long as the person has not chosen otherwise. */
+export function useNightByDefault(): void {
+  useLayoutEffect(() => {
+    if (wasChosen()) return undefined;
+    document.documentElement.dataset.theme = 'dark';
+    tellListeners();
+    return () => {
+      if (wasChosen()) return;
+      delete document.documentElement.dataset.theme;
+      tellListeners();
+    };
+  }, []);
 }

@@ -32,7 +32,7 @@ export function Notice(props: {
     >
       <Sign aria-hidden="true" className={clsx('mt-0.5 size-5 shrink-0', tone.iconClass)} />
       <div className="min-w-0">
-        {props.title !== undefined && <p className="font-heavy">{props.title}</p>}
+        {props.title !== undefined && <div className="font-heavy">{props.title}</div>}
         {props.children !== undefined && <div>{props.children}</div>}
       </div>
     </div>

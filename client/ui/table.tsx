@@ -1,5 +1,6 @@
 import { clsx } from 'clsx';
 import type { ReactNode } from 'react';
+import { useOverflow } from '../lib/use-overflow.ts';
 
 export interface Column<Row> {
   key: string;
@@ -9,6 +10,8 @@ export interface Column<Row> {
   /** The cell that names its row. */
   isRowHead?: boolean;
   className?: string;
+  /** Where this column can be sorted: how it is sorted now. */
+  sorted?: 'ascending' | 'descending' | 'none';
 }
 
 /** A ruled table; it scrolls inside itself, never the page. */
@@ -21,8 +24,14 @@ export function Table<Row>(props: {
   rowKey: (row: Row) => string;
   rowClass?: (row: Row) => string | undefined;
 }) {
+  const [box, scrolls] = useOverflow<HTMLDivElement>();
   return (
-    <div className="overflow-x-auto" tabIndex={0} role="region" aria-label={props.caption}>
+    <div
+      ref={box}
+      className="overflow-x-auto"
+      {...(scrolls ? { role: 'region', 'aria-label': props.caption } : {})}
+      tabIndex={scrolls ? 0 : undefined}
+    >
       <table className="w-full border-collapse text-left">
         <caption
           className={props.captionHidden === false ? 'pb-2 text-left font-strong' : 'sr-only'}
@@ -35,6 +44,7 @@ export function Table<Row>(props: {
               <th
                 key={column.key}
                 scope="col"
+                aria-sort={column.sorted}
                 className={clsx(
                   'py-2 pr-4 font-strong last:pr-0',
                   column.align === 'end' && 'text-right',

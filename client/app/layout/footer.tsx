@@ -46,7 +46,7 @@ export function Footer() {
         </ul>
         <div>
           <ThemeSwitch />
-          {shop?.mailPageUrl != null && (
+          {typeof shop?.mailPageUrl === 'string' && (
             <p>
               <a className={linkClass} href={shop.mailPageUrl}>
                 Caught mail

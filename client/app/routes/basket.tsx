@@ -16,7 +16,9 @@ export function Component() {
   return (
     <Page>
       {basket.isPending && <Waiting words="Fetching your basket" />}
-      {basket.isError && <ErrorPanel error={basket.error} onRetry={() => void basket.refetch()} />}
+      {basket.isError && (
+        <ErrorPanel isPage error={basket.error} onRetry={() => void basket.refetch()} />
+      )}
       {basket.data !== undefined && <BasketView basket={basket.data} />}
     </Page>
   );

@@ -22,7 +22,7 @@ export function Component() {
       {sheet.isPending && <Waiting words="Fetching the build sheet" />}
       {sheet.isError && (
         <div className="pt-10">
-          <ErrorPanel error={sheet.error} onRetry={() => void sheet.refetch()} />
+          <ErrorPanel isPage error={sheet.error} onRetry={() => void sheet.refetch()} />
         </div>
       )}
       {sheet.data !== undefined && (

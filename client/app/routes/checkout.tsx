@@ -17,10 +17,11 @@ import { paths } from '../paths.ts';
 /** What a signed-in buyer need not type again: name, e-mail, and where the last order went. */
 function useKnownBuyer(): KnownBuyer | undefined {
   const me = useSession();
-  const orders = useQuery({ ...myOrdersOptions(1), enabled: me != null });
+  const isSignedIn = me !== null && me !== undefined;
+  const orders = useQuery({ ...myOrdersOptions(1), enabled: isSignedIn });
   const lastRef = orders.data?.items[0]?.ref ?? '';
   const last = useQuery({ ...orderOptions(lastRef, null), enabled: lastRef !== '' });
-  if (me == null) return undefined;
+  if (me === null || me === undefined) return undefined;
   return { email: me.email, name: me.name, address: last.data?.shippingAddress };
 }
 
@@ -38,7 +39,7 @@ export function Component() {
   if (basket.isError) {
     return (
       <Page className="pt-10">
-        <ErrorPanel error={basket.error} onRetry={() => void basket.refetch()} />
+        <ErrorPanel isPage error={basket.error} onRetry={() => void basket.refetch()} />
       </Page>
     );
   }

@@ -28,6 +28,7 @@ export function Component() {
       {order.isError && (
         <div className="pt-10">
           <ErrorPanel
+            isPage
             title="This order could not be opened"
             error={order.error}
             onRetry={() => void order.refetch()}

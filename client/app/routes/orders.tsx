@@ -46,7 +46,7 @@ function Orders() {
   if (orders.isPending) return <Waiting words="Opening the ledger" />;
   if (isProblem(orders.error) && orders.error.status === 401) return <Guest />;
   if (orders.isError)
-    return <ErrorPanel error={orders.error} onRetry={() => void orders.refetch()} />;
+    return <ErrorPanel isPage error={orders.error} onRetry={() => void orders.refetch()} />;
   const { items, total, pageSize } = orders.data;
   if (total === 0) {
     return (

@@ -31,6 +31,7 @@ export function Component() {
       {page.isPending && <Waiting words="Fetching the pack" />}
       {page.isError && (
         <ErrorPanel
+          isPage
           title="This pack is not to be had"
           error={page.error}
           onRetry={() => void page.refetch()}

@@ -38,7 +38,7 @@ export function Component() {
       {order.isPending && <Waiting words="Opening the order" />}
       {order.isError && order.data === undefined && (
         <div className="pt-10">
-          <ErrorPanel error={order.error} onRetry={() => void order.refetch()} />
+          <ErrorPanel isPage error={order.error} onRetry={() => void order.refetch()} />
         </div>
       )}
       <div aria-live="polite">

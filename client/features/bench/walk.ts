@@ -1,0 +1,65 @@
+import type { BenchOrder, Pick } from '../../../server/contracts/bench.ts';
+import type { PackPart } from '../../../server/contracts/packs.ts';
+import type { DrawablePart } from '../../ui/part-drawing.tsx';
+
+export type Stage = 'unclaimed' | 'elsewhere' | 'walk' | 'bag' | 'ship' | 'shipped';
+
+export function isTaken(pick: Pick): boolean {
+  return pick.picked >= pick.quantity;
+}
+
+/** Where this order stands for the packer who looks at it. */
+export function stageOf(order: BenchOrder): Stage {
+  if (order.status === 'shipped') return 'shipped';
+  if (order.claimedBy === null || order.status === 'paid') return 'unclaimed';
+  if (!order.mine) return 'elsewhere';
+  if (order.status === 'packed') return 'ship';
+  return order.picks.every(isTaken) ? 'bag' : 'walk';
+}
+
+/** The next stop to make: the first open one after the given stop, then from the start again. */
+export function nextStop(picks: readonly Pick[], after: string | null): Pick | null {
+  const from = after === null ? 0 : picks.findIndex((pick) => pick.id === after) + 1;
+  const round = [...picks.slice(from), ...picks.slice(0, from)];
+  return round.find((pick) => !isTaken(pick)) ?? null;
+}
+
+/** The stop that "undo" takes back: the last one made here, else the last of the walk that is done. */
+export function lastStop(picks: readonly Pick[], made: readonly string[]): Pick | null {
+  const taken = picks.filter(isTaken);
+  const recent = made.findLast((id) => taken.some((pick) => pick.id === id));
+  return taken.find((pick) => pick.id === recent) ?? taken.at(-1) ?? null;
+}
+
+/** The order as it will be once this pick is known to the server. */
+export function withPicked(order: BenchOrder, id: string, quantity: number): BenchOrder {
+  const picks = order.picks.map((pick) =>
+    pick.id === id ? { ...pick, picked: quantity } : pick,
+  );
+  return { ...order, picks };
+}
+
+export type Scan = { kind: 'right' } | { kind: 'empty' } | { kind: 'wrong'; sentence: string };
+
+const plain = (code: string) => code.toUpperCase().replaceAll(/[^A-Z0-9]/g, '');
+const names = (pick: Pick, code: string) => plain(pick.bin) === code || plain(pick.sku) === code;
+
+/** What a scanned or typed code means at this stop; scanners differ in case, spaces and dashes. */
+export function readScan(text: string, stop: Pick, picks: readonly Pick[]): Scan {
+  const code = plain(text);
+  if (code === '') return { kind: 'empty' };
+  if (names(stop, code)) return { kind: 'right' };
+  const other = picks.findIndex((pick) => names(pick, code));
+  const said = text.trim().slice(0, 40);
+  const found =
+    other >= 0 ? `${said} is stop ${other + 1} of this walk.` : `${said} is not on this walk.`;
+  return { kind: 'wrong', sentence: `${found} This stop wants bin ${stop.bin} or ${stop.sku}.` };
+}
+
+/** The pick with what the lines know of its looks. */
+export function drawableOf(pick: Pick, lines: BenchOrder['lines']): DrawablePart {
+  const looks: PackPart | undefined = lines
+    .flatMap((line) => line.parts)
+    .find((part) => part.sku === pick.sku);
+  return { ...looks, kind: pick.kind, marking: pick.marking };
+}
