@@ -29,8 +29,7 @@ export function Table<Row>(props: {
     <div
       ref={box}
       className="overflow-x-auto"
-      {...(scrolls ? { role: 'region', 'aria-label': props.caption } : {})}
-      tabIndex={scrolls ? 0 : undefined}
+      {...(scrolls ? { role: 'region', 'aria-label': props.caption, tabIndex: 0 } : {})}
     >
       <table className="w-full border-collapse text-left">
         <caption

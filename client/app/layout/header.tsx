@@ -43,7 +43,7 @@ export function Header() {
           <span className="text-title font-heavy tracking-tight">Tockwell</span>
         </Link>
         <nav aria-label="Main" className="-mx-1.5 max-sm:w-full">
-          <ul className="flex flex-wrap gap-x-1 sm:gap-x-3">
+          <ul className="flex flex-wrap gap-x-0.5 sm:gap-x-3">
             {entries.map((entry) => (
               <li
                 key={entry.to}
@@ -54,7 +54,7 @@ export function Header() {
                   end={entry.end}
                   className={({ isActive }) =>
                     clsx(
-                      'inline-flex min-h-11 items-center border-b-[3px] px-1.5 pt-[3px]',
+                      'inline-flex min-h-11 items-center border-b-[3px] px-1 pt-[3px] sm:px-1.5',
                       isActive
                         ? 'border-spruce font-heavy text-ink'
                         : 'border-transparent text-soft hover:border-line hover:text-ink',

@@ -54,22 +54,9 @@ function PackView({ page }: { page: PackPage }) {
       <div className="mb-8 empty:hidden">
         <GraveCautions cautions={pack.cautions} />
       </div>
-      <div className="grid items-start gap-x-12 gap-y-10 lg:grid-cols-[1.2fr_1fr]">
-        <div className="space-y-8">
-          <CircuitPanel drawing={page.circuit} lit={litSet} onLight={setLit} />
-          <section aria-labelledby="parts">
-            <h2 id="parts" className="mb-3 text-title font-strong">
-              What is in the bag
-            </h2>
-            <PartsTable
-              parts={pack.parts}
-              lit={litSet}
-              onLight={setLit}
-              caption="Parts of this pack"
-            />
-          </section>
-        </div>
-        <div className="space-y-9">
+      <div className="grid items-start gap-x-12 gap-y-10 lg:grid-cols-[1.2fr_1fr] lg:grid-rows-[auto_1fr]">
+        <CircuitPanel drawing={page.circuit} lit={litSet} onLight={setLit} />
+        <div className="space-y-9 lg:col-start-2 lg:row-span-2 lg:row-start-1">
           <PromiseCard brief={brief} pack={pack} identifier={page.identifier} />
           <Buy page={page} />
           <PriceLines page={page} />
@@ -78,6 +65,17 @@ function PackView({ page }: { page: PackPage }) {
             <LampPreview frequencyHz={pack.promise.frequencyHz} duty={pack.promise.duty} />
           )}
         </div>
+        <section aria-labelledby="parts">
+          <h2 id="parts" className="mb-3 text-title font-strong">
+            What is in the bag
+          </h2>
+          <PartsTable
+            parts={pack.parts}
+            lit={litSet}
+            onLight={setLit}
+            caption="Parts of this pack"
+          />
+        </section>
       </div>
       <div className="mt-20 space-y-16">
         <Causes page={page} />

@@ -33,9 +33,7 @@ export function lastStop(picks: readonly Pick[], made: readonly string[]): Pick 
 
 /** The order as it will be once this pick is known to the server. */
 export function withPicked(order: BenchOrder, id: string, quantity: number): BenchOrder {
-  const picks = order.picks.map((pick) =>
-    pick.id === id ? { ...pick, picked: quantity } : pick,
-  );
+  const picks = order.picks.map((pick) => (pick.id === id ? { ...pick, picked: quantity } : pick));
   return { ...order, picks };
 }
 
