@@ -71,7 +71,7 @@ async function buildClient(name) {
     process.execPath,
     // prettier-ignore
     [inProject('node_modules/vite/bin/vite.js'), 'build', '--outDir', folder, '--emptyOutDir', '--logLevel', 'warn'],
-    { cwd: inProject() },
+    { cwd: inProject(), env: { ...process.env, NO_COLOR: '1', FORCE_COLOR: '0' } },
   );
   return folder;
 }

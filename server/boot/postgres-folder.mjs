@@ -59,7 +59,7 @@ export function majorOfFolder(folder) {
 }
 
 /** Makes an empty cluster under another name first, so that half a cluster is never taken for one. */
-export async function initialise(folder, binaries, account, password) {
+export async function initialise(folder, binaries, account, password, hasty) {
   if (majorOfFolder(folder)) return;
   const unfinished = `${folder}.unfinished`;
   rmSync(unfinished, { recursive: true, force: true });
@@ -72,7 +72,7 @@ export async function initialise(folder, binaries, account, password) {
       `Check that there is room on the disk and that ${path.dirname(folder)} may be written.`,
       path.join(binaries, 'initdb'),
       // prettier-ignore
-      ['-D', unfinished, '-U', 'postgres', '-E', 'UTF8', '--locale=C.UTF-8', '-A', 'scram-sha-256', `--pwfile=${passwordFile}`, '--no-instructions'],
+      ['-D', unfinished, '-U', 'postgres', '-E', 'UTF8', '--locale=C.UTF-8', '-A', 'scram-sha-256', `--pwfile=${passwordFile}`, '--no-instructions', ...(hasty ? ['--no-sync'] : [])],
       asAccount(account),
     ),
   );

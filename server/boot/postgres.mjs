@@ -30,7 +30,7 @@ export async function startPostgres(children, dataDir, { throwAway = false } = {
   const account = postgresAccount();
   const folder = chooseFolder(dataDir, account);
   const binaries = await ensurePostgresBinaries(majorOfFolder(folder));
-  await initialise(folder, binaries, account, password);
+  await initialise(folder, binaries, account, password, throwAway);
   await clearLeftovers(folder);
 
   const logFile = path.join(dataDir, 'logs', 'postgres.log');

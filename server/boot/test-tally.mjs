@@ -14,3 +14,9 @@ export function tallyOf(report, exitCode) {
 function anyFailed(assertionResults = []) {
   return assertionResults.some(({ status }) => status === 'failed');
 }
+
+/** True unless the arguments name tests that all do without the built shop. */
+export function needsBuild(asked) {
+  const places = asked.filter((argument) => !argument.startsWith('-'));
+  return places.length === 0 || places.some((place) => place.includes('e2e'));
+}

@@ -6,8 +6,8 @@ import { launch } from './launch.mjs';
 import { startPostgres } from './postgres.mjs';
 import { inProject, readJson } from './project.mjs';
 import { runCommand } from './run-command.mjs';
-import { say } from './step.mjs';
-import { tallyOf } from './test-tally.mjs';
+import { say, tellFailure } from './step.mjs';
+import { needsBuild, tallyOf } from './test-tally.mjs';
 import { throwAwayFolder } from './throw-away.mjs';
 
 const asked = process.argv.slice(2);
@@ -19,9 +19,13 @@ await launch(async (children) => {
   try {
     const { url } = await startPostgres(children, dataDir, { throwAway: true });
     const CHROMIUM_PATH = await ensureChromium();
-    await build();
+    if (needsBuild(asked)) await build();
     const env = { ...process.env, TEST_DATABASE_URL: `${url}/postgres`, CHROMIUM_PATH };
     return watching ? await watch(env) : await runOnce(env, path.join(dataDir, 'results.json'));
+  } catch (error) {
+    tellFailure(error);
+    say('0 passed, 1 failed');
+    return 1;
   } finally {
     await children.stopAll();
     rmSync(dataDir, { recursive: true, force: true });

@@ -27,7 +27,7 @@ const numberSign: FieldSign = {
 const expirySign: FieldSign = {
   field: 'expiry',
   label: 'Expiry',
-  hint: 'Month and year, such as 09 / 31',
+  hint: 'Such as 09/31',
   attributes: html`inputmode="numeric" autocomplete="cc-exp" maxlength="9"`,
 };
 const codeSign: FieldSign = {

@@ -60,7 +60,7 @@ function readExpiry(text: string): { month: number; year: number } | null {
 
 function expiryFault(expiry: { month: number; year: number } | null, today: Date) {
   if (!expiry || expiry.month < 1 || expiry.month > 12) {
-    return 'Enter month and year, such as 09 / 31.';
+    return 'Enter month and year, such as 09/31.';
   }
   // A card is good to the end of its month.
   const end = Date.UTC(expiry.year, expiry.month, 1);

@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest';
 import { cleanDump, firstDifference } from '../../server/boot/schema-text.mjs';
-import { tallyOf } from '../../server/boot/test-tally.mjs';
+import { needsBuild, tallyOf } from '../../server/boot/test-tally.mjs';
 
 describe('cleanDump', () => {
   it('drops comments, settings and tokens, which differ from one run to the next', () => {
@@ -52,5 +52,17 @@ describe('tallyOf', () => {
     ],
   ])('when %s', (_what, report, exitCode, [passed, failed]) => {
     expect(tallyOf(report, exitCode)).toEqual({ passed, failed });
+  });
+});
+
+describe('needsBuild', () => {
+  it.each([
+    [[], true],
+    [['tests/engine'], false],
+    [['tests/engine', 'tests/e2e/maker.test.ts'], true],
+    [['--coverage'], true],
+    [['--coverage', 'tests/domain'], false],
+  ])('for %j is %s', (asked, needed) => {
+    expect(needsBuild(asked)).toBe(needed);
   });
 });
