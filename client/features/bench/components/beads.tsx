@@ -6,7 +6,7 @@ export function Beads({ stops }: { stops: number }) {
   const shown = Math.min(stops, most);
   const width = Math.max(0, shown - 1) * step + 12;
   return (
-    <span className="ml-3 inline-flex items-center gap-2 whitespace-nowrap">
+    <span className="inline-flex items-center gap-2 whitespace-nowrap">
       <svg aria-hidden="true" width={width} height="12" className="shrink-0">
         <path d={`M4 6H${width - 4}`} className="stroke-soft" strokeWidth="1.5" />
         {Array.from({ length: shown }, (_, index) => (

@@ -13,7 +13,11 @@ export function BenchFrame(props: {
 }) {
   return (
     <div className="grid grid-cols-[3.75rem_1fr] lg:grid-cols-[15rem_1fr] print:block">
-      <div className="no-print border-r border-line py-4 pr-2 lg:py-6 lg:pr-4">{props.line}</div>
+      <div className="no-print border-r border-line">
+        <div className="sticky top-0 max-h-dvh [scrollbar-width:thin] overflow-y-auto py-4 pr-2 lg:py-6 lg:pr-4">
+          {props.line}
+        </div>
+      </div>
       <div className="min-w-0 py-5 pl-4 sm:pl-8 lg:py-6 lg:pl-12">
         <div className="no-print flex flex-wrap justify-between gap-x-6 text-soft">
           <span>

@@ -31,8 +31,10 @@ export function QueueLine({ item, isLead }: { item: QueueItem; isLead: boolean }
       </div>
       <div className="min-w-0">
         <h2 className="text-title leading-tight font-heavy">{item.ref}</h2>
-        <p className="text-soft">
-          {item.kits === 1 ? 'one kit' : `${item.kits} kits`} · {item.shippingMethod}
+        <p className="flex flex-wrap gap-x-4 text-soft">
+          <span>
+            {item.kits === 1 ? 'one kit' : `${item.kits} kits`} · {item.shippingMethod}
+          </span>
           <Beads stops={item.stops} />
         </p>
         <p className="mt-1 max-w-prose">{bindUnits(item.sentence)}</p>

@@ -42,7 +42,7 @@ export function QueuePage() {
 }
 
 function ordersWords(count: number): string {
-  return count === 1 ? 'One order' : `${count} orders`;
+  return count === 1 ? 'one order' : `${count} orders`;
 }
 
 function lateWords(late: number): string {
@@ -62,8 +62,7 @@ function QueueOpening({ queue }: { queue: QueueData }) {
   const next = queue.items.find((item) => !item.late);
   return (
     <Opening>
-      <strong>{ordersWords(queue.total)}</strong> {queue.total === 1 ? 'waits' : 'wait'} for the
-      bench
+      The queue holds <strong>{ordersWords(queue.total)}</strong>
       {late > 0 && (
         <>
           , <strong>{lateWords(late)}</strong>
@@ -72,7 +71,7 @@ function QueueOpening({ queue }: { queue: QueueData }) {
       .{' '}
       {next !== undefined && (
         <>
-          Next parcel leaves at <strong>{shipByWords(next.shipBy, new Date())}</strong>.
+          The next parcel leaves at <strong>{shipByWords(next.shipBy, new Date())}</strong>.
         </>
       )}
     </Opening>

@@ -8,6 +8,8 @@ import { drawableOf, isTaken, readScan } from '../walk.ts';
 import { MarkingView } from './marking-view.tsx';
 import { ScanField } from './scan-field.tsx';
 
+const largeClass = 'min-h-20 text-title max-sm:w-full sm:min-w-88';
+
 export interface StopViewProps {
   stop: Pick;
   order: BenchOrder;
@@ -39,15 +41,20 @@ export function StopView(props: StopViewProps) {
       <div className="mt-5 flex flex-wrap gap-4">
         {done ? (
           <>
-            <Button size="bench" className="min-h-16 max-sm:w-full" onClick={props.onGoOn}>
+            <Button size="bench" className={largeClass} onClick={props.onGoOn}>
               {props.next === null ? 'On to the bag' : `On to ${props.next.bin}`}
             </Button>
-            <Button size="bench" look="outline" onClick={() => props.onPutBack(stop)}>
+            <Button
+              size="bench"
+              look="outline"
+              className="min-h-20"
+              onClick={() => props.onPutBack(stop)}
+            >
               Put it back
             </Button>
           </>
         ) : (
-          <Button size="bench" className="min-h-16 max-sm:w-full" onClick={props.onTake}>
+          <Button size="bench" className={largeClass} onClick={props.onTake}>
             {props.next === null ? 'Took it, close the bag' : 'Took it, next stop'}
           </Button>
         )}
@@ -59,7 +66,7 @@ export function StopView(props: StopViewProps) {
 
 function Undo({ stop, onUndo }: { stop: Pick; onUndo: (stop: Pick) => void }) {
   return (
-    <Button size="bench" look="outline" onClick={() => onUndo(stop)}>
+    <Button size="bench" look="outline" className="min-h-20" onClick={() => onUndo(stop)}>
       Undo {stop.bin}
     </Button>
   );

@@ -1,4 +1,5 @@
 import { clsx } from 'clsx';
+import { useEffect, useRef } from 'react';
 import type { Pick } from '../../../../server/contracts/bench.ts';
 import { rolesText } from '../../../ui/part-groups.ts';
 import { isTaken } from '../walk.ts';
@@ -17,10 +18,17 @@ export interface WalkLineProps {
 
 /** The walk as a vertical line: what is done, where one stands, what is to come. */
 export function WalkLine({ picks, current, end, onChoose }: WalkLineProps) {
+  const list = useRef<HTMLOListElement>(null);
+  useEffect(() => {
+    const stop = list.current?.querySelector<HTMLElement>('[aria-current]');
+    const frame = list.current?.parentElement;
+    if (stop == null || frame == null) return;
+    frame.scrollTo({ top: stop.offsetTop - (frame.clientHeight - stop.offsetHeight) / 2 });
+  }, [current, end]);
   const bagState: State = end === 'bag' ? 'now' : end === 'ahead' ? 'ahead' : 'done';
   const shipState: State = end === 'ship' ? 'now' : end === 'done' ? 'done' : 'ahead';
   return (
-    <ol aria-label="The walk">
+    <ol aria-label="The walk" ref={list}>
       {picks.map((pick) => {
         const state = pick.id === current ? 'now' : isTaken(pick) ? 'done' : 'ahead';
         return (
@@ -47,7 +55,8 @@ export function WalkLine({ picks, current, end, onChoose }: WalkLineProps) {
 }
 
 function stopWords(pick: Pick): string {
-  return `${rolesText(pick.roles)} ${pick.label}`.trim();
+  const isByRole = ['resistor', 'capacitor', 'comparator'].includes(pick.kind);
+  return isByRole ? `${rolesText(pick.roles)} ${pick.label}`.trim() : pick.label;
 }
 
 interface StopProps {
@@ -69,7 +78,10 @@ function Stop(props: StopProps) {
       <Lamp state={state} isTaken={props.isTaken} />
       <span className={clsx('min-w-0 lg:pt-0.5', state === 'now' ? 'text-ink' : 'text-soft')}>
         <span
-          className={clsx('block leading-tight', state === 'now' ? 'font-heavy' : 'font-strong')}
+          className={clsx(
+            'relative block bg-paper px-0.5 leading-tight lg:bg-transparent lg:px-0',
+            state === 'now' ? 'font-heavy' : 'font-strong',
+          )}
         >
           {props.head}
         </span>
@@ -84,7 +96,7 @@ function Stop(props: StopProps) {
         <span
           aria-hidden="true"
           className={clsx(
-            'absolute top-5 -bottom-3 left-1/2 -ml-px border-l-[3px] lg:left-5 lg:-ml-0.5',
+            'absolute top-5 -bottom-3 left-1/2 -ml-[1.5px] border-l-[3px] lg:left-[20.5px] lg:ml-0',
             props.isTaken ? 'border-spruce' : 'border-dotted border-soft',
           )}
         />
