@@ -9,6 +9,11 @@ export function keepTogether(text: string): string {
   return text.replaceAll(' ', noBreak);
 }
 
+/** A sentence that goes on inside another one starts small. */
+export function insideSentence(text: string): string {
+  return /^[A-Z][a-z ]/.test(text) ? text.charAt(0).toLowerCase() + text.slice(1) : text;
+}
+
 /** In running text: binds ± to its number, and a number to the unit after it. */
 export function bindUnits(text: string): string {
   return text

@@ -22,14 +22,20 @@ export function groupParts(parts: readonly PackPart[]): PartGroup[] {
   return groups;
 }
 
-/** "R1–R3", "R1, R4": the codes of a group in one short text. */
+function numberIn(role: string): number {
+  return Number(/^[A-Z]+(\d+)$/.exec(role)?.[1] ?? NaN);
+}
+
+/** "R1–R3", "R1–R3, R4B", "R1, R4": the codes of a group in one short text; runs of three are joined. */
 export function rolesText(roles: readonly string[]): string {
-  const [first] = roles;
-  const last = roles.at(-1);
-  const numbers = roles.map((role) => Number(/^[A-Z]+(\d+)$/.exec(role)?.[1] ?? NaN));
-  const run = numbers.every(
-    (value, index) => index === 0 || value === (numbers[index - 1] ?? NaN) + 1,
-  );
-  if (first === undefined || last === undefined || roles.length === 1) return first ?? '';
-  return run && roles.length > 2 ? `${first}–${last}` : roles.join(', ');
+  const runs: string[][] = [];
+  for (const role of roles) {
+    const run = runs.at(-1);
+    const follows = run !== undefined && numberIn(role) === numberIn(run.at(-1) ?? '') + 1;
+    if (follows) run.push(role);
+    else runs.push([role]);
+  }
+  return runs
+    .map((run) => (run.length > 2 ? `${run[0]}–${run.at(-1)}` : run.join(', ')))
+    .join(', ');
 }

@@ -52,19 +52,36 @@ export function Scale({ asked, error, low, high }: ScaleProps) {
         <circle cx={x(error)} cy="18" r="5" className="fill-spruce stroke-card" strokeWidth="2" />
       </svg>
       <div aria-hidden="true" className="relative h-5 text-small text-soft">
-        <ScaleLabel at={x(-asked) / width} words={`${minus}${percent}`} edge="start" />
-        <ScaleLabel at={0.5} words="asked" edge="middle" />
-        <ScaleLabel at={x(asked) / width} words={`+${percent}`} edge="end" />
+        {asked / reach > 0.4 ? (
+          <>
+            <ScaleLabel at={x(-asked) / width} words={`${minus}${percent}`} edge="start" />
+            <ScaleLabel at={0.5} words="asked" edge="middle" />
+            <ScaleLabel at={x(asked) / width} words={`+${percent}`} edge="end" />
+          </>
+        ) : (
+          <>
+            <ScaleLabel at={0} words={formatSignedPercent(low)} edge="first" />
+            <ScaleLabel at={0.5} words={`asked ±${percent}`} edge="middle" />
+            <ScaleLabel at={1} words={formatSignedPercent(high)} edge="last" />
+          </>
+        )}
       </div>
     </div>
   );
 }
 
-function ScaleLabel(props: { at: number; words: string; edge: 'start' | 'middle' | 'end' }) {
+const labelShifts = {
+  first: '',
+  start: '-translate-x-1/4',
+  middle: '-translate-x-1/2',
+  end: '-translate-x-3/4',
+  last: '-translate-x-full',
+};
+
+function ScaleLabel(props: { at: number; words: string; edge: keyof typeof labelShifts }) {
   const left = `${(props.at * 100).toFixed(2)}%`;
-  const shift = { start: '-translate-x-1/4', middle: '-translate-x-1/2', end: '-translate-x-3/4' };
   return (
-    <span className={`absolute whitespace-nowrap ${shift[props.edge]}`} style={{ left }}>
+    <span className={`absolute whitespace-nowrap ${labelShifts[props.edge]}`} style={{ left }}>
       {props.words}
     </span>
   );

@@ -15,7 +15,7 @@ export interface WaveformProps {
 }
 
 const height = 260;
-const frame = { left: 54, right: 12, top: 16, bottom: 34 };
+const frame = { left: 66, right: 12, top: 16, bottom: 34 };
 
 function scales(props: WaveformProps, width: number) {
   const end = Math.max(...props.output.map(([t]) => t), props.periodSeconds);

@@ -3,7 +3,7 @@ import type { BuildSheet } from '../../../server/contracts/orders.ts';
 import { sheetPdfUrl, useBuildSheet } from '../../features/build-sheet/api/build-sheet.ts';
 import type { SheetAddress } from '../../features/build-sheet/api/build-sheet.ts';
 import { SheetView } from '../../features/build-sheet/components/sheet-view.tsx';
-import { bindUnits, keepTogether } from '../../lib/spaces.ts';
+import { bindUnits, insideSentence, keepTogether } from '../../lib/spaces.ts';
 import { usePageTitle } from '../../lib/use-page-title.ts';
 import { Button, ButtonAnchor } from '../../ui/button.tsx';
 import { ErrorPanel } from '../../ui/error-panel.tsx';
@@ -44,8 +44,8 @@ function SheetHead({ sheet, address }: { sheet: BuildSheet; address: SheetAddres
         always between <strong>{text.from}</strong> and <strong>{text.to}</strong>.
       </Opening>
       <p className="-mt-4 mb-4 max-w-[60em] text-soft">
-        Build sheet for {bindUnits(sheet.sentence)}. Order{' '}
-        <Link className="link" to={paths.order.link(sheet.ref, address.token)}>
+        Build sheet for: {bindUnits(insideSentence(sheet.sentence))}. Order{' '}
+        <Link className="link whitespace-nowrap" to={paths.order.link(sheet.ref, address.token)}>
           {sheet.ref}
         </Link>
         , pack {sheet.identifier}, {sheet.kits === 1 ? 'one kit' : `${sheet.kits} kits`}.

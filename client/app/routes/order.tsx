@@ -6,7 +6,7 @@ import { OrderFacts } from '../../features/orders/components/order-facts.tsx';
 import { OrderLines } from '../../features/orders/components/order-lines.tsx';
 import { OrderSteps } from '../../features/orders/components/order-steps.tsx';
 import { PayNow } from '../../features/orders/components/pay-now.tsx';
-import { openingFor } from '../../features/orders/model.ts';
+import { openingFor, wordsForStatus } from '../../features/orders/model.ts';
 import { formatDateTime } from '../../lib/format-time.ts';
 import { usePageTitle } from '../../lib/use-page-title.ts';
 import { Button } from '../../ui/button.tsx';
@@ -82,7 +82,12 @@ function OrderView({ order, token }: { order: Order; token: string | null }) {
           </h2>
           <Ledger
             label="What happened with this order"
-            entries={order.events.map((event, index) => ({ ...event, key: `${index}` }))}
+            entries={order.events.map((event, index) => ({
+              ...event,
+              from: wordsForStatus(event.from),
+              to: wordsForStatus(event.to),
+              key: `${index}`,
+            }))}
           />
         </section>
         <Button look="outline" className="no-print" onClick={() => window.print()}>

@@ -60,22 +60,24 @@ function PackView({ page }: { page: PackPage }) {
           <PromiseCard brief={brief} pack={pack} identifier={page.identifier} />
           <Buy page={page} />
           <PriceLines page={page} />
-          <PlainCautions cautions={pack.cautions} />
           {brief.load.kind === 'led' && (
             <LampPreview frequencyHz={pack.promise.frequencyHz} duty={pack.promise.duty} />
           )}
         </div>
-        <section aria-labelledby="parts">
-          <h2 id="parts" className="mb-3 text-title font-strong">
-            What is in the bag
-          </h2>
-          <PartsTable
-            parts={pack.parts}
-            lit={litSet}
-            onLight={setLit}
-            caption="Parts of this pack"
-          />
-        </section>
+        <div className="space-y-10">
+          <section aria-labelledby="parts">
+            <h2 id="parts" className="mb-3 text-title font-strong">
+              What is in the bag
+            </h2>
+            <PartsTable
+              parts={pack.parts}
+              lit={litSet}
+              onLight={setLit}
+              caption="Parts of this pack"
+            />
+          </section>
+          <PlainCautions cautions={pack.cautions} />
+        </div>
       </div>
       <div className="mt-20 space-y-16">
         <Causes page={page} />

@@ -56,7 +56,8 @@ function Awaiting({ order }: { order: Order }) {
   return (
     <>
       <Opening>
-        Your order <strong>{order.ref}</strong> is with us. We are waiting for word of the payment.
+        Your order <strong className="whitespace-nowrap">{order.ref}</strong> is with us. We are
+        waiting for word of the payment.
       </Opening>
       {long ? (
         <div className="space-y-4">
@@ -84,8 +85,8 @@ function Confirmed({ order, token }: { order: Order; token: string | null }) {
           </>
         ) : (
           <>
-            Thank you. <strong>{order.ref}</strong> is <strong>paid</strong>, and the packers have
-            it.
+            Thank you. <strong className="whitespace-nowrap">{order.ref}</strong> is{' '}
+            <strong>paid</strong>, and the packers have it.
           </>
         )}
       </Opening>

@@ -1,58 +1,29 @@
-import { queryOptions, useQuery } from '@tanstack/react-query';
-import { deskPartsPageSchema } from '../../../server/contracts/desk.ts';
-import { formatMoney } from '../../lib/format-money.ts';
-import { request } from '../../lib/http.ts';
-import { usePageTitle } from '../../lib/use-page-title.ts';
-import { ErrorPanel } from '../../ui/error-panel.tsx';
-import { Opening, Page } from '../../ui/page.tsx';
-import { Table } from '../../ui/table.tsx';
-import { Waiting } from '../../ui/waiting.tsx';
+import { Route, Routes } from 'react-router-dom';
+import { Page } from '../../ui/page.tsx';
+import { AuditPage } from './components/audit-page.tsx';
+import { DeskNav } from './components/desk-nav.tsx';
+import { NoSuchPage } from './components/no-such-page.tsx';
+import { OrderPage } from './components/order-page.tsx';
+import { OrdersPage } from './components/orders-page.tsx';
+import { PartPage } from './components/part-page.tsx';
+import { PartsPage } from './components/parts-page.tsx';
+import { TodayPage } from './components/today-page.tsx';
+import { deskPaths } from './desk-paths.ts';
 
-const partsOptions = queryOptions({
-  queryKey: ['desk', 'parts'],
-  queryFn: ({ signal }) => request(deskPartsPageSchema, '/api/desk/parts', { signal }),
-});
-
-/** The owner's side: what lies on the shelves. */
+/** The owner's side. */
 export function DeskRoutes() {
-  usePageTitle('Desk');
-  const parts = useQuery(partsOptions);
-  if (parts.isPending) {
-    return (
-      <Page>
-        <Waiting words="Reading the shelves" />
-      </Page>
-    );
-  }
-  if (parts.isError) {
-    return (
-      <Page>
-        <ErrorPanel error={parts.error} onRetry={() => void parts.refetch()} />
-      </Page>
-    );
-  }
   return (
-    <Page>
-      <Opening>
-        The shelves hold <strong>{parts.data.total} parts</strong>.
-      </Opening>
-      <Table
-        caption="Parts"
-        rows={parts.data.items}
-        rowKey={(row) => row.id}
-        columns={[
-          { key: 'sku', head: 'Stock number', isRowHead: true, cell: (row) => row.part.sku },
-          { key: 'name', head: 'Part', cell: (row) => row.part.name },
-          { key: 'held', head: 'On hand', align: 'end', cell: (row) => row.onHand },
-          { key: 'free', head: 'Available', align: 'end', cell: (row) => row.part.available },
-          {
-            key: 'price',
-            head: 'Price',
-            align: 'end',
-            cell: (row) => formatMoney(row.part.unitPrice),
-          },
-        ]}
-      />
+    <Page className="pb-16">
+      <DeskNav />
+      <Routes>
+        <Route path={deskPaths.today.pattern} element={<TodayPage />} />
+        <Route path={deskPaths.parts.pattern} element={<PartsPage />} />
+        <Route path={deskPaths.part.pattern} element={<PartPage />} />
+        <Route path={deskPaths.orders.pattern} element={<OrdersPage />} />
+        <Route path={deskPaths.order.pattern} element={<OrderPage />} />
+        <Route path={deskPaths.audit.pattern} element={<AuditPage />} />
+        <Route path="*" element={<NoSuchPage />} />
+      </Routes>
     </Page>
   );
 }

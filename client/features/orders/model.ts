@@ -13,6 +13,12 @@ export const statusWords: Record<OrderStatus, string> = {
 
 const walk = ['awaiting_payment', 'paid', 'picking', 'packed', 'shipped'] as const;
 
+/** A status code from the ledger in words; anything else as it stands. */
+export function wordsForStatus(value: string | null): string | null {
+  if (value === null) return null;
+  return Object.hasOwn(statusWords, value) ? statusWords[value as OrderStatus] : value;
+}
+
 export interface Step {
   status: OrderStatus;
   words: string;

@@ -18,7 +18,7 @@ function percentOf(fraction: number): string {
 /** Why a tag hangs in front, and what that means. */
 export function reasonFor(pack: Pack, band: number): { title: string; meaning: string } {
   const meanings: Record<Win, string> = {
-    'best-value': `cheapest that holds ${percentOf(band)}`,
+    'best-value': `cheapest with 99${narrow}% of kits in ${percentOf(band)}`,
     closest: 'nominal nearest to the rate',
     steadiest: 'narrowest guaranteed band',
   };
@@ -55,19 +55,28 @@ export interface TagPart {
   part: PackPart;
 }
 
-/** What is drawn on a tag: the timing resistor, the capacitor and the threshold resistors. */
+const tagRoles: readonly (readonly string[])[] = [['R4', 'R4A', 'R4B'], ['C1'], ['R1', 'R2', 'R3']];
+
+/** What is drawn on a tag: the timing resistor, then the capacitor, then the threshold resistors. */
 export function tagParts(pack: Pack): TagPart[] {
-  const timing = new Set(['R4', 'R4A', 'R4B', 'C1', 'R1', 'R2', 'R3']);
-  const order = (roles: readonly string[]) =>
-    roles.some((role) => role.startsWith('R4')) ? 0 : roles.includes('C1') ? 1 : 2;
-  return groupParts(pack.parts.filter((part) => timing.has(part.role)))
-    .sort((a, b) => order(a.roles) - order(b.roles))
-    .map((group) => ({
-      key: group.key,
+  return tagRoles.flatMap((roles) =>
+    groupParts(pack.parts.filter((part) => roles.includes(part.role))).map((group) => ({
+      key: group.roles.join(),
       value: `${group.quantity > 1 ? `${group.quantity}${narrow}×${narrow}` : ''}${group.part.value.replaceAll(' ', narrow)}`,
       roles: rolesText(group.roles),
       part: group.part,
-    }));
+    })),
+  );
+}
+
+/** The share of kits inside the band; a share that only rounds to all of them is not called all. */
+export function yieldClause(pack: Pack, brief: Pick<ResolvedBrief, 'band' | 'targetHz'>): string {
+  const band = percentOf(brief.band);
+  if (bandOff(pack, brief.targetHz).worse <= brief.band) return `Every kit holds ${band}`;
+  const share = pack.promise.yieldWithinBand;
+  if (share > 0.9989) return `More than 99.9${narrow}% of kits hold ${band}`;
+  if (share < 0.001) return `Hardly any kit holds ${band}`;
+  return `${pack.promise.text.yield} of kits hold ${band}`;
 }
 
 /** What a screen reader hears once a new answer has settled. */

@@ -1,5 +1,10 @@
 import { describe, expect, it } from 'vitest';
-import { openingFor, statusWords, stepsOf } from '../../../client/features/orders/model.ts';
+import {
+  openingFor,
+  statusWords,
+  stepsOf,
+  wordsForStatus,
+} from '../../../client/features/orders/model.ts';
 import { orderStatuses } from '../../../server/contracts/orders.ts';
 
 describe('stepsOf', () => {
@@ -30,6 +35,12 @@ describe('an order in words', () => {
     const { light, heavy } = openingFor({ status, shipment: null });
     expect(`${light} ${heavy}`).not.toMatch(/_|undefined/);
     expect(statusWords[status]).not.toMatch(/_/);
+  });
+
+  it('puts the codes of the ledger into words and leaves other text alone', () => {
+    expect(wordsForStatus('awaiting_payment')).toBe('waiting for payment');
+    expect(wordsForStatus('Quay Post')).toBe('Quay Post');
+    expect(wordsForStatus(null)).toBeNull();
   });
 
   it('names the carrier', () => {

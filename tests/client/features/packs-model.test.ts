@@ -7,6 +7,7 @@ import {
   rateClause,
   reasonFor,
   tagParts,
+  yieldClause,
 } from '../../../client/features/packs/model.ts';
 import { placeTags } from '../../../client/features/packs/scatter.ts';
 import { narrow } from '../../../client/lib/spaces.ts';
@@ -31,7 +32,7 @@ describe('reasonFor', () => {
     const pack = samplePack('a', 0.05, 400, { wins: ['best-value', 'closest'] });
     expect(reasonFor(pack, 0.05)).toEqual({
       title: 'Best value and closest',
-      meaning: `cheapest that holds ±${narrow}5${narrow}%; nominal nearest to the rate`,
+      meaning: `cheapest with 99${narrow}% of kits in ±${narrow}5${narrow}%; nominal nearest to the rate`,
     });
   });
 });
@@ -52,6 +53,20 @@ describe('tagParts', () => {
       ['C1', `560${narrow}nF`],
       ['R1–R3', `3${narrow}×${narrow}1${narrow}MΩ`],
     ]);
+  });
+});
+
+describe('yieldClause', () => {
+  const said = (half: number, yieldWithinBand: number) => {
+    const pack = samplePack('a', half, 400);
+    const promise = { ...pack.promise, yieldWithinBand };
+    return yieldClause({ ...pack, promise }, { band: 0.05, targetHz: 1.5 });
+  };
+
+  it('says every kit only where the guaranteed band lies inside the one asked for', () => {
+    expect(said(0.04, 1)).toMatch(/^Every kit holds/);
+    expect(said(0.06, 1)).toMatch(/^More than 99.9/);
+    expect(said(0.06, 0.996)).toMatch(/^99.6 % of kits/);
   });
 });
 

@@ -53,6 +53,7 @@ describe('rolesText', () => {
   it('joins a run and lists the rest', () => {
     expect(rolesText(['R1', 'R2', 'R3'])).toBe('R1–R3');
     expect(rolesText(['R1', 'R4'])).toBe('R1, R4');
+    expect(rolesText(['R1', 'R2', 'R3', 'R4B'])).toBe('R1–R3, R4B');
     expect(rolesText(['C1'])).toBe('C1');
   });
 });

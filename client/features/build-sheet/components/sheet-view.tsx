@@ -1,6 +1,6 @@
 import { useState } from 'react';
 import type { BuildSheet } from '../../../../server/contracts/orders.ts';
-import { bindUnits, keepTogether } from '../../../lib/spaces.ts';
+import { bindUnits } from '../../../lib/spaces.ts';
 import { PartsTable } from '../../../ui/parts-table.tsx';
 import { PulseStrip } from '../../../ui/pulse-strip.tsx';
 import { Schematic } from '../../../ui/schematic.tsx';
@@ -82,10 +82,10 @@ function Readings({ sheet }: { sheet: BuildSheet }) {
         {sheet.readings.map((reading) => (
           <div
             key={reading.point}
-            className="ledger-line grid gap-x-8 py-2.5 sm:grid-cols-[14rem_12rem_1fr]"
+            className="ledger-line grid gap-x-8 py-2.5 sm:grid-cols-[12rem_1fr_1.2fr]"
           >
             <dt className="font-strong">{bindUnits(reading.point)}</dt>
-            <dd className="font-heavy">{keepTogether(reading.expect)}</dd>
+            <dd className="font-heavy">{bindUnits(reading.expect)}</dd>
             <dd className="text-soft">{bindUnits(reading.how)}</dd>
           </div>
         ))}

@@ -24,7 +24,7 @@ export function OrderList(props: {
           <div>
             <Link
               to={props.orderPath(order.ref)}
-              className="font-heavy text-spruce underline decoration-2 underline-offset-4 after:absolute after:inset-0"
+              className="font-heavy whitespace-nowrap text-spruce underline decoration-2 underline-offset-4 after:absolute after:inset-0"
             >
               {order.ref}
             </Link>

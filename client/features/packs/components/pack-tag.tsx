@@ -2,13 +2,20 @@ import type { ReactNode } from 'react';
 import { Link } from 'react-router-dom';
 import type { ResolvedBrief } from '../../../../server/contracts/brief.ts';
 import type { Pack } from '../../../../server/contracts/packs.ts';
-import { bindUnits, keepTogether } from '../../../lib/spaces.ts';
+import { keepTogether } from '../../../lib/spaces.ts';
 import { Money } from '../../../ui/money.tsx';
 import { PartDrawing } from '../../../ui/part-drawing.tsx';
 import { PulseStrip } from '../../../ui/pulse-strip.tsx';
 import { Scale } from '../../../ui/scale.tsx';
 import { Tag, TagHead } from '../../../ui/tag.tsx';
-import { bandOff, hasFlashCaution, makeableWords, reasonFor, tagParts } from '../model.ts';
+import {
+  bandOff,
+  hasFlashCaution,
+  makeableWords,
+  reasonFor,
+  tagParts,
+  yieldClause,
+} from '../model.ts';
 
 export interface PackTagProps {
   pack: Pack;
@@ -65,8 +72,7 @@ function Rate({ pack, brief, packPath }: Omit<PackTagProps, 'action'>) {
         </span>
       </h3>
       <p className="mt-2 text-soft">
-        {bindUnits(text.yield)} of kits hold {keepTogether(percent(brief.band))};{' '}
-        {makeableWords(pack.makeable)}.
+        {yieldClause(pack, brief)}; {makeableWords(pack.makeable)}.
         {hasFlashCaution(pack) && (
           <strong className="block font-strong text-marigold-ink">
             Flashes in the range that can trigger seizures.
@@ -80,10 +86,6 @@ function Rate({ pack, brief, packPath }: Omit<PackTagProps, 'action'>) {
       </p>
     </>
   );
-}
-
-function percent(fraction: number): string {
-  return `± ${Number((fraction * 100).toPrecision(3))} %`;
 }
 
 function ScaleOf({ pack, brief }: { pack: Pack; brief: ResolvedBrief }) {
