@@ -1,3 +1,4 @@
+import { readdirSync } from 'node:fs';
 import js from '@eslint/js';
 import { createTypeScriptImportResolver } from 'eslint-import-resolver-typescript';
 import { importX } from 'eslint-plugin-import-x';
@@ -11,8 +12,14 @@ const server = (part) => `./server/${part}`;
 const inner = ['contracts', 'engine', 'domain', 'store', 'adapters', 'use-cases', 'http', 'jobs'];
 const allBut = (...parts) => inner.filter((part) => !parts.includes(part)).map(server);
 
+const features = readdirSync(new URL('./client/features', import.meta.url));
+const apart = features.map((name) =>
+  zone(`./client/features/${name}`, './client/features', 'Features meet in client/app.', [name]),
+);
+
 // Arrows that may carry types only are finer than zones can tell; tests/architecture checks those.
 const zones = [
+  ...apart,
   zone('./client', './server', 'The client knows only server/contracts.', ['contracts']),
   zone('./client/lib', ['./client/ui', './client/features', './client/app'], 'lib stands alone.'),
   zone('./client/ui', ['./client/features', './client/app'], 'ui knows no feature.'),
