@@ -3,6 +3,7 @@ import * as catalogue from './0002-catalogue.ts';
 import * as orders from './0003-orders.ts';
 import * as stockLedger from './0004-stock-ledger.ts';
 import * as paymentsAndMail from './0005-payments-and-mail.ts';
+import * as catalogueRevision from './0006-catalogue-revision.ts';
 
 /** Every migration in order; the stored name never changes once it has run anywhere. */
 export const migrations = [
@@ -11,4 +12,5 @@ export const migrations = [
   { name: '0003-orders', ...orders },
   { name: '0004-stock-ledger', ...stockLedger },
   { name: '0005-payments-and-mail', ...paymentsAndMail },
+  { name: '0006-catalogue-revision', ...catalogueRevision },
 ];

@@ -113,10 +113,45 @@ function partsWithStock(db: Database) {
     .select(db.raw('coalesce(stock.reserved, 0)::int as reserved'));
 }
 
-/** Every active part with its stock, ascending by id: what a solve looks at. */
+interface KeptFacts {
+  revision: number;
+  parts: CataloguePart[];
+}
+
+/** Facts of all active parts as last read, for each database this process talks to. */
+const keptFacts = new WeakMap<object, KeptFacts>();
+
+/**
+ * Every active part with its stock, ascending by id: what a solve looks at. Facts and prices change
+ * seldom and are kept until the catalogue's revision moves; quantities are read each time.
+ */
 export async function loadCatalogue(db: Database): Promise<CataloguePart[]> {
-  const rows: PartRow[] = await partsWithStock(db).where('parts.active', true).orderBy('parts.id');
-  return rows.map(toPart);
+  const { rows } = await db.raw(`
+    select (select number from catalogue_revision) as revision, part_id, sum(on_hand)::int as on_hand,
+      sum(reserved)::int as reserved
+    from lots group by part_id`);
+  const stock = new Map<number, { on_hand: number; reserved: number }>();
+  for (const row of rows) stock.set(row.part_id, row);
+  const { parts } = await factsAt(db, rows[0]?.revision ?? -1);
+  return parts.map((part) => {
+    const { on_hand: onHand, reserved } = stock.get(part.id) ?? { on_hand: 0, reserved: 0 };
+    return { ...part, onHand, reserved, available: onHand - reserved };
+  });
+}
+
+async function factsAt(db: Database, revision: number): Promise<KeptFacts> {
+  const pool = db.client.pool as object;
+  const kept = keptFacts.get(pool);
+  if (kept?.revision === revision) return kept;
+  // Read in one statement, so that facts and revision belong together.
+  const rows: (PartRow & { revision: number })[] = await partsWithStock(db)
+    .select(db.raw('(select number from catalogue_revision) as revision'))
+    .where('parts.active', true)
+    .orderBy('parts.id');
+  const fresh = { revision: rows[0]?.revision ?? -1, parts: rows.map(toPart) };
+  // Inside a transaction the rows may be its own unsaved changes; those are nobody else's facts.
+  if (!db.isTransaction) keptFacts.set(pool, fresh);
+  return fresh;
 }
 
 /** The named parts, retired ones too, in no particular order. */

@@ -7,7 +7,7 @@ import {
   type Candidate,
 } from './candidates.ts';
 import { formTimingTables, type TimingTables } from './composites.ts';
-import { frameCircuit, framesFor } from './frame.ts';
+import { frameCircuit, framesFor, type Frame } from './frame.ts';
 import { guaranteedBand, worseEnd, type GuaranteedBand } from './guaranteed-band.ts';
 import { holdsBand, kitYield, type KitYield } from './kit-yield.ts';
 import type { SearchBrief, Shelf } from './shelf.ts';
@@ -32,7 +32,10 @@ export interface FoundPacks {
 
 /** A pack is best value only when at least this share of kits holds the band. */
 export const valueYield = 0.99;
+/** Below the wanted yield, since a pack a little off the target can be in the band a little more often. */
+const hopelessYield = 0.98;
 const shortlistLength = 48;
+const framesShortlisted = 120;
 
 /**
  * Finds packs for a brief on a shelf, ranked. *Closest* is exact over the whole space: no stocked
@@ -132,30 +135,88 @@ export function promise(candidate: Candidate, brief: SearchBrief): RankedPack {
   };
 }
 
-/** Cheapest first, nearer first among equals, until one holds the band often enough. */
+/**
+ * The cheapest pack that holds the band often enough; the nearer one among equals in price. Frames go
+ * by price, so the walk ends once even the cheapest resistor would make the next one dearer.
+ */
 function findBestValue(
   aimed: readonly AimedFrame[],
   tables: TimingTables,
   brief: SearchBrief,
 ): Candidate | null {
-  const pool = aimed
-    .flatMap((frame) => [
+  const cheapest = Math.min(...tables.all.resistors.map((part) => part.priceMinor));
+  const byPrice = [...aimed].sort((a, b) => a.frame.priceMinor - b.frame.priceMinor);
+  const hopeless = createHopeless(brief);
+  let best: Candidate | null = null;
+  for (const frame of byPrice) {
+    if (best !== null && frame.frame.priceMinor + cheapest > best.priceMinor) break;
+    if (hopeless(frame.frame)) continue;
+    const pool = [
       ...nearestCandidates(frame, tables.singles, brief, 4),
       ...nearestCandidates(frame, tables.all, brief, 1),
-    ])
-    .filter((candidate) => candidate.distance <= Math.log1p(brief.band))
-    .sort((a, b) => a.priceMinor - b.priceMinor || byCloseness(a, b));
-  return pool.find((candidate) => holdsBand(candidate, brief, valueYield)) ?? null;
+    ].sort(byValue);
+    for (const candidate of pool) {
+      if (best !== null && byValue(candidate, best) >= 0) break;
+      if (candidate.distance <= Math.log1p(brief.band) && holdsBand(candidate, brief, valueYield)) {
+        best = candidate;
+        break;
+      }
+    }
+  }
+  return best;
 }
 
-/** Tolerances of the passive parts, a quick bound by which candidates are shortlisted. */
-function passiveTolerance(candidate: Candidate): number {
-  const { r1, r2, r3 } = candidate.frame.thresholds;
-  const capacitor = candidate.frame.capacitor;
-  const timing = Math.max(candidate.first.tolerance, candidate.second?.tolerance ?? 0);
+function byValue(a: Candidate, b: Candidate): number {
+  return a.priceMinor - b.priceMinor || byCloseness(a, b);
+}
+
+/**
+ * Tells frames whose capacitor and thresholds alone spread too far: a perfect timing resistor that hit
+ * the target exactly would not hold the band. Remembered by tolerances, which few frames differ in.
+ */
+function createHopeless(brief: SearchBrief): (frame: Frame) => boolean {
+  const known = new Map<string, boolean>();
+  return (frame) => {
+    const { capacitor, thresholds } = frame;
+    const { r1, r2, r3 } = thresholds;
+    const key = [
+      capacitor.tolerance,
+      capacitor.temperatureCoefficientPerKelvin,
+      ...[r1, r2, r3].map((part) => part.tolerance),
+      r1.ohms / r3.ohms,
+      r2.ohms / r3.ohms,
+    ].join();
+    let answer = known.get(key);
+    if (answer === undefined) {
+      answer = !holdsBand(perfectCandidate(frame, brief), brief, hopelessYield);
+      known.set(key, answer);
+    }
+    return answer;
+  };
+}
+
+function perfectCandidate(frame: Frame, brief: SearchBrief): Candidate {
+  const coefficient = -frame.capacitor.temperatureCoefficientPerKelvin;
+  return {
+    frame,
+    timingOhms: 1,
+    first: {
+      ...frame.thresholds.r3,
+      ohms: 1,
+      tolerance: 0,
+      temperatureCoefficientPerKelvin: coefficient,
+    },
+    second: null,
+    join: null,
+    frequencyHz: brief.targetHz,
+    distance: 0,
+    priceMinor: 0,
+  };
+}
+
+/** Tolerances of a frame's own parts, a quick bound by which frames are shortlisted. */
+function frameTolerance({ capacitor, thresholds: { r1, r2, r3 } }: Frame): number {
   return (
-    candidate.distance +
-    timing +
     capacitor.tolerance +
     capacitor.temperatureSpread +
     0.36 * (r1.tolerance + r2.tolerance) +
@@ -163,12 +224,21 @@ function passiveTolerance(candidate: Candidate): number {
   );
 }
 
+/** The same for a whole candidate, its distance from the target included. */
+function passiveTolerance(candidate: Candidate): number {
+  const timing = Math.max(candidate.first.tolerance, candidate.second?.tolerance ?? 0);
+  return candidate.distance + timing + frameTolerance(candidate.frame);
+}
+
 function findSteadiest(
   aimed: readonly AimedFrame[],
   tables: TimingTables,
   brief: SearchBrief,
 ): Candidate | null {
-  const pool = aimed
+  const tightest = [...aimed]
+    .sort((a, b) => frameTolerance(a.frame) - frameTolerance(b.frame))
+    .slice(0, framesShortlisted);
+  const pool = tightest
     .flatMap((frame) =>
       [tables.precise, tables.good, tables.all].flatMap((table) =>
         nearestCandidates(frame, table, brief, 1),
