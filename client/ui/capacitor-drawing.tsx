@@ -42,7 +42,7 @@ function Electrolytic({ code }: { code: string }) {
   return (
     <>
       <path d="M24 32V40M40 32V37" stroke="#8b9294" strokeWidth="2.5" />
-      <rect x="12" y="2" width="40" height="30" rx="3" fill="#27343b" stroke="#11181b" />
+      <rect x="12" y="2" width="40" height="30" rx="3" fill="#27343b" stroke="#66747a" />
       <rect x="41" y="2" width="11" height="30" fill="#c8ccc6" />
       <path d="M44 10H49M44 17H49M44 24H49" stroke="#27343b" strokeWidth="2" />
       <text x="26.5" y="20.5" textAnchor="middle" fontSize="9.5" fontWeight="800" fill="#f3efe4">

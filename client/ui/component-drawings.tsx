@@ -6,7 +6,7 @@ export function ChipDrawing({ code }: { code: string }) {
       {[13, 25.5, 38, 50.5].map((x) => (
         <path key={x} d={`M${x} 2V38`} stroke="#a7adae" strokeWidth="5" />
       ))}
-      <rect x="5" y="7" width="54" height="26" rx="2" fill="#23292b" stroke="#0f1415" />
+      <rect x="5" y="7" width="54" height="26" rx="2" fill="#23292b" stroke="#5a686c" />
       <path d="M5 15a5 5 0 0 1 0 10Z" fill="#4a5558" />
       <circle cx="11.5" cy="28.5" r="1.75" fill="#7d898b" />
       <text x="34" y="23.5" textAnchor="middle" fontSize="9.5" fontWeight="600" fill="#e8e3d6">
@@ -66,7 +66,7 @@ export function BatteryDrawing() {
       {[3, 22].map((y) => (
         <g key={y}>
           <rect x="57" y={y + 4.5} width="4" height="6" rx="1" fill="#a7adae" />
-          <rect x="4" y={y} width="53" height="15" rx="2.5" fill="#37474b" stroke="#161f21" />
+          <rect x="4" y={y} width="53" height="15" rx="2.5" fill="#37474b" stroke="#66747a" />
           <rect x="42" y={y} width="15" height="15" rx="2.5" fill="#b5793a" />
           <path d={`M49.5 ${y + 4.5}v6M46.5 ${y + 7.5}h6`} stroke="#fff" strokeWidth="1.5" />
         </g>
@@ -80,7 +80,7 @@ export function HolderDrawing() {
     <svg aria-hidden="true" viewBox="0 0 64 40" className="h-10 w-16">
       <path d="M50 6H62M50 34H62" stroke="#a8321f" strokeWidth="2.5" />
       <path d="M50 34H62" stroke="#1d1d1b" strokeWidth="2.5" />
-      <rect x="3" y="3" width="50" height="34" rx="3" fill="#2a3236" stroke="#10171a" />
+      <rect x="3" y="3" width="50" height="34" rx="3" fill="#2a3236" stroke="#5a686c" />
       <path d="M3 20H53M9 9V14M9 26V31" stroke="#66747a" strokeWidth="2" />
       <path d="M44 11.5H48M46 9.5V13.5" stroke="#d8d2c4" strokeWidth="1.5" />
     </svg>

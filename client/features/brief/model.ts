@@ -1,7 +1,8 @@
 import { ledColours, ranks, targetUnits } from '../../../server/contracts/brief.ts';
 import type { Rank, SolveRequestInput, Target } from '../../../server/contracts/brief.ts';
 import type { Shop } from '../../../server/contracts/shop.ts';
-import { formatQuantity, readNumber } from '../../lib/format-number.ts';
+import { formatDigits, formatQuantity, readNumber } from '../../lib/format-number.ts';
+import { narrow } from '../../lib/spaces.ts';
 
 export type Unit = Target['unit'];
 
@@ -115,7 +116,12 @@ export function rateInOtherWords(draft: BriefDraft): string {
   const hertz = targetHertz(draft);
   if (!Number.isFinite(hertz)) return '';
   const beat = isClock(draft) ? 'cycle' : 'beat';
-  return `${formatQuantity(hertz, 'Hz', 4)} · one ${beat} lasts ${formatQuantity(1 / hertz, 's', 3)}`;
+  // Nobody says millihertz of a blinker.
+  const rate =
+    hertz < 1 && hertz >= 0.001
+      ? `${formatDigits(hertz, 4)}${narrow}Hz`
+      : formatQuantity(hertz, 'Hz', 4);
+  return `${rate} · one ${beat} lasts ${formatQuantity(1 / hertz, 's', 3)}`;
 }
 
 const sentences: Partial<Record<BriefField, string>> = {

@@ -123,6 +123,11 @@ describe('rateInOtherWords', () => {
     );
   });
 
+  it('never says millihertz of a slow blinker', () => {
+    const said = rateInOtherWords({ ...defaultDraft, rate: '2', unit: 's' });
+    expect(said.replaceAll(narrow, ' ')).toBe('0.5 Hz · one beat lasts 2 s');
+  });
+
   it('says nothing of a rate it cannot read', () => {
     expect(rateInOtherWords({ ...defaultDraft, rate: '' })).toBe('');
   });

@@ -1,5 +1,6 @@
 import { useState } from 'react';
 import type { Shop } from '../../../../server/contracts/shop.ts';
+import { readNumber } from '../../../lib/format-number.ts';
 import { narrow, noBreak } from '../../../lib/spaces.ts';
 import { defaultBattery, isClock, litWords } from '../model.ts';
 import type { BriefDraft, BriefErrors, Unit } from '../model.ts';
@@ -57,7 +58,11 @@ export function RateFact(props: PartProps) {
         <FactChoice
           label="Unit of the rate"
           value={draft.unit}
-          options={unitOptions}
+          options={unitOptions.map((each) =>
+            isPeriod && readNumber(draft.rate) === 1
+              ? { ...each, shown: each.shown?.replace(/s$/, '') }
+              : each,
+          )}
           onChange={(unit) =>
             props.change({ unit: unitOptions.find((each) => each.value === unit)?.value ?? 'Hz' })
           }
