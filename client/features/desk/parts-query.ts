@@ -1,10 +1,12 @@
+import type { z } from 'zod';
 import { deskPartsQuerySchema } from '../../../server/contracts/desk.ts';
-import type { DeskPartsQuery } from '../../../server/contracts/desk.ts';
+
+export type PartsQuery = z.output<typeof deskPartsQuerySchema>;
 
 const { kind, mounting, stock, sort, direction, search } = deskPartsQuerySchema.shape;
 
 /** The parts' filter as the address has it; what cannot be read counts as not given. */
-export function readPartsQuery(value: (name: string) => string, page: number): DeskPartsQuery {
+export function readPartsQuery(value: (name: string) => string, page: number): PartsQuery {
   const given = (name: string) => (value(name) === '' ? undefined : value(name));
   return {
     search: search.safeParse(given('search')).data,
@@ -18,4 +20,4 @@ export function readPartsQuery(value: (name: string) => string, page: number): D
   };
 }
 
-export type PartsSort = NonNullable<DeskPartsQuery['sort']>;
+export type PartsSort = PartsQuery['sort'];

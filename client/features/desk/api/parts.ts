@@ -16,9 +16,9 @@ import type {
   changePriceSchema,
   changeStockSchema,
   DeskPart,
-  DeskPartsQuery,
 } from '../../../../server/contracts/desk.ts';
 import { queryString, request } from '../../../lib/http.ts';
+import type { PartsQuery } from '../parts-query.ts';
 import { useKeyFor } from '../use-key-for.ts';
 import { auditKey } from './audit.ts';
 import { coverageOptions, todayOptions } from './today.ts';
@@ -29,7 +29,7 @@ type ChangeStock = z.infer<typeof changeStockSchema>;
 const listKey = ['desk', 'parts'] as const;
 const path = (id: string) => `/api/desk/parts/${encodeURIComponent(id)}`;
 
-function partsOptions(query: DeskPartsQuery) {
+function partsOptions(query: PartsQuery) {
   return queryOptions({
     queryKey: [...listKey, query],
     queryFn: ({ signal }) =>
@@ -52,7 +52,7 @@ function historyOptions(id: string) {
   });
 }
 
-export const useParts = (query: DeskPartsQuery) => useQuery(partsOptions(query));
+export const useParts = (query: PartsQuery) => useQuery(partsOptions(query));
 export const usePart = (id: string) => useQuery(partOptions(id));
 export const useHistory = (id: string) => useQuery(historyOptions(id));
 

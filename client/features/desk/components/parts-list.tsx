@@ -1,16 +1,16 @@
 import { Link } from 'react-router-dom';
-import type { DeskPart, DeskPartsQuery } from '../../../../server/contracts/desk.ts';
+import type { DeskPart } from '../../../../server/contracts/desk.ts';
 import { bindUnits } from '../../../lib/spaces.ts';
 import { Money } from '../../../ui/money.tsx';
 import { Table } from '../../../ui/table.tsx';
 import type { Column } from '../../../ui/table.tsx';
 import { deskPaths } from '../desk-paths.ts';
-import type { PartsSort } from '../parts-query.ts';
+import type { PartsQuery, PartsSort } from '../parts-query.ts';
 import { StockSign } from './stock-sign.tsx';
 
 type Direction = 'up' | 'down';
 interface Sorting {
-  query: DeskPartsQuery;
+  query: PartsQuery;
   onSort: (sort: PartsSort, direction: Direction) => void;
 }
 

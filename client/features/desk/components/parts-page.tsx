@@ -1,4 +1,4 @@
-import type { DeskPartsPage, DeskPartsQuery } from '../../../../server/contracts/desk.ts';
+import type { DeskPartsPage } from '../../../../server/contracts/desk.ts';
 import { partKinds } from '../../../../server/contracts/parts.ts';
 import { usePageTitle } from '../../../lib/use-page-title.ts';
 import { EmptyState } from '../../../ui/empty-state.tsx';
@@ -11,6 +11,7 @@ import { Waiting } from '../../../ui/waiting.tsx';
 import { useParts } from '../api/parts.ts';
 import { useListQuery } from '../list-query.ts';
 import { readPartsQuery } from '../parts-query.ts';
+import type { PartsQuery } from '../parts-query.ts';
 import { Pager } from './pager.tsx';
 import { PartsList } from './parts-list.tsx';
 import { SearchField } from './search-field.tsx';
@@ -78,7 +79,7 @@ export function PartsPage() {
   );
 }
 
-function PartsOpening(props: { page: DeskPartsPage | undefined; query: DeskPartsQuery }) {
+function PartsOpening(props: { page: DeskPartsPage | undefined; query: PartsQuery }) {
   const { page, query } = props;
   const isWhole =
     query.search === undefined && query.kind === undefined && query.mounting === undefined;
@@ -102,7 +103,7 @@ function PartsOpening(props: { page: DeskPartsPage | undefined; query: DeskParts
 
 function PartsResult(props: {
   page: DeskPartsPage;
-  query: DeskPartsQuery;
+  query: PartsQuery;
   list: ReturnType<typeof useListQuery>;
 }) {
   const { page, query, list } = props;
