@@ -12,7 +12,7 @@ import { viewShop } from '../use-cases/view-shop.ts';
 import { sendProblem } from './problem.ts';
 
 /** Generous for somebody who types; a wall for a program that hammers. */
-const solvesPerMinute = 1200;
+const solvesPerMinute = 6000;
 
 /** The public side: shop, catalogue, circuits, packs. */
 export function packRoutes(deps: Pick<Deps, 'db' | 'signer' | 'demo' | 'mailPageUrl'>): Router {

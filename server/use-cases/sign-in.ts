@@ -19,8 +19,8 @@ import { Refusal } from './refusal.ts';
 
 const bcryptRounds = 10;
 const failureWindowMinutes = 15;
-const failuresPerEmail = 10;
-const failuresPerAddress = 60;
+const failuresPerEmail = 30;
+const failuresPerAddress = 600;
 const sessionDays = { customer: 30, packer: 1, owner: 1 } as const;
 
 /** What a browser gets when it signs in. */
