@@ -1,4 +1,6 @@
 import type { Coverage } from '../../../server/contracts/desk.ts';
+import { formatDigits, formatQuantity } from '../../lib/format-number.ts';
+import { narrow } from '../../lib/spaces.ts';
 
 type Point = Coverage['points'][number];
 
@@ -45,7 +47,7 @@ export function widestHole(coverage: Coverage): Hole | null {
 }
 
 const loosest = 0.2;
-const tightest = 0.01;
+const tightest = 0.02;
 
 /** How high a half-band stands in the ribbon, 0 to 1: each halving of the band adds the same height. */
 export function heightOf(halfBand: number): number {
@@ -59,4 +61,10 @@ export function placeOf(frequencyHz: number, { points }: Pick<Coverage, 'points'
   const last = points.at(-1)?.frequencyHz ?? first;
   if (last === first) return 0.5;
   return Math.log(frequencyHz / first) / Math.log(last / first);
+}
+
+/** A rate as the trade says it: 0.63 Hz rather than 630 mHz. */
+export function rateWords(frequencyHz: number): string {
+  if (frequencyHz < 1) return `${formatDigits(frequencyHz, 2)}${narrow}Hz`;
+  return formatQuantity(frequencyHz, 'Hz', 2);
 }

@@ -3,7 +3,7 @@ import type { OrderStatus } from '../../../server/contracts/orders.ts';
 /** An order's state in the owner's words. */
 export const orderWords: Record<OrderStatus, string> = {
   awaiting_payment: 'waits for payment',
-  paid: 'paid, waits for the bench',
+  paid: 'paid',
   picking: 'being picked',
   packed: 'packed',
   shipped: 'shipped',

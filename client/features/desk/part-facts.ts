@@ -1,4 +1,4 @@
-import type { Part } from '../../../server/contracts/parts.ts';
+import type { Dielectric, Part } from '../../../server/contracts/parts.ts';
 import { formatDigits, formatPercent, formatQuantity } from '../../lib/format-number.ts';
 import { narrow } from '../../lib/spaces.ts';
 
@@ -6,6 +6,14 @@ export interface Fact {
   name: string;
   value: string;
 }
+
+const dielectricWords: Record<Dielectric, string> = {
+  C0G: 'C0G ceramic',
+  X7R: 'X7R ceramic',
+  'film-pp': 'film (PP)',
+  'film-pet': 'film (PET)',
+  electrolytic: 'electrolytic',
+};
 
 const perKelvin = (value: number) => `${formatDigits(value * 1e6)}${narrow}ppm/K`;
 const span = (from: number, to: number, unit: string) =>
@@ -36,7 +44,7 @@ function kindFacts(part: Part): Fact[] {
       return [
         { name: 'Capacitance', value: formatQuantity(part.farads, 'F', 4) },
         { name: 'Tolerance', value: `±${narrow}${formatPercent(part.tolerance)}` },
-        { name: 'Dielectric', value: part.dielectric },
+        { name: 'Dielectric', value: dielectricWords[part.dielectric] },
         { name: 'Rated', value: formatQuantity(part.ratedVolts, 'V') },
         { name: 'Drift', value: perKelvin(part.temperatureCoefficientPerKelvin) },
         { name: 'Polarity', value: part.polarised ? 'polarised' : 'either way round' },

@@ -1,14 +1,16 @@
 import { useState } from 'react';
 import type { PointerEvent } from 'react';
 import type { Coverage } from '../../../../server/contracts/desk.ts';
-import { formatPercent, formatQuantity } from '../../../lib/format-number.ts';
+import { formatPercent } from '../../../lib/format-number.ts';
 import { narrow } from '../../../lib/spaces.ts';
 import { useElementWidth } from '../../../lib/use-element-width.ts';
-import { heightOf, holesOf, isHeld, placeOf } from '../coverage.ts';
+import { heightOf, holesOf, isHeld, placeOf, rateWords } from '../coverage.ts';
 import { CoverageTable } from './coverage-table.tsx';
 
 const height = 190;
 const below = 62;
+/** Room on the right for what the lines mean. */
+const margin = 60;
 const decades = [0.01, 0.1, 1, 10, 100, 1000, 10_000, 100_000];
 const marks = [0.1, 0.02];
 
@@ -19,11 +21,12 @@ const bandWords = (band: number) => `±${narrow}${formatPercent(band)}`;
  * reaches the asked line is solid, what falls short is hatched, and what cannot be made is a gap.
  */
 export function CoverageRibbon({ coverage }: { coverage: Coverage }) {
-  const [frame, width] = useElementWidth<HTMLDivElement>(1000);
+  const [frame, frameWidth] = useElementWidth<HTMLDivElement>(1000);
+  const width = frameWidth - margin;
   const [pointed, setPointed] = useState<number | null>(null);
   const onMove = (event: PointerEvent<SVGSVGElement>) => {
     const box = event.currentTarget.getBoundingClientRect();
-    const share = (event.clientX - box.left) / box.width;
+    const share = (event.clientX - box.left) / (box.width - margin);
     const index = Math.floor(share * coverage.points.length);
     setPointed(Math.min(coverage.points.length - 1, Math.max(0, index)));
   };
@@ -32,7 +35,7 @@ export function CoverageRibbon({ coverage }: { coverage: Coverage }) {
       <div ref={frame}>
         <svg
           aria-hidden="true"
-          width={width}
+          width={frameWidth}
           height={height + below}
           className="block overflow-visible"
           onPointerMove={onMove}
@@ -59,7 +62,7 @@ function pointedWords(coverage: Coverage, pointed: number | null): string {
   if (point === undefined) {
     return 'Best guaranteed band at each rate, for a logic clock at 5\u202fV; higher is tighter.';
   }
-  const rate = formatQuantity(point.frequencyHz, 'Hz', 2);
+  const rate = rateWords(point.frequencyHz);
   return point.halfBand === null
     ? `${rate}: no pack comes within 1\u202f% of it`
     : `${rate}: every kit within ${bandWords(point.halfBand)}`;
@@ -116,7 +119,7 @@ function Marks({ width }: { width: number }) {
   return marks.map((band) => (
     <g key={band}>
       <path d={`M0 ${y(band)}H${width}`} className="stroke-line" strokeDasharray="2 5" />
-      <text x={width} y={y(band) - 4} textAnchor="end" className="fill-soft text-small">
+      <text x={width + 10} y={y(band) + 5} className="fill-soft text-small">
         {bandWords(band)}
       </text>
     </g>
@@ -124,13 +127,17 @@ function Marks({ width }: { width: number }) {
 }
 
 function AskedLine({ band, width }: { band: number; width: number }) {
-  const words = `${bandWords(band)} asked`;
   return (
     <g>
       <path d={`M0 ${y(band)}H${width}`} className="stroke-paper" strokeWidth="4.5" />
-      <path d={`M0 ${y(band)}H${width}`} className="stroke-ink" strokeWidth="1.75" />
-      <text x="0" y={y(band) - 7} className="fill-ink text-small font-heavy">
-        {words}
+      <path d={`M0 ${y(band)}H${width + 6}`} className="stroke-ink" strokeWidth="1.75" />
+      <text y={y(band) + 5} className="fill-ink text-small">
+        <tspan x={width + 10} className="font-heavy">
+          {bandWords(band)}
+        </tspan>
+        <tspan x={width + 10} dy="1.2em">
+          asked
+        </tspan>
       </text>
     </g>
   );
@@ -156,7 +163,7 @@ function Axis({ coverage, width }: { coverage: Coverage; width: number }) {
                 textAnchor={anchor}
                 className="fill-soft text-small font-strong"
               >
-                {formatQuantity(decade, 'Hz')}
+                {rateWords(decade)}
               </text>
             )}
           </g>

@@ -1,11 +1,11 @@
 import { useState } from 'react';
 import type { Coverage } from '../../../../server/contracts/desk.ts';
-import { formatPercent, formatQuantity } from '../../../lib/format-number.ts';
+import { formatPercent } from '../../../lib/format-number.ts';
 import { narrow } from '../../../lib/spaces.ts';
 import { Button } from '../../../ui/button.tsx';
 import { Dialog } from '../../../ui/dialog.tsx';
 import { Table } from '../../../ui/table.tsx';
-import { isHeld } from '../coverage.ts';
+import { isHeld, rateWords } from '../coverage.ts';
 
 /** The ribbon's figures in rows, for those who read rather than look. */
 export function CoverageTable({ coverage }: { coverage: Coverage }) {
@@ -26,7 +26,7 @@ export function CoverageTable({ coverage }: { coverage: Coverage }) {
               key: 'rate',
               head: 'Rate',
               isRowHead: true,
-              cell: (point) => formatQuantity(point.frequencyHz, 'Hz', 2),
+              cell: (point) => rateWords(point.frequencyHz),
             },
             {
               key: 'band',

@@ -15,16 +15,16 @@ export function DeskNav() {
     <nav aria-label="Desk" className="no-print mt-3 border-b border-line">
       <ul className="-mb-px flex gap-1">
         {drawers.map((drawer) => (
-          <li key={drawer.to}>
+          <li key={drawer.to} className="[filter:drop-shadow(0_0_0.75px_var(--color-soft))]">
             <NavLink
               to={drawer.to}
               end={drawer.end}
               className={({ isActive }) =>
                 clsx(
-                  'inline-flex min-h-11 items-center border border-b-0 px-4 [clip-path:polygon(0_0,calc(100%-0.75rem)_0,100%_0.75rem,100%_100%,0_100%)]',
+                  'inline-flex min-h-11 items-center px-4 [clip-path:polygon(0_0,calc(100%-0.75rem)_0,100%_0.75rem,100%_100%,0_100%)]',
                   isActive
-                    ? 'border-line bg-card font-heavy text-ink'
-                    : 'border-transparent bg-paper-deep text-soft hover:text-ink',
+                    ? 'bg-card font-heavy text-ink'
+                    : 'bg-paper-deep text-soft hover:text-ink',
                 )
               }
             >

@@ -54,9 +54,18 @@ export function OrderSums({ order }: { order: DeskOrder }) {
 
 function addressLines({ shippingAddress: to }: DeskOrder): string[] {
   const town = `${to.postalCode} ${to.city}`.trim();
-  return [to.name, to.line1, to.line2, town, to.region, to.country].filter(
+  return [to.name, to.line1, to.line2, town, to.region, countryName(to.country)].filter(
     (line): line is string => line !== undefined && line !== '',
   );
+}
+
+/** The country in words; its code where the browser has no name for it. */
+function countryName(code: string): string {
+  try {
+    return new Intl.DisplayNames(['en'], { type: 'region' }).of(code) ?? code;
+  } catch {
+    return code;
+  }
 }
 
 function shippingSentence({ shipment, shipBy }: DeskOrder): string {

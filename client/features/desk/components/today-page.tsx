@@ -1,14 +1,14 @@
 import { Link } from 'react-router-dom';
 import type { Coverage, DeskToday } from '../../../../server/contracts/desk.ts';
 import { formatMoney } from '../../../lib/format-money.ts';
-import { formatPercent, formatQuantity } from '../../../lib/format-number.ts';
+import { formatPercent } from '../../../lib/format-number.ts';
 import { narrow } from '../../../lib/spaces.ts';
 import { usePageTitle } from '../../../lib/use-page-title.ts';
 import { ErrorPanel } from '../../../ui/error-panel.tsx';
 import { Opening } from '../../../ui/page.tsx';
 import { Waiting } from '../../../ui/waiting.tsx';
 import { useCoverage, useToday } from '../api/today.ts';
-import { widestHole } from '../coverage.ts';
+import { rateWords, widestHole } from '../coverage.ts';
 import { deskPaths } from '../desk-paths.ts';
 import { CoverageRibbon } from './coverage-ribbon.tsx';
 import { Decisions } from './decisions.tsx';
@@ -50,8 +50,8 @@ export function TodayPage() {
 
 function rates(coverage: Coverage): { from: string; to: string } {
   return {
-    from: formatQuantity(coverage.points[0]?.frequencyHz ?? 0, 'Hz', 2),
-    to: formatQuantity(coverage.points.at(-1)?.frequencyHz ?? 0, 'Hz', 2),
+    from: rateWords(coverage.points[0]?.frequencyHz ?? 0),
+    to: rateWords(coverage.points.at(-1)?.frequencyHz ?? 0),
   };
 }
 
@@ -68,12 +68,12 @@ function Conclusion({ coverage }: { coverage: Coverage }) {
           The widest hole lies{' '}
           {hole.points === 1 ? (
             <>
-              at <strong>{formatQuantity(hole.fromHz, 'Hz', 2)}</strong>
+              at <strong>{rateWords(hole.fromHz)}</strong>
             </>
           ) : (
             <>
-              between <strong>{formatQuantity(hole.fromHz, 'Hz', 2)}</strong> and{' '}
-              <strong>{formatQuantity(hole.toHz, 'Hz', 2)}</strong>
+              between <strong>{rateWords(hole.fromHz)}</strong> and{' '}
+              <strong>{rateWords(hole.toHz)}</strong>
             </>
           )}
           , {hole.worst === null ? 'where some rates have no pack' : <Worst worst={hole.worst} />}.
