@@ -198,13 +198,15 @@ async function placeDemoOrder(real: Deps, order: DemoOrder, k: number): Promise<
   await bringTo(deps, order.end, orderRef, paymentUrl);
 }
 
-async function bringTo(deps: Deps, end: End, ref: string, paymentUrl: string): Promise<void> {
+async function bringTo(deps: DemoDeps, end: End, ref: string, paymentUrl: string): Promise<void> {
   if (end === 'awaiting_payment') return;
   if (end === 'cancelled') {
+    deps.clock.pass(36);
     await cancelUnpaidOrder(deps, ref, 'Not paid in time');
     return;
   }
   await payAtStandIn(paymentUrl);
+  deps.clock.pass(4);
   const payment = await deps
     .db('payments')
     .join('orders', 'orders.id', 'payments.order_id')
@@ -214,22 +216,26 @@ async function bringTo(deps: Deps, end: End, ref: string, paymentUrl: string): P
   if (end === 'on_hold' || end === 'paid') return;
   if (end === 'refunded') {
     const owner = await staff(deps, 'owner@tockwell.example');
+    deps.clock.pass(185);
     await refundOrder(deps, owner, ref, 'Ordered the wrong rate; withdrew before packing');
     return;
   }
   await workBench(deps, end, ref);
 }
 
-async function workBench(deps: Deps, end: End, ref: string): Promise<void> {
+async function workBench(deps: DemoDeps, end: End, ref: string): Promise<void> {
   const email = end === 'picking' ? 'second-packer@tockwell.example' : 'packer@tockwell.example';
   const packer = await staff(deps, email);
+  deps.clock.pass(end === 'picking' ? 40 : 95);
   await claimOrder(deps, packer, ref);
+  deps.clock.pass(11);
   const { picks } = await viewBenchOrder(deps, packer, ref);
   const taken = end === 'picking' ? picks.slice(0, 3) : picks;
   for (const pick of taken)
     await tickPick(deps, packer, ref, { id: pick.id, quantity: pick.quantity });
   if (end === 'picking') return;
   await packOrder(deps, packer, ref);
+  deps.clock.pass(25);
   if (end === 'shipped') {
     await shipOrder(deps, packer, ref, {
       carrier: 'Quay Post',
@@ -242,12 +248,28 @@ async function staff(deps: Deps, email: string): Promise<{ id: string; name: str
   return deps.db('users').where({ email }).first('id', 'name');
 }
 
+/** A clock that runs behind the real one and can be moved on between two steps of an order. */
+interface DemoClock {
+  now(): Date;
+  pass(minutes: number): void;
+}
+type DemoDeps = Deps & { clock: DemoClock };
+
+function clockBehind(real: Deps['clock'], daysAgo: number): DemoClock {
+  let behindMs = daysAgo * 86_400_000;
+  return {
+    now: () => new Date(real.now().getTime() - behindMs),
+    pass: (minutes) => {
+      behindMs = Math.max(0, behindMs - minutes * 60_000);
+    },
+  };
+}
+
 /** The same shop some days ago; the payment service keeps its own time. */
-function atDaysAgo(deps: Deps, daysAgo: number): Deps {
-  const shift = daysAgo * 86_400_000;
+function atDaysAgo(deps: Deps, daysAgo: number): DemoDeps {
   return {
     ...deps,
-    clock: { now: () => new Date(deps.clock.now().getTime() - shift) },
+    clock: clockBehind(deps.clock, daysAgo),
     payments: {
       ...deps.payments,
       openCheckout: (request) =>

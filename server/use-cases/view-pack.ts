@@ -1,3 +1,4 @@
+import { createHash } from 'node:crypto';
 import type { PackPage } from '../contracts/packs.ts';
 import { money } from '../domain/money.ts';
 import { causesSentence, spreadCauses } from '../domain/spread-causes.ts';
@@ -7,6 +8,11 @@ import { sampleWaveform } from '../engine/waveform.ts';
 import type { Deps } from '../ports.ts';
 import { openPackBook, openToken } from './pack-book.ts';
 import { Refusal } from './refusal.ts';
+
+/** A short name for a pack that nobody ordered yet, always the same for the same token. */
+function packIdentifier(token: string): string {
+  return `TK-${createHash('sha256').update(token).digest('hex').slice(0, 8).toUpperCase()}`;
+}
 
 /** A pack in full, worked out from today's shelves and prices. */
 export async function viewPack(
@@ -48,7 +54,7 @@ export async function viewPack(
     causes,
     causesText: causesSentence(causes),
     priceLines: price.lines.map(({ label, grossMinor }) => ({ label, amount: money(grossMinor) })),
-    identifier: `Kit ${token.slice(-8)}`,
+    identifier: packIdentifier(token),
     maker: {
       name: book.settings.name,
       address: book.settings.address,
