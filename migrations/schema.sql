@@ -12,6 +12,14 @@ CREATE FUNCTION public.lots_move_by_ledger_only() RETURNS trigger
       return new;
     end $$;
 
+CREATE FUNCTION public.note_catalogue_change() RETURNS trigger
+    LANGUAGE plpgsql
+    AS $$
+    begin
+      update catalogue_revision set number = number + 1;
+      return null;
+    end $$;
+
 CREATE FUNCTION public.post_to_lot() RETURNS trigger
     LANGUAGE plpgsql
     AS $$
@@ -100,6 +108,12 @@ ALTER TABLE public.bins ALTER COLUMN id ADD GENERATED ALWAYS AS IDENTITY (
     NO MINVALUE
     NO MAXVALUE
     CACHE 1
+);
+
+CREATE TABLE public.catalogue_revision (
+    only_row boolean DEFAULT true NOT NULL,
+    number bigint DEFAULT 1 NOT NULL,
+    CONSTRAINT catalogue_revision_only_row_check CHECK (only_row)
 );
 
 CREATE TABLE public.idempotency_keys (
@@ -680,6 +694,9 @@ ALTER TABLE ONLY public.bins
 ALTER TABLE ONLY public.bins
     ADD CONSTRAINT bins_walk_once UNIQUE (walk_order);
 
+ALTER TABLE ONLY public.catalogue_revision
+    ADD CONSTRAINT catalogue_revision_pkey PRIMARY KEY (only_row);
+
 ALTER TABLE ONLY public.idempotency_keys
     ADD CONSTRAINT idempotency_keys_pkey PRIMARY KEY (scope, key);
 
@@ -847,6 +864,8 @@ CREATE TRIGGER lots_guarded BEFORE INSERT OR UPDATE ON public.lots FOR EACH ROW 
 CREATE TRIGGER order_events_append_only BEFORE DELETE OR UPDATE OR TRUNCATE ON public.order_events FOR EACH STATEMENT EXECUTE FUNCTION public.refuse_change();
 
 CREATE TRIGGER packs_frozen BEFORE DELETE OR UPDATE OR TRUNCATE ON public.packs FOR EACH STATEMENT EXECUTE FUNCTION public.refuse_change();
+
+CREATE TRIGGER parts_note_change AFTER INSERT OR DELETE OR UPDATE ON public.parts FOR EACH STATEMENT EXECUTE FUNCTION public.note_catalogue_change();
 
 CREATE TRIGGER reservations_reserve AFTER INSERT OR DELETE OR UPDATE ON public.reservations FOR EACH ROW EXECUTE FUNCTION public.reserve_on_lot();
 
