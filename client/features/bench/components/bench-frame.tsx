@@ -1,3 +1,4 @@
+import { clsx } from 'clsx';
 import type { ReactNode } from 'react';
 import type { BenchOrder } from '../../../../server/contracts/bench.ts';
 import { keepTogether } from '../../../lib/spaces.ts';
@@ -8,13 +9,21 @@ import { LateFlag } from './late-flag.tsx';
 export function BenchFrame(props: {
   order: BenchOrder;
   line: ReactNode;
+  /** While the stops can be chosen, a long line scrolls beside the one that is shown. */
+  lineScrolls?: boolean;
   place: ReactNode;
   children: ReactNode;
 }) {
   return (
     <div className="grid grid-cols-[3.75rem_1fr] lg:grid-cols-[15rem_1fr] print:block">
       <div className="no-print border-r border-line">
-        <div className="sticky top-0 max-h-dvh [scrollbar-width:thin] overflow-y-auto py-4 pr-2 lg:py-6 lg:pr-4">
+        <div
+          className={clsx(
+            'py-4 pr-2 lg:py-6 lg:pr-4',
+            props.lineScrolls === true &&
+              'sticky top-0 max-h-dvh [scrollbar-width:thin] overflow-y-auto',
+          )}
+        >
           {props.line}
         </div>
       </div>

@@ -5,22 +5,22 @@ import { bandColours } from '../../../ui/band-colours.ts';
 export function MarkingView({ marking }: { marking: Marking }) {
   if (marking.bands !== null) {
     return (
-      <ol aria-label="Bands" className="mt-3 flex flex-wrap gap-x-4 gap-y-2">
+      <ol aria-label="Bands" className="mt-2 flex flex-wrap gap-x-3 gap-y-1.5">
         {marking.bands.map((band, index) => (
           <li key={index} className="flex flex-col items-center gap-1">
-            <svg aria-hidden="true" viewBox="0 0 20 36" className="h-9 w-5">
+            <svg aria-hidden="true" viewBox="0 0 20 30" className="h-7 w-5">
               <rect
                 x="1"
                 y="1"
                 width="18"
-                height="34"
+                height="28"
                 rx="2"
                 fill={bandColours[band] ?? '#999'}
                 className="stroke-soft"
                 strokeWidth="1.5"
               />
             </svg>
-            <span className="leading-tight font-strong">{band}</span>
+            <span className="text-small leading-tight font-strong sm:text-base">{band}</span>
           </li>
         ))}
       </ol>

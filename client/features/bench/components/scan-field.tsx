@@ -41,7 +41,7 @@ export function ScanField(props: {
   return (
     <form
       className={clsx(
-        'mt-6 rounded-control border-[3px] bg-card px-4 pt-2 pb-2.5',
+        'mt-5 rounded-control border-[3px] bg-card px-4 py-2',
         hasError ? 'border-brick' : 'border-line focus-within:border-spruce',
       )}
       onSubmit={(event) => {
@@ -52,7 +52,7 @@ export function ScanField(props: {
     >
       <div className="flex items-center gap-4">
         <div className="min-w-0 flex-1">
-          <label htmlFor={id} className="block text-soft">
+          <label htmlFor={id} className="block text-small text-soft">
             {props.label}
           </label>
           <input
@@ -66,7 +66,7 @@ export function ScanField(props: {
             spellCheck={false}
             aria-invalid={hasError || undefined}
             aria-describedby={hasError ? `${id}-wrong` : undefined}
-            className="h-11 w-full bg-transparent text-head font-heavy text-ink outline-none"
+            className="h-9 w-full bg-transparent text-title font-heavy text-ink outline-none"
           />
         </div>
         <button

@@ -1,5 +1,6 @@
 import type { BenchOrder } from '../../../../server/contracts/bench.ts';
 import { ButtonLink } from '../../../ui/button.tsx';
+import { LiveRegion } from '../../../ui/live-region.tsx';
 import { benchPaths } from '../bench-paths.ts';
 import { BenchFrame } from './bench-frame.tsx';
 import { WalkLine } from './walk-line.tsx';
@@ -12,10 +13,8 @@ export function ShippedView({ order }: { order: BenchOrder }) {
       place="shipped"
       line={<WalkLine picks={order.picks} current={null} end="done" />}
     >
-      <h1
-        role="status"
-        className="py-6 text-[clamp(2rem,5vw,4rem)] leading-[1.1] font-light [&_strong]:font-heavy"
-      >
+      <LiveRegion words={`${order.ref} is on its way.`} />
+      <h1 className="py-6 text-[clamp(2rem,5vw,4rem)] leading-[1.1] font-light [&_strong]:font-heavy">
         <strong>{order.ref}</strong> is on its way
         {order.shipment !== null && (
           <>

@@ -96,8 +96,8 @@ function BinAndCount({ stop }: { stop: Pick }) {
 function WhatToTake({ stop, order }: { stop: Pick; order: BenchOrder }) {
   const roles = rolesText(stop.roles);
   return (
-    <div className="mt-6 grid items-center gap-x-8 gap-y-4 sm:grid-cols-[auto_1fr]">
-      <div className="flex justify-start rounded-edge bg-paper-deep p-5 [&_svg]:h-20! [&_svg]:w-auto! sm:[&_svg]:h-24!">
+    <div className="mt-5 grid items-center gap-x-8 gap-y-3 sm:grid-cols-[auto_1fr]">
+      <div className="flex justify-center rounded-edge bg-paper-deep p-4 sm:w-60 [&_svg]:h-auto! [&_svg]:max-h-16 [&_svg]:w-auto! [&_svg]:min-w-28 sm:[&_svg]:max-h-22">
         <PartDrawing part={drawableOf(stop, order.lines)} />
       </div>
       <div className="min-w-0">

@@ -46,6 +46,7 @@ export function WalkView({ order, bag }: { order: BenchOrder; bag: ReactNode }) 
     <BenchFrame
       order={order}
       place={place}
+      lineScrolls
       line={
         <WalkLine
           picks={order.picks}
