@@ -1,5 +1,4 @@
-import bcrypt from 'bcryptjs';
-import { prepared } from '../server/domain/passwords.ts';
+import { hashPassword } from '../server/use-cases/password-hash.ts';
 import type { Knex } from 'knex';
 import { demoCatalogue, type DemoPart } from './demo-catalogue.ts';
 
@@ -51,7 +50,7 @@ export async function seedDemoShop(db: Knex): Promise<boolean> {
 }
 
 async function seedPeople(trx: Knex.Transaction): Promise<void> {
-  const passwordHash = await bcrypt.hash(prepared(demoPassword), 10);
+  const passwordHash = await hashPassword(demoPassword);
   await trx('users')
     .insert(demoPeople.map((person) => ({ ...person, password_hash: passwordHash })))
     .onConflict('email')

@@ -14,7 +14,9 @@ const log = pino({ level: config.logLevel });
 const deps = composeDeps(config);
 const mail = createSmtpMail(config.smtpUrl, config.mailFrom);
 const pool = new pg.Pool({ connectionString: config.databaseUrl, max: 5 });
-pool.on('error', (error) => log.warn({ err: error }, 'database connection lost'));
+const noteLoss = (error: Error) => log.warn({ err: error }, 'database connection lost');
+pool.on('error', noteLoss);
+pool.on('connect', (client) => client.on('error', noteLoss));
 
 const app = createApp(deps, {
   sessionSecret: config.sessionSecret,

@@ -3,7 +3,6 @@ import type { BuildSheet } from '../contracts/orders.ts';
 import { analyseCycle } from '../engine/cycle.ts';
 import type { Circuit } from '../engine/circuit.ts';
 import { formatSi } from '../engine/si-format.ts';
-import { countWords } from './wording.ts';
 
 type Step = BuildSheet['steps'][number];
 type Reading = BuildSheet['readings'][number];
@@ -105,9 +104,4 @@ export function expectedReadings(circuit: Circuit, rate: string): Reading[] {
     },
   );
   return readings;
-}
-
-/** "three kits", "one kit". */
-export function kitsWords(count: number): string {
-  return `${countWords(count)} ${count === 1 ? 'kit' : 'kits'}`;
 }

@@ -1,5 +1,3 @@
-import { createHash } from 'node:crypto';
-
 /**
  * Words and runs that guessers try first, whole or repeated. A short list of the shop's own; a real
  * deployment may lengthen it. NIST SP 800-63B-4 asks for a comparison of the whole password.
@@ -35,12 +33,4 @@ export function commonPassword(password: string, own: readonly string[]): boolea
     const mine = text.toLowerCase().trim();
     return mine.length >= 4 && (plain === mine || plain === mine.split('@')[0]);
   });
-}
-
-/**
- * The text that is hashed: normalised, then digested, since bcrypt looks at 72 bytes only and every
- * character of a long password shall count. Base64 keeps zero bytes out.
- */
-export function prepared(password: string): string {
-  return createHash('sha256').update(password.normalize('NFKC')).digest('base64');
 }

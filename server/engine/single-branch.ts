@@ -36,7 +36,8 @@ export function singleBranch(warm: WarmCircuit, reduced: ReducedState, sign: 1 |
 type Run = Pick<StateBranch, 'tauSeconds' | 'secondsBetween' | 'voltsAfter'>;
 
 function exponentialRun(warm: WarmCircuit, drainOhms: number, settlingVolts: number): Run {
-  const { constantFarads, faradsAt, cornerVolts } = warm.capacitance;
+  const { constantFarads, cornerVolts } = warm.capacitance;
+  const faradsAt = (volts: number) => warm.capacitance.faradsAt(volts);
   const spans = (from: number, to: number) => Math.log1p((to - from) / (settlingVolts - to));
   const at = (from: number, span: number) =>
     settlingVolts - (settlingVolts - from) * Math.exp(-span);

@@ -44,8 +44,9 @@ export function startWorker(deps: JobDeps, pool: Pool, log: Log): Promise<Runner
     pollInterval: 1000,
     noHandleSignals: true,
     logger: new Logger(() => (level, message) => {
-      if (level === 'error') log.error(message);
-      else if (level === 'warning') log.warn(message);
+      const name: string = level;
+      if (name === 'error') log.error(message);
+      else if (name === 'warning') log.warn(message);
     }),
   });
 }

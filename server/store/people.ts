@@ -30,11 +30,6 @@ export async function addUser(db: Database, user: Omit<User, 'id'>): Promise<Use
   return row;
 }
 
-export interface Session {
-  id: string;
-  userId: string;
-}
-
 /** Opens a session that ends at `expiresAt` whatever happens. */
 export async function addSession(
   db: Database,

@@ -3,7 +3,7 @@ import { resolveBrief, type BriefInHand } from '../domain/brief.ts';
 import { isKind, partsOf, type CataloguePart, type PartOf } from '../domain/catalogue.ts';
 import { cautionsFor } from '../domain/cautions.ts';
 import { money } from '../domain/money.ts';
-import { writePackContent, readPackContent } from '../domain/pack-brief-code.ts';
+import { writePackContent, readPackContent } from './pack-token.ts';
 import { demandOfChoice, type PackChoice } from '../domain/pack-choice.ts';
 import { inBillOrder, toPackPart } from '../domain/pack-parts.ts';
 import { kitPrice, type KitPrice, type PriceRule } from '../domain/price.ts';

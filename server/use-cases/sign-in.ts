@@ -1,7 +1,6 @@
 import { createHash, randomBytes } from 'node:crypto';
-import bcrypt from 'bcryptjs';
 import type { Me, SignIn, SignUp } from '../contracts/auth.ts';
-import { commonPassword, prepared } from '../domain/passwords.ts';
+import { commonPassword } from '../domain/passwords.ts';
 import type { Deps } from '../ports.ts';
 import { basketLines, findBasket, mergeBaskets, openBasket } from '../store/baskets.ts';
 import type { Database } from '../store/connection.ts';
@@ -15,9 +14,9 @@ import {
   type User,
 } from '../store/people.ts';
 import { breaksConstraint, inTransaction } from '../store/transaction.ts';
+import { hashPassword, passwordMatches } from './password-hash.ts';
 import { Refusal } from './refusal.ts';
 
-const bcryptRounds = 10;
 const failureWindowMinutes = 15;
 const failuresPerEmail = 30;
 const failuresPerAddress = 600;
@@ -61,7 +60,7 @@ export async function signUp(
       },
     ]);
   }
-  const passwordHash = await bcrypt.hash(prepared(input.password), bcryptRounds);
+  const passwordHash = await hashPassword(input.password);
   try {
     return await inTransaction(deps.db, async (trx) => {
       const user = await addUser(trx, {
@@ -87,9 +86,6 @@ export async function signUp(
   }
 }
 
-/** A hash to compare against when there is no such account, so that both cases take as long. */
-const nobodyHash = bcrypt.hashSync(prepared('nobody-has-this-password'), bcryptRounds);
-
 /** Signs a person in. Too many failures for one account or from one address make both wait. */
 export async function signIn(
   deps: Pick<Deps, 'db' | 'clock'>,
@@ -107,7 +103,7 @@ export async function signIn(
     );
   }
   const user = await findUserByEmail(deps.db, input.email);
-  const matches = await bcrypt.compare(prepared(input.password), user?.passwordHash ?? nobodyHash);
+  const matches = await passwordMatches(input.password, user?.passwordHash ?? null);
   if (user === null || !matches) {
     await noteSignInFailure(deps.db, { ...who, at: now });
     throw new Refusal(

@@ -122,7 +122,7 @@ function engineSpeed(): void {
 function bareApp(db: Knex) {
   const app = express();
   app.get('/row', async (_req, res) => {
-    res.json((await db.raw('select 1 as one')).rows[0]);
+    res.json(await db.first(db.raw('1 as one')));
   });
   return app;
 }
