@@ -3,7 +3,7 @@ import type { ReactNode } from 'react';
 function Cord() {
   return (
     <svg aria-hidden="true" viewBox="0 0 24 92" className="tag-cord" preserveAspectRatio="none">
-      <path d="M12 4C7.5 22 7 44 10.5 58" className="fill-none stroke-cord" strokeWidth="1.75" />
+      <path d="M12 4C7.5 20 7 38 10 52.5" className="fill-none stroke-cord" strokeWidth="1.75" />
       <path d="M12 4C16.5 26 16 60 12.5 88" className="fill-none stroke-cord" strokeWidth="1.75" />
       <ellipse
         cx="12"

@@ -46,7 +46,15 @@ export function PackTag({ pack, brief, packPath, action }: PackTagProps) {
           <div className="mt-4 flex flex-wrap items-end justify-between gap-x-4 gap-y-3 border-t border-line pt-4">
             <div>
               <Money value={pack.price.unit} className="text-head leading-none font-heavy" />
-              <span className="block text-small text-soft">a kit, with tax</span>
+              <span className="block text-small text-soft">
+                {brief.quantity === 1 ? (
+                  'a kit, with tax'
+                ) : (
+                  <>
+                    a kit; {brief.quantity} come to <Money value={pack.price.total} />
+                  </>
+                )}
+              </span>
             </div>
             {action}
           </div>
