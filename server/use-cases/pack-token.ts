@@ -5,7 +5,11 @@ import {
   targetUnits,
   type ParsedBrief,
 } from '../contracts/brief.ts';
-import { z } from 'zod';
+import {
+  packTokenSchema,
+  packTokenVersion,
+  type PackTokenFields,
+} from '../contracts/pack-token.ts';
 import { packRoles, type PackRole } from '../contracts/packs.ts';
 import type { PackChoice } from '../domain/pack-choice.ts';
 
@@ -14,8 +18,6 @@ export interface PackTokenContent {
   choice: PackChoice;
   brief: ParsedBrief;
 }
-
-const version = 1;
 
 /** Writes a token's content as compact text, so that links to a pack stay short. */
 export function writePackContent({ choice, brief }: PackTokenContent): string {
@@ -32,7 +34,7 @@ export function writePackContent({ choice, brief }: PackTokenContent): string {
         ? 1
         : [ledColours.indexOf(brief.load.colour), brief.load.amps];
   return JSON.stringify([
-    version,
+    packTokenVersion,
     join,
     parts,
     [
@@ -51,29 +53,9 @@ export function writePackContent({ choice, brief }: PackTokenContent): string {
   ]);
 }
 
-const number = z.number();
-const contentSchema = z.tuple([
-  z.literal(version),
-  z.union([z.literal(0), z.literal(1), z.literal(2)]),
-  z.array(z.int().min(0)),
-  z.tuple([
-    number,
-    number,
-    number,
-    z.union([number, z.string()]),
-    z.union([number, z.tuple([number, number])]),
-    number,
-    number,
-    number,
-    number,
-    number,
-    number,
-  ]),
-]);
-
 /** Reads a token's content; null when it is of another version or makes no sense. */
 export function readPackContent(text: string): PackTokenContent | null {
-  const raw = contentSchema.safeParse(parseJson(text));
+  const raw = packTokenSchema.safeParse(parseJson(text));
   if (!raw.success) return null;
   const [, join, flat, fields] = raw.data;
   const parts = readParts(flat);
@@ -101,7 +83,7 @@ function readParts(flat: readonly number[]): PackChoice['parts'] | null {
   return parts;
 }
 
-function readBrief(fields: z.output<typeof contentSchema>[3]): unknown {
+function readBrief(fields: PackTokenFields): unknown {
   const [value, unit, duty, supply, load, band, min, max, mounting, care, quantity] = fields;
   return {
     target: { value, unit: targetUnits[unit] },
