@@ -75,7 +75,7 @@ function Undo({ stop, onUndo }: { stop: Pick; onUndo: (stop: Pick) => void }) {
 function BinAndCount({ stop }: { stop: Pick }) {
   const done = isTaken(stop);
   return (
-    <div className="mt-4 flex flex-wrap items-end justify-between gap-x-10 gap-y-2">
+    <div className="mt-4 flex flex-wrap items-end justify-between gap-x-4 gap-y-2">
       <h1
         id="stop"
         className="text-[clamp(4rem,15vw,9.5rem)] leading-[0.9] font-heavy tracking-tight whitespace-nowrap"
@@ -83,9 +83,9 @@ function BinAndCount({ stop }: { stop: Pick }) {
         <span className="sr-only">Bin </span>
         {stop.bin}
       </h1>
-      <p className="flex items-baseline gap-3 leading-none whitespace-nowrap sm:pb-2">
-        <span className="text-title text-soft">{done ? 'in the tray' : 'take'}</span>
-        <strong className="text-[clamp(4rem,9vw,6rem)] leading-[0.9] font-heavy">
+      <p className="flex items-baseline gap-2 leading-none whitespace-nowrap sm:gap-3 sm:pb-2">
+        <span className="text-lead text-soft sm:text-title">{done ? 'in the tray' : 'take'}</span>
+        <strong className="text-[clamp(3.25rem,9vw,6rem)] leading-[0.9] font-heavy">
           {done ? stop.picked : stop.quantity - stop.picked}
         </strong>
       </p>

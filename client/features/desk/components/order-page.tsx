@@ -3,13 +3,13 @@ import type { DeskOrder } from '../../../../server/contracts/desk.ts';
 import { formatDateTime } from '../../../lib/format-time.ts';
 import { usePageTitle } from '../../../lib/use-page-title.ts';
 import { ErrorPanel } from '../../../ui/error-panel.tsx';
-import { Ledger } from '../../../ui/ledger.tsx';
 import { Money } from '../../../ui/money.tsx';
 import { Opening } from '../../../ui/page.tsx';
 import { Waiting } from '../../../ui/waiting.tsx';
 import { useOrder } from '../api/orders.ts';
 import { deskPaths } from '../desk-paths.ts';
 import { orderWords } from '../order-words.ts';
+import { ChangeLedger } from './change-ledger.tsx';
 import { OrderKits } from './order-kits.tsx';
 import { OrderSums } from './order-sums.tsx';
 import { Refund } from './refund.tsx';
@@ -55,12 +55,9 @@ function OrderView({ order }: { order: DeskOrder }) {
               <h2 id="happened" className="mb-2 text-title font-strong">
                 What happened
               </h2>
-              <Ledger
+              <ChangeLedger
                 label="What happened with this order"
-                entries={order.events.map((event, index) => ({
-                  ...worded(event),
-                  key: `${index}`,
-                }))}
+                changes={order.events.map(worded)}
               />
             </section>
             <Payments payments={order.payments} />

@@ -3,12 +3,12 @@ import type { DeskPart } from '../../../../server/contracts/desk.ts';
 import { bindUnits } from '../../../lib/spaces.ts';
 import { usePageTitle } from '../../../lib/use-page-title.ts';
 import { ErrorPanel } from '../../../ui/error-panel.tsx';
-import { Ledger } from '../../../ui/ledger.tsx';
 import { Opening } from '../../../ui/page.tsx';
 import { Waiting } from '../../../ui/waiting.tsx';
 import { useHistory, usePart } from '../api/parts.ts';
 import { deskPaths } from '../desk-paths.ts';
 import { factsOf } from '../part-facts.ts';
+import { ChangeLedger } from './change-ledger.tsx';
 import { Lots } from './lots.tsx';
 import { PriceForm } from './price-form.tsx';
 import { StockLedger } from './stock-ledger.tsx';
@@ -124,10 +124,7 @@ function History({ id }: { id: string }) {
           <h2 id="changes" className="mb-2 text-title font-strong">
             Who changed what
           </h2>
-          <Ledger
-            label="Who changed what"
-            entries={audit.map((entry, index) => ({ ...entry, key: `${index}` }))}
-          />
+          <ChangeLedger label="Who changed what" changes={audit} />
         </section>
       )}
     </>
