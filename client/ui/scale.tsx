@@ -52,7 +52,7 @@ export function Scale({ asked, error, low, high }: ScaleProps) {
         <circle cx={x(error)} cy="18" r="5" className="fill-spruce stroke-card" strokeWidth="2" />
       </svg>
       <div aria-hidden="true" className="relative h-5 text-small text-soft">
-        {asked / reach > 0.4 ? (
+        {asked / reach > 0.5 ? (
           <>
             <ScaleLabel at={x(-asked) / width} words={`${minus}${percent}`} edge="start" />
             <ScaleLabel at={0.5} words="asked" edge="middle" />

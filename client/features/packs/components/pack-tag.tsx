@@ -1,3 +1,4 @@
+import { clsx } from 'clsx';
 import type { ReactNode } from 'react';
 import { Link } from 'react-router-dom';
 import type { ResolvedBrief } from '../../../../server/contracts/brief.ts';
@@ -102,15 +103,20 @@ function ScaleOf({ pack, brief }: { pack: Pack; brief: ResolvedBrief }) {
 }
 
 function TagParts({ pack }: { pack: Pack }) {
+  const parts = tagParts(pack);
   return (
     <ul
       aria-label="Timing parts"
       className="mt-3 flex min-h-[5.75rem] flex-wrap items-end justify-between gap-x-2 gap-y-3 border-t border-line pt-4"
     >
-      {tagParts(pack).map((each) => (
+      {parts.map((each) => (
         <li key={each.key} className="flex min-w-0 flex-1 flex-col items-center text-center">
           <PartDrawing part={each.part} />
-          <span className="mt-1 font-strong whitespace-nowrap">{each.value}</span>
+          <span
+            className={clsx('mt-1 font-strong whitespace-nowrap', parts.length > 3 && 'text-small')}
+          >
+            {each.value}
+          </span>
           <span className="text-small text-soft">{each.roles}</span>
         </li>
       ))}
