@@ -86,9 +86,15 @@ function cornerHz(
   return extreme;
 }
 
+/** A resistor at its corner: its tolerance holds at 25 °C, and it drifts from there. */
+function resistorCorner(part: StockedResistor, kelvin: number, sign: number): number {
+  const drift = Math.abs(part.temperatureCoefficientPerKelvin) * kelvin;
+  return part.ohms * (1 + sign * part.tolerance) * (1 + sign * drift);
+}
+
 /** Timing resistance at its corner; two parts keep their own tolerances. */
 function timingCorner(candidate: Candidate, kelvin: number, sign: number): number {
-  const at = (part: StockedResistor) => part.ohms * (1 + sign * widenedResistor(part, kelvin));
+  const at = (part: StockedResistor) => resistorCorner(part, kelvin, sign);
   const first = at(candidate.first);
   if (candidate.second === null) return first;
   const second = at(candidate.second);
@@ -106,17 +112,16 @@ function passiveCorner(
   const kelvin = widestKelvin(brief);
   const { r1, r2, r3 } = frame.thresholds;
   const part = frame.capacitor;
-  const capacitorTolerance =
-    part.tolerance +
-    Math.abs(part.temperatureCoefficientPerKelvin) * kelvin +
-    part.temperatureSpread;
+  const capacitorFactor =
+    (1 + sign * part.tolerance) *
+    (1 + sign * Math.abs(part.temperatureCoefficientPerKelvin) * kelvin) *
+    (1 + sign * part.temperatureSpread);
   const circuit = frameCircuit(frame, brief, timingCorner(candidate, kelvin, sign));
   circuit.supplyVolts = shared.supplyVolts;
-  circuit.r1Ohms = r1.ohms * (1 + sign * widenedResistor(r1, kelvin));
-  circuit.r2Ohms = r2.ohms * (1 + sign * widenedResistor(r2, kelvin));
-  circuit.r3Ohms = r3.ohms * (1 - sign * widenedResistor(r3, kelvin));
-  circuit.capacitor.farads =
-    part.farads * (1 + sign * capacitorTolerance) + (sign > 0 ? limits.strayFarads : 0);
+  circuit.r1Ohms = resistorCorner(r1, kelvin, sign);
+  circuit.r2Ohms = resistorCorner(r2, kelvin, sign);
+  circuit.r3Ohms = resistorCorner(r3, kelvin, -sign);
+  circuit.capacitor.farads = part.farads * capacitorFactor + (sign > 0 ? limits.strayFarads : 0);
   circuit.comparator.highOhms *= shared.outputFactor;
   circuit.comparator.lowOhms *= shared.outputFactor;
   if (circuit.load && shared.forwardVolts !== null) {

@@ -49,7 +49,7 @@ const quickSamples = 256;
 const quickFailures = 16;
 
 /**
- * Whether at least `share` (0.9…1) of kits hold the band, by the same kits as `kitYield`. Gives up early
+ * Whether at least `share` (0.98…1) of kits hold the band, by the same kits as `kitYield`. Gives up early
  * when a first lot of 256 has more than 16 outside, which one in a million packs of 99 % would show.
  */
 export function holdsBand(candidate: Candidate, brief: SearchBrief, share: number): boolean {
