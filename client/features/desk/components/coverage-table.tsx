@@ -38,6 +38,7 @@ export function CoverageTable({ coverage }: { coverage: Coverage }) {
             {
               key: 'held',
               head: `Within ${asked}`,
+              align: 'end',
               cell: (point) => (isHeld(point, coverage.band) ? 'held' : 'not held'),
             },
           ]}

@@ -1,3 +1,4 @@
+import type { Money as MoneyValue } from '../../../../server/contracts/common.ts';
 import type { DeskOrder } from '../../../../server/contracts/desk.ts';
 import { formatDateTime, formatMoment } from '../../../lib/format-time.ts';
 import { Money } from '../../../ui/money.tsx';
@@ -7,8 +8,6 @@ export function OrderSums({ order }: { order: DeskOrder }) {
   const rows = [
     { name: 'Kits', value: order.goods },
     { name: order.shippingMethod.name, value: order.shipping },
-    { name: 'of which tax', value: order.tax },
-    ...(order.refunded.amount > 0 ? [{ name: 'Refunded', value: order.refunded }] : []),
   ];
   return (
     <div className="space-y-12">
@@ -31,6 +30,8 @@ export function OrderSums({ order }: { order: DeskOrder }) {
               <Money value={order.total} />
             </dd>
           </div>
+          <After name="of which tax" value={order.tax} />
+          {order.refunded.amount > 0 && <After name="Refunded" value={order.refunded} />}
         </dl>
       </section>
       <section aria-labelledby="goes">
@@ -52,6 +53,17 @@ export function OrderSums({ order }: { order: DeskOrder }) {
   );
 }
 
+function After({ name, value }: { name: string; value: MoneyValue }) {
+  return (
+    <div className="flex justify-between gap-6 text-small text-soft">
+      <dt>{name}</dt>
+      <dd>
+        <Money value={value} />
+      </dd>
+    </div>
+  );
+}
+
 function addressLines({ shippingAddress: to }: DeskOrder): string[] {
   const town = `${to.postalCode} ${to.city}`.trim();
   return [to.name, to.line1, to.line2, town, to.region, countryName(to.country)].filter(
@@ -68,9 +80,12 @@ function countryName(code: string): string {
   }
 }
 
-function shippingSentence({ shipment, shipBy }: DeskOrder): string {
+function shippingSentence({ status, shipment, shipBy }: DeskOrder): string {
   if (shipment !== null) {
     return `Sent ${formatDateTime(shipment.shippedAt)} with ${shipment.carrier}, tracking ${shipment.tracking}.`;
   }
-  return shipBy === null ? 'Nothing to ship.' : `To be shipped by ${formatMoment(shipBy)}.`;
+  const isOver = status === 'refunded' || status === 'cancelled';
+  return shipBy === null || isOver
+    ? 'Nothing to ship.'
+    : `To be shipped by ${formatMoment(shipBy)}.`;
 }

@@ -1,0 +1,111 @@
+import { describe, expect, it } from 'vitest';
+import { shipByWords, timeLeftWords } from '../../client/features/bench/ship-by.ts';
+import {
+  lastStop,
+  nextStop,
+  readScan,
+  stageOf,
+  withPicked,
+} from '../../client/features/bench/walk.ts';
+import { noBreak } from '../../client/lib/spaces.ts';
+import { sampleOrder, samplePick } from './bench-samples.ts';
+
+const plain = (text: string) => text.replaceAll(noBreak, ' ');
+
+describe('nextStop', () => {
+  const taken = (id: string) => samplePick({ id, picked: 2 });
+  const open = (id: string) => samplePick({ id });
+
+  it('is the first open stop after the last one made', () => {
+    expect(nextStop([open('1'), taken('2'), open('3')], '2')?.id).toBe('3');
+  });
+  it('comes back to a stop that was passed over', () => {
+    expect(nextStop([open('1'), taken('2'), taken('3')], '3')?.id).toBe('1');
+  });
+  it('counts a stop with too few pieces in the tray as open', () => {
+    expect(nextStop([samplePick({ id: '1', picked: 1 })], null)?.id).toBe('1');
+  });
+  it('is none when everything is in the tray', () => {
+    expect(nextStop([taken('1'), taken('2')], '1')).toBeNull();
+  });
+});
+
+describe('lastStop', () => {
+  const picks = [
+    samplePick({ id: '1', picked: 2 }),
+    samplePick({ id: '2', picked: 2 }),
+    samplePick({ id: '3' }),
+  ];
+
+  it('is the stop made last here, not the last of the walk', () => {
+    expect(lastStop(picks, ['2', '1'])?.id).toBe('1');
+  });
+  it('is the last one done of the walk when nothing was made here yet', () => {
+    expect(lastStop(picks, [])?.id).toBe('2');
+  });
+  it('is none when the tray is empty', () => {
+    expect(lastStop([samplePick({ id: '1' })], ['1'])).toBeNull();
+  });
+});
+
+describe('readScan', () => {
+  const { picks } = sampleOrder();
+  const stop = picks[1];
+  if (stop === undefined) throw new Error('The sample has three stops.');
+
+  it.each(['D-64', 'd64', ' D 64 ', 'TW-R1-453K', 'tw_r1_453k'])('takes %j at D-64', (code) => {
+    expect(readScan(code, stop, picks).kind).toBe('right');
+  });
+  it('says which stop a code of this walk belongs to, and what is wanted here', () => {
+    expect(readScan('J-08', stop, picks)).toEqual({
+      kind: 'wrong',
+      sentence: 'J-08 is stop 3 of this walk. This stop wants bin D-64 or TW-R1-453K.',
+    });
+  });
+  it('says that a strange code is not on this walk', () => {
+    expect(readScan('Z-99', stop, picks)).toMatchObject({
+      sentence: expect.stringContaining('Z-99 is not on this walk.') as string,
+    });
+  });
+  it('takes a bare Enter, as scanners send it, for nothing at all', () => {
+    expect(readScan('  ', stop, picks).kind).toBe('empty');
+  });
+});
+
+describe('stageOf', () => {
+  const allTaken = sampleOrder().picks.map((pick) => ({ ...pick, picked: pick.quantity }));
+  it.each([
+    ['unclaimed', sampleOrder({ status: 'paid', claimedBy: null, mine: false })],
+    ['elsewhere', sampleOrder({ claimedBy: 'Maud Tarrow', mine: false })],
+    ['walk', sampleOrder()],
+    ['bag', sampleOrder({ picks: allTaken })],
+    ['ship', sampleOrder({ status: 'packed', picks: allTaken })],
+    ['shipped', sampleOrder({ status: 'shipped', picks: allTaken })],
+  ])('is %s', (stage, order) => {
+    expect(stageOf(order)).toBe(stage);
+  });
+});
+
+describe('withPicked', () => {
+  it('changes one pick and leaves the order it was given alone', () => {
+    const order = sampleOrder();
+    expect(withPicked(order, '2', 2).picks.map((pick) => pick.picked)).toEqual([0, 2, 0]);
+    expect(order.picks.map((pick) => pick.picked)).toEqual([0, 0, 0]);
+  });
+});
+
+describe('ship-by words', () => {
+  const at = (hour: number, day = 1) => new Date(2026, 11, day, hour, 0);
+  const iso = (date: Date) => date.toISOString();
+
+  it('say today and tomorrow, and the day of the week further on', () => {
+    expect(plain(shipByWords(iso(at(16)), at(9)))).toBe('16:00 today');
+    expect(plain(shipByWords(iso(at(16, 2)), at(9)))).toBe('16:00 tomorrow');
+    expect(plain(shipByWords(iso(at(16, 4)), at(9)))).toBe('Fri 4 Dec, 16:00');
+  });
+  it('say how much time is left, or how late it is', () => {
+    expect(plain(timeLeftWords(iso(at(16)), at(14)))).toBe('in 2 h');
+    expect(plain(timeLeftWords(iso(at(14)), new Date(2026, 11, 1, 14, 40)))).toBe('late by 40 min');
+    expect(plain(timeLeftWords(iso(at(16, 5)), at(16)))).toBe('in 4 days');
+  });
+});
