@@ -22,7 +22,7 @@ export function WalkLine({ picks, current, end, onChoose }: WalkLineProps) {
   useEffect(() => {
     const stop = list.current?.querySelector<HTMLElement>('[aria-current]');
     const frame = list.current?.parentElement;
-    if (stop == null || frame == null) return;
+    if (!stop || !frame) return;
     frame.scrollTo({ top: stop.offsetTop - (frame.clientHeight - stop.offsetHeight) / 2 });
   }, [current, end]);
   const bagState: State = end === 'bag' ? 'now' : end === 'ahead' ? 'ahead' : 'done';
