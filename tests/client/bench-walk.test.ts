@@ -106,6 +106,7 @@ describe('ship-by words', () => {
   it('say how much time is left, or how late it is', () => {
     expect(plain(timeLeftWords(iso(at(16)), at(14)))).toBe('in 2 h');
     expect(plain(timeLeftWords(iso(at(14)), new Date(2026, 11, 1, 14, 40)))).toBe('late by 40 min');
+    expect(plain(timeLeftWords(iso(at(16, 2)), new Date(2026, 11, 1, 14, 7)))).toBe('in 26 h');
     expect(plain(timeLeftWords(iso(at(16, 5)), at(16)))).toBe('in 4 days');
   });
 });

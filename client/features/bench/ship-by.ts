@@ -14,6 +14,7 @@ export function shipByWords(shipBy: string, now: Date): string {
 function spanWords(minutes: number): string {
   if (minutes < 60) return `${minutes}${noBreak}min`;
   if (minutes >= 48 * 60) return `${Math.round(minutes / 1440)}${noBreak}days`;
+  if (minutes >= 12 * 60) return `${Math.round(minutes / 60)}${noBreak}h`;
   const rest = minutes % 60;
   return `${Math.floor(minutes / 60)}${noBreak}h${rest === 0 ? '' : `${noBreak}${rest}${noBreak}min`}`;
 }

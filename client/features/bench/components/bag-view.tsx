@@ -4,15 +4,22 @@ import { bindUnits } from '../../../lib/spaces.ts';
 import { Button } from '../../../ui/button.tsx';
 import { Notice } from '../../../ui/notice.tsx';
 import { PartsTable } from '../../../ui/parts-table.tsx';
+import { useFocusOnArrival } from '../use-focus-on-arrival.ts';
 import { useMove } from '../api/bench-order.ts';
 
 /** All is in the tray: what goes into each bag, what must be printed on it, and closing it. */
 export function BagView({ order }: { order: BenchOrder }) {
   const pack = useMove(order.ref);
+  const heading = useFocusOnArrival();
   const bags = order.lines.reduce((sum, line) => sum + line.quantity, 0);
   return (
     <section aria-labelledby="bag" className="animate-rise">
-      <h1 id="bag" className="py-6 text-[clamp(2rem,5vw,4rem)] leading-[1.1] font-light">
+      <h1
+        ref={heading}
+        id="bag"
+        tabIndex={-1}
+        className="py-6 text-[clamp(2rem,5vw,4rem)] leading-[1.1] font-light outline-none print:hidden"
+      >
         Everything is in the tray. Fill{' '}
         <strong className="font-heavy">{bags === 1 ? 'one bag' : `${bags} bags`}</strong>.
       </h1>
@@ -50,6 +57,7 @@ function BagContents(props: { line: BenchOrder['lines'][number]; orderRef: strin
   const { line } = props;
   return (
     <div className="border-t-2 border-ink pt-3">
+      <p className="hidden text-title font-heavy print:block">{props.orderRef}</p>
       <div className="flex flex-wrap justify-between gap-x-8">
         <h2 className="text-title leading-snug font-strong">{bindUnits(line.sentence)}</h2>
         <p className="text-title font-heavy whitespace-nowrap">

@@ -2,11 +2,13 @@ import type { BenchOrder } from '../../../../server/contracts/bench.ts';
 import { ButtonLink } from '../../../ui/button.tsx';
 import { LiveRegion } from '../../../ui/live-region.tsx';
 import { benchPaths } from '../bench-paths.ts';
+import { useFocusOnArrival } from '../use-focus-on-arrival.ts';
 import { BenchFrame } from './bench-frame.tsx';
 import { WalkLine } from './walk-line.tsx';
 
 /** The end of the walk. */
 export function ShippedView({ order }: { order: BenchOrder }) {
+  const heading = useFocusOnArrival();
   return (
     <BenchFrame
       order={order}
@@ -14,7 +16,11 @@ export function ShippedView({ order }: { order: BenchOrder }) {
       line={<WalkLine picks={order.picks} current={null} end="done" />}
     >
       <LiveRegion words={`${order.ref} is on its way.`} />
-      <h1 className="py-6 text-[clamp(2rem,5vw,4rem)] leading-[1.1] font-light [&_strong]:font-heavy">
+      <h1
+        ref={heading}
+        tabIndex={-1}
+        className="py-6 text-[clamp(2rem,5vw,4rem)] leading-[1.1] font-light outline-none [&_strong]:font-heavy"
+      >
         <strong>{order.ref}</strong> is on its way
         {order.shipment !== null && (
           <>
