@@ -57,25 +57,29 @@ function requireFinite(answer: AnalyseResponse): void {
 function spreadOf(
   circuit: Circuit,
   frequencyHz: number,
-  tolerances: NonNullable<AnalyseRequest['tolerances']>,
+  asked: NonNullable<AnalyseRequest['tolerances']>,
 ): AnalyseResponse['spread'] {
+  const { thresholds, timing, capacitor, samples } = asked;
+  const tolerances = { thresholds, timing, capacitor };
   const quick = circuit.timing.kind === 'single' && circuit.capacitor.biasHalvingVolts === null;
-  if (!quick && tolerances.samples > slowSamples) {
+  if (!quick && samples > slowSamples) {
     const message = `For steered timing or a bias-dependent capacitor take at most ${slowSamples} samples.`;
     throw new Refusal('invalid', message, [{ path: 'tolerances.samples', message }]);
   }
   const { minHz, maxHz } = worstCase(circuit, tolerances);
   const { yieldWithinBand, yieldStandardError } = monteCarlo(circuit, tolerances, {
-    distribution: tolerances.distribution,
-    targetHz: tolerances.targetHz ?? frequencyHz,
-    band: tolerances.band,
-    samples: tolerances.samples,
-    seed: tolerances.seed,
+    distribution: asked.distribution,
+    targetHz: asked.targetHz ?? frequencyHz,
+    band: asked.band,
+    samples,
+    seed: asked.seed,
   });
-  return {
-    worstCase: { minHz, maxHz },
-    rssFraction: rssFraction(rateSensitivities(circuit), tolerances),
-    yieldWithinBand,
-    yieldStandardError,
-  };
+  const rss = rssFraction(rateSensitivities(circuit), tolerances);
+  if (![minHz, maxHz, rss].every(Number.isFinite)) {
+    throw new Refusal(
+      'impossible-brief',
+      'This circuit is on the verge of standing still, so its spread has no end. Bring its values nearer to real parts, or leave the tolerances out.',
+    );
+  }
+  return { worstCase: { minHz, maxHz }, rssFraction: rss, yieldWithinBand, yieldStandardError };
 }
