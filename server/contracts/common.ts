@@ -6,14 +6,17 @@ export function quantity(what: string, min: number, max: number, unit: string) {
   return z.number({ error: sentence }).min(min, sentence).max(max, sentence);
 }
 
-/** Trimmed text of bounded length without control characters. */
+/** Trimmed text of bounded length without control characters or halves of characters. */
 export function line(what: string, max: number, min = 1) {
   return z
     .string({ error: `${what} must be text.` })
     .trim()
     .min(min, min === 1 ? `${what} is missing.` : `${what} needs at least ${min} characters.`)
     .max(max, `${what} is longer than ${max} characters; shorten it.`)
-    .refine((text) => !/\p{Cc}/u.test(text), `${what} contains control characters; remove them.`);
+    .refine(
+      (text) => !/[\p{Cc}\p{Cs}]/u.test(text),
+      `${what} contains control characters; remove them.`,
+    );
 }
 
 /** Upper and lower case letters mean the same in an e-mail address here: it is kept in lower case. */

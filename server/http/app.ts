@@ -15,7 +15,7 @@ import { openApiDocument } from './openapi.ts';
 import { orderRoutes } from './order-routes.ts';
 import { packRoutes } from './pack-routes.ts';
 import { errorMap, sendProblem } from './problem.ts';
-import { recogniseVisitor, sameOriginOnly } from './visitor.ts';
+import { readableAddress, recogniseVisitor, sameOriginOnly } from './visitor.ts';
 import { webhookRoutes } from './webhook-routes.ts';
 
 export interface AppSettings {
@@ -46,7 +46,7 @@ export function createApp(deps: Deps, settings: AppSettings): Express {
   });
   app.use('/api/webhooks', webhookRoutes(deps));
 
-  app.use('/api', (_req, res, next) => {
+  app.use('/api', readableAddress, (_req, res, next) => {
     res.set('Cache-Control', 'no-store');
     next();
   });

@@ -3,11 +3,7 @@ import { ZodError } from 'zod';
 import { problemKinds, type ProblemKind } from '../contracts/error-codes.ts';
 import { BadSignature } from '../ports.ts';
 import { Refusal } from '../use-cases/refusal.ts';
-
-interface FieldError {
-  path: string;
-  message: string;
-}
+import { fieldErrors, type FieldError } from './field-errors.ts';
 
 /** Answers with problem details (RFC 9457). */
 export function sendProblem(
@@ -31,13 +27,6 @@ export function sendProblem(
     );
 }
 
-/** The first wrong field of a union shows as its own message; branches are not spelled out. */
-function fieldErrors(error: ZodError): FieldError[] {
-  return error.issues
-    .slice(0, 20)
-    .map((issue) => ({ path: issue.path.map(String).join('.'), message: issue.message }));
-}
-
 const bodyProblems: Record<string, [ProblemKind, string]> = {
   'entity.parse.failed': [
     'unreadable-request',
@@ -57,6 +46,11 @@ const bodyProblems: Record<string, [ProblemKind, string]> = {
   'stream.encoding.set': ['unreadable-request', 'The body could not be read.'],
 };
 
+/** The status that a parser or a file server put on its error; 500 where there is none. */
+function statusOf(error: unknown): number {
+  return error instanceof Error && 'status' in error ? Number(error.status) : 500;
+}
+
 /** The one place where errors become answers. What is not foreseen is logged and says nothing of itself. */
 export const errorMap: ErrorRequestHandler = (error: unknown, req, res, next) => {
   if (res.headersSent) {
@@ -74,6 +68,10 @@ export const errorMap: ErrorRequestHandler = (error: unknown, req, res, next) =>
   if (known) return sendProblem(res, known[0], known[1]);
   if (error instanceof URIError) {
     return sendProblem(res, 'unreadable-request', 'The address holds a broken escape sequence.');
+  }
+  if (statusOf(error) === 404) return sendProblem(res, 'not-found', 'There is no such file.');
+  if (statusOf(error) >= 400 && statusOf(error) < 500) {
+    return sendProblem(res, 'unreadable-request', 'The request could not be read; check its body.');
   }
   req.log?.error({ err: error }, 'unforeseen error');
   return sendProblem(

@@ -84,6 +84,14 @@ export function guard(permission: Permission): RequestHandler {
   };
 }
 
+/** Refuses addresses with a zero byte in them: no text of the shop's can hold one. */
+export const readableAddress: RequestHandler = (req, _res, next) => {
+  if (req.url.includes('%00')) {
+    throw new Refusal('unreadable-request', 'The address holds a zero byte (%00); remove it.');
+  }
+  next();
+};
+
 const stateChanging = new Set(['POST', 'PUT', 'PATCH', 'DELETE']);
 
 /**

@@ -21,9 +21,7 @@ export async function answerOnce(
   if (key.length < 8 || key.length > 200) {
     throw new Refusal('invalid', 'The Idempotency-Key needs 8 to 200 characters.');
   }
-  const hash = createHash('sha256')
-    .update(JSON.stringify(request.body ?? null))
-    .digest('hex');
+  const hash = createHash('sha256').update(writtenOut(request.body)).digest('hex');
   const kept = await claimKey(deps.db, scope, key, hash);
   if (kept !== null) {
     if (kept.requestHash !== hash) {
@@ -47,5 +45,15 @@ export async function answerOnce(
   } catch (error) {
     await freeKey(deps.db, scope, key);
     throw error;
+  }
+}
+
+function writtenOut(body: unknown): string {
+  try {
+    return JSON.stringify(body ?? null);
+  } catch (error) {
+    // A body nested tens of thousands deep can be read, but not written: the stack ends.
+    if (!(error instanceof RangeError)) throw error;
+    throw new Refusal('invalid', 'The body is nested too deeply; send it flat.');
   }
 }
