@@ -1,6 +1,5 @@
 import type { BenchOrder } from '../../../../server/contracts/bench.ts';
 import { ButtonLink } from '../../../ui/button.tsx';
-import { LiveRegion } from '../../../ui/live-region.tsx';
 import { benchPaths } from '../bench-paths.ts';
 import { useFocusOnArrival } from '../use-focus-on-arrival.ts';
 import { BenchFrame } from './bench-frame.tsx';
@@ -15,7 +14,6 @@ export function ShippedView({ order }: { order: BenchOrder }) {
       place="shipped"
       line={<WalkLine picks={order.picks} current={null} end="done" />}
     >
-      <LiveRegion words={`${order.ref} is on its way.`} />
       <h1
         ref={heading}
         tabIndex={-1}
