@@ -33,7 +33,7 @@ export function promiseOf(pack: RankedPack, brief: ResolvedBrief): PackPromise {
       from: isPeriod ? fast.rate : slow.rate,
       to: isPeriod ? slow.rate : fast.rate,
       error: errorWords(error),
-      yield: yieldWords(pack.yieldWithinBand),
+      yield: yieldWords(pack.yieldWithinBand, holdsAlways(pack, brief)),
       supply: formatSi(amps, 'A', 2),
     },
   };
@@ -45,8 +45,14 @@ function errorWords(error: number): string {
   return `${size < 1e-4 ? significant(size * 100, 1) + '\u202f%' : percent(size)} ${error > 0 ? 'fast' : 'slow'}`;
 }
 
-/** Share of kits in words; never rounds up to all of them. */
-function yieldWords(share: number): string {
-  if (share === 1) return '100\u202f%';
+/** True when the guaranteed band lies inside the asked one, so that every kit holds it. */
+function holdsAlways({ guaranteed }: RankedPack, { targetHz, band }: ResolvedBrief): boolean {
+  return guaranteed.minHz >= targetHz * (1 - band) && guaranteed.maxHz <= targetHz * (1 + band);
+}
+
+/** Share of kits in words; says all of them only when that is certain and not just sampled. */
+function yieldWords(share: number, always: boolean): string {
+  if (always) return '100\u202f%';
+  if (share > 0.999) return 'over 99.9\u202f%';
   return percent(Math.floor(share * 1000) / 1000, 3);
 }

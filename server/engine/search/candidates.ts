@@ -23,12 +23,16 @@ export interface AimedFrame {
   frame: Frame;
   prepared: PreparedSingle;
   idealOhms: number;
+  /** False when no allowed resistance gives the target, so that `idealOhms` is a limit. */
+  reaches: boolean;
 }
 
 /** Reduces a frame's nominal circuit and finds the timing resistance that would hit the target. */
 export function aimFrame(frame: Frame, brief: SearchBrief): AimedFrame {
   const prepared = prepareSingle(frameCircuit(frame, brief));
-  return { frame, prepared, idealOhms: timingRoot(prepared, 1 / brief.targetHz) };
+  const idealOhms = timingRoot(prepared, 1 / brief.targetHz);
+  const miss = Math.abs(Math.log(periodAt(prepared, idealOhms) * brief.targetHz));
+  return { frame, prepared, idealOhms, reaches: miss < 1e-6 && idealOhms >= frame.minTimingOhms };
 }
 
 /** Forms a candidate from composite `index`; null when the circuit would not oscillate with it. */

@@ -235,7 +235,8 @@ function findSteadiest(
   tables: TimingTables,
   brief: SearchBrief,
 ): Candidate | null {
-  const tightest = [...aimed]
+  const reaching = aimed.filter((frame) => frame.reaches);
+  const tightest = (reaching.length > 0 ? reaching : [...aimed])
     .sort((a, b) => frameTolerance(a.frame) - frameTolerance(b.frame))
     .slice(0, framesShortlisted);
   const pool = tightest
