@@ -1,5 +1,5 @@
 import { zodResolver } from '@hookform/resolvers/zod';
-import { useEffect } from 'react';
+import { useEffect, useRef } from 'react';
 import { useForm } from 'react-hook-form';
 import type { UseFormReturn } from 'react-hook-form';
 import { shipRequestSchema } from '../../../../server/contracts/bench.ts';
@@ -61,7 +61,7 @@ function Carriers({ form, carriers }: { form: Form; carriers: readonly string[] 
   return (
     <fieldset aria-describedby={error === undefined ? undefined : 'carrier-error'}>
       <legend className="mb-2 font-strong">Who takes it?</legend>
-      <div className="grid gap-3 sm:grid-cols-2">
+      <div className="grid gap-3">
         {carriers.map((carrier) => (
           <label
             key={carrier}
@@ -88,11 +88,13 @@ function Carriers({ form, carriers }: { form: Form; carriers: readonly string[] 
 
 function Tracking({ form }: { form: Form }) {
   const error = form.formState.errors.tracking?.message;
-  const { setFocus } = form;
+  const field = useRef<HTMLInputElement | null>(null);
+  const { ref, ...tracking } = form.register('tracking');
   useEffect(() => {
-    const frame = requestAnimationFrame(() => setFocus('tracking'));
+    // Ready for the scanner, with the label still in sight.
+    const frame = requestAnimationFrame(() => field.current?.focus({ preventScroll: true }));
     return () => cancelAnimationFrame(frame);
-  }, [setFocus]);
+  }, []);
   return (
     <div>
       <label htmlFor="tracking" className="font-strong">
@@ -105,7 +107,11 @@ function Tracking({ form }: { form: Form }) {
         className="control mt-1 min-h-16 border-2 text-head font-heavy"
         aria-invalid={error !== undefined || undefined}
         aria-describedby={error === undefined ? 'tracking-hint' : 'tracking-error'}
-        {...form.register('tracking')}
+        {...tracking}
+        ref={(element) => {
+          ref(element);
+          field.current = element;
+        }}
       />
       {error === undefined ? (
         <p id="tracking-hint" className="mt-1 text-soft">

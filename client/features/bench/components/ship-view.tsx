@@ -18,7 +18,7 @@ export function ShipView({ order }: { order: BenchOrder }) {
       <h1 className="py-6 text-[clamp(2rem,5vw,4rem)] leading-[1.1] font-light">
         Packed. Now <strong className="font-heavy">send it</strong>.
       </h1>
-      <div className="grid items-start gap-x-12 gap-y-8 xl:grid-cols-[1fr_1.2fr]">
+      <div className="grid items-start gap-x-10 gap-y-8 md:grid-cols-2">
         <Label order={order} />
         {shop === undefined ? (
           <Waiting words="Asking which carriers come today" />
