@@ -48,6 +48,8 @@ export const packPartSchema = z.object({
   tolerance: z.number().optional(),
   dielectric: z.string().optional(),
   colour: z.string().optional(),
+  /** Comparators in the package; the board holds the idle ones' inputs apart. */
+  sections: z.int().optional(),
 });
 export type PackPart = z.infer<typeof packPartSchema>;
 

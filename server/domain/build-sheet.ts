@@ -12,6 +12,7 @@ export function buildSteps(parts: readonly PackPart[]): Step[] {
   const roles = (wanted: (part: PackPart) => boolean) =>
     parts.filter(wanted).map((part) => part.role);
   const chips = parts.some((part) => part.mounting === 'surface-mount' && part.kind === 'resistor');
+  const idle = parts.some((part) => (part.sections ?? 1) > 1);
   const steps: Step[] = [
     {
       title: 'Lay everything out',
@@ -32,7 +33,9 @@ export function buildSteps(parts: readonly PackPart[]): Step[] {
     },
     {
       title: 'Comparator',
-      text: 'Find pin 1 at the dot or notch and match it to the mark on the board before you solder.',
+      text: idle
+        ? 'Find pin 1 at the dot or notch and match it to the mark on the board before you solder. The board holds the inputs of the idle sections at clearly different levels; leave their outputs open.'
+        : 'Find pin 1 at the dot or notch and match it to the mark on the board before you solder.',
       roles: roles((part) => part.kind === 'comparator'),
     },
   ];

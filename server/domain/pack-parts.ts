@@ -100,7 +100,8 @@ export function toPackPart(role: PackRole, part: CataloguePart): PackPart {
     shown.farads = part.facts.farads;
     shown.tolerance = part.facts.tolerance;
     shown.dielectric = part.facts.dielectric;
-  } else if (isKind(part, 'led')) shown.colour = part.facts.colour;
+  } else if (isKind(part, 'comparator')) shown.sections = part.facts.sections;
+  else if (isKind(part, 'led')) shown.colour = part.facts.colour;
   return shown;
 }
 

@@ -215,7 +215,10 @@ export async function newestLedger(
     .modify((query) => {
       if (partId !== undefined) query.where('lots.part_id', partId);
     })
-    .orderBy('stock_ledger.id', 'desc')
+    .orderBy([
+      { column: 'stock_ledger.at', order: 'desc' },
+      { column: 'stock_ledger.id', order: 'desc' },
+    ])
     .limit(limit)
     .select(
       'stock_ledger.at',

@@ -153,7 +153,9 @@ function findBestValue(
     if (hopeless(frame.frame)) continue;
     const pool = [
       ...nearestCandidates(frame, tables.singles, brief, 4),
-      ...nearestCandidates(frame, tables.all, brief, 1),
+      ...[tables.all, tables.good, tables.precise].flatMap((table) =>
+        nearestCandidates(frame, table, brief, 2),
+      ),
     ].sort(byValue);
     for (const candidate of pool) {
       if (best !== null && byValue(candidate, best) >= 0) break;
