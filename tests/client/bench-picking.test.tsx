@@ -17,6 +17,7 @@ afterEach(async () => {
 });
 beforeEach(() => {
   Element.prototype.scrollTo = () => undefined;
+  window.scrollTo = () => undefined;
 });
 
 async function openBench(answer: Parameters<typeof startAnswering>[0], path = '/orders/TQ-1041') {

@@ -1,3 +1,4 @@
+import { useEffect, useRef } from 'react';
 import { useParams } from 'react-router-dom';
 import type { BenchOrder } from '../../../../server/contracts/bench.ts';
 import { isProblem, sentenceOf } from '../../../lib/problem-error.ts';
@@ -61,6 +62,12 @@ export function OrderPage() {
 
 function Stage({ order }: { order: BenchOrder }) {
   const stage = stageOf(order);
+  const last = useRef(stage);
+  useEffect(() => {
+    // A new stage begins at its top; the button that led here may have been far down.
+    if (last.current !== stage) window.scrollTo({ top: 0 });
+    last.current = stage;
+  }, [stage]);
   switch (stage) {
     case 'unclaimed':
     case 'elsewhere':
