@@ -59,10 +59,11 @@ export function findPacks(
     .sort(byCloseness);
   const considered = frames.length * tables.all.ohms.length;
   if (closest.length === 0) return { packs: [], considered };
+  const steadiest = findSteadiest(aimed, tables, brief);
   const winners: Record<Rank, Candidate | null> = {
     closest: closest[0]!,
-    'best-value': findBestValue(aimed, tables, brief),
-    steadiest: findSteadiest(aimed, tables, brief),
+    'best-value': betterValue(findBestValue(aimed, tables, brief), steadiest, brief),
+    steadiest,
   };
   const packs = arrange(winners, rank, closest, limit).map((candidate) =>
     promise(candidate, brief),
@@ -166,6 +167,17 @@ function findBestValue(
     }
   }
   return best;
+}
+
+/** The steadiest pack is best value where it costs less, or where nothing else holds the band. */
+function betterValue(
+  best: Candidate | null,
+  steadiest: Candidate | null,
+  brief: SearchBrief,
+): Candidate | null {
+  if (steadiest === null || (best !== null && byValue(best, steadiest) <= 0)) return best;
+  const { yieldWithinBand } = kitYield(steadiest, brief, guaranteedBand(steadiest, brief));
+  return yieldWithinBand >= valueYield ? steadiest : best;
 }
 
 function byValue(a: Candidate, b: Candidate): number {

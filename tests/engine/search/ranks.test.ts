@@ -86,6 +86,16 @@ describe('findPacks', () => {
     });
   });
 
+  describe('when only the steadiest pack holds the band', () => {
+    it('is best value too', () => {
+      const [steadiest] = findPacks(workshop, briefAt(120), 'steadiest', 1, tables).packs;
+      const brief = briefAt(120, { band: worseEnd(steadiest!.guaranteed, 120) + 1e-6 });
+      const [best] = findPacks(workshop, brief, 'best-value', 1, tables).packs;
+      expect(best!.wins).toContain('best-value');
+      expect(best!.yieldWithinBand).toBeGreaterThanOrEqual(0.99);
+    });
+  });
+
   describe('when two parts are alike but for their price or place', () => {
     const twin = (priceMinor: number) => {
       const { resistors, capacitors, comparators } = workshop;
