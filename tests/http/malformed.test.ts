@@ -211,7 +211,8 @@ describe('every call that takes a body', () => {
   it('answers a body nested without end, under a key or without', async () => {
     const nested = `{"reason":${'['.repeat(40_000)}${']'.repeat(40_000)}}`;
     for (const call of bodyCalls) {
-      for (const headers of [{}, { 'idempotency-key': 'a-key-for-nested-bodies' }]) {
+      for (const key of ['', 'a-key-for-nested-bodies']) {
+        const headers: Record<string, string> = key === '' ? {} : { 'idempotency-key': key };
         expectDecent(await post(call, nested, headers), call.path);
       }
     }
