@@ -45,15 +45,15 @@ const day = (date: Date) =>
     timeZone: 'UTC',
   });
 
-/** Postal address line by line, the country's code last. */
-export function addressLines(address: Address): string[] {
+/** Postal address line by line; the country's name last, in capitals as carriers want it. */
+export function addressLines(address: Address, countryName: string): string[] {
   return [
     address.name,
     address.line1,
     address.line2 ?? '',
     `${address.postalCode} ${address.city}`.trim(),
     address.region ?? '',
-    address.country,
+    countryName.toUpperCase(),
   ].filter((line) => line !== '');
 }
 
@@ -66,8 +66,9 @@ export function confirmationMail(facts: {
   order: MailOrder;
   lines: readonly MailLine[];
   link: string;
+  countryName: string;
 }): Mail {
-  const { shop, order, lines, link } = facts;
+  const { shop, order, lines, link, countryName } = facts;
   const rate = order.taxBasisPoints / 100;
   const blocks: Block[] = [
     { kind: 'text', text: `Thank you. Order ${order.ref} is paid and waits for the bench.` },
@@ -86,7 +87,7 @@ export function confirmationMail(facts: {
         `Total: ${amount(order.totalMinor)}, of which ${amount(order.taxMinor)} tax (${rate}${nbsp}%)`,
       ],
     },
-    { kind: 'text', text: `It goes to: ${addressLines(order.shipTo).join(', ')}.` },
+    { kind: 'text', text: `It goes to: ${addressLines(order.shipTo, countryName).join(', ')}.` },
     ...(order.shipBy === null
       ? []
       : [{ kind: 'text' as const, text: `It leaves us by ${day(order.shipBy)}.` }]),

@@ -45,19 +45,3 @@ export function nextStatus(status: OrderStatus, event: OrderEvent): Transition {
   if (to === undefined) return { kind: 'refused', reason: `The order ${words[status]}.` };
   return { kind: 'moved', to };
 }
-
-/** True while the order's parts are promised to it and still on the shelf. */
-export function holdsStock(status: OrderStatus): boolean {
-  switch (status) {
-    case 'awaiting_payment':
-    case 'paid':
-    case 'picking':
-    case 'packed':
-      return true;
-    case 'on_hold':
-    case 'shipped':
-    case 'cancelled':
-    case 'refunded':
-      return false;
-  }
-}

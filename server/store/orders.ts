@@ -180,14 +180,18 @@ export async function findOrder(db: Database, ref: string): Promise<OrderRow | n
 
 /** An order by reference, its row locked for the rest of the transaction; null when there is none. */
 export async function lockOrder(db: Database, ref: string): Promise<OrderRow | null> {
-  return (
-    (await orders(db).where('orders.ref', ref).forUpdate('orders').first(orderColumns)) ?? null
-  );
+  return readLocked(db, await db('orders').where({ ref }).forUpdate().first('id'));
 }
 
 /** As lockOrder, by id. */
 export async function lockOrderById(db: Database, id: number): Promise<OrderRow | null> {
-  return (await orders(db).where('orders.id', id).forUpdate('orders').first(orderColumns)) ?? null;
+  return readLocked(db, await db('orders').where({ id }).forUpdate().first('id'));
+}
+
+/** Reads after the lock is had: a join beside it would still show who claimed before the wait. */
+async function readLocked(db: Database, row: { id: number } | undefined): Promise<OrderRow | null> {
+  if (!row) return null;
+  return (await orders(db).where('orders.id', row.id).first(orderColumns)) ?? null;
 }
 
 export interface StatusChange {

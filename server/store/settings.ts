@@ -32,6 +32,12 @@ export async function taxRates(db: Database): Promise<TaxRate[]> {
     .select('tax_rates.country', 'tax_rates.name', 'basis_points as basisPoints', 'zone');
 }
 
+/** A country's name; its code where the shop does not deliver there any more. */
+export async function countryName(db: Database, country: string): Promise<string> {
+  const row = await db('tax_rates').where({ country }).first('name');
+  return row?.name ?? country;
+}
+
 export interface ShippingMethod {
   code: string;
   name: string;

@@ -49,11 +49,14 @@ export async function lockLotsOfParts(
 }
 
 /** Locks one lot; null when there is none. */
-export async function lockLot(db: Database, lotId: number): Promise<LotStock | null> {
+export async function lockLot(
+  db: Database,
+  lotId: number,
+): Promise<(LotStock & { code: string }) | null> {
   const row = await db('lots')
     .where({ id: lotId })
     .forUpdate()
-    .first('id', 'part_id as partId', 'on_hand as onHand', 'reserved');
+    .first('id', 'part_id as partId', 'on_hand as onHand', 'reserved', 'code');
   return row ?? null;
 }
 
@@ -91,6 +94,15 @@ export async function moveReservations(
     .forUpdate()
     .select('id', 'lot_id');
   for (const row of rows) await db('reservations').where({ id: row.id }).update({ state: to });
+}
+
+/** How many pieces are promised to an order and still on the shelf. */
+export async function promisedPieces(db: Database, orderId: number): Promise<number> {
+  const [row] = await db('reservations')
+    .where({ order_id: orderId })
+    .whereIn('state', ['held', 'allocated'])
+    .sum({ pieces: 'quantity' });
+  return Number(row?.pieces ?? 0);
 }
 
 export interface PickRow {

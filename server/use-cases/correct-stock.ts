@@ -47,8 +47,8 @@ export async function correctStock(
       action: `correct stock (${correction.reason})`,
       subjectKind: 'part',
       subjectId: part.facts.sku,
-      before: { lot: lotId, onHand: lot.onHand },
-      after: { lot: lotId, onHand: correction.onHand },
+      before: { lot: lot.code, 'on hand': lot.onHand },
+      after: { lot: lot.code, 'on hand': correction.onHand },
       note: correction.note,
     });
   });

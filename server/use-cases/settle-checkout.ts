@@ -21,7 +21,7 @@ import {
   type PaymentRow,
 } from '../store/payments.ts';
 import { forgetReleased, holdShares, lockLotsOfParts, moveReservations } from '../store/stock.ts';
-import { shopSettings } from '../store/settings.ts';
+import { countryName, shopSettings } from '../store/settings.ts';
 import { inTransaction } from '../store/transaction.ts';
 
 type SettleDeps = Pick<Deps, 'db' | 'clock' | 'payments' | 'signer' | 'publicUrl'>;
@@ -90,6 +90,7 @@ async function settlePaid(
     shop: await shopSettings(trx),
     order: { ...order, shipBy: leave },
     lines: await linesOfOrders(trx, [order.id]),
+    countryName: await countryName(trx, order.shipTo.country),
     link: `${deps.publicUrl}/orders/${order.ref}?token=${deps.signer.orderToken(order.ref)}`,
   });
   await queueMail(trx, {

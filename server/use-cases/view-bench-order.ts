@@ -4,6 +4,7 @@ import { inBillOrder, labelOf, markingOf } from '../domain/pack-parts.ts';
 import type { Deps } from '../ports.ts';
 import { findOrder, findShipment, linesOfOrders, partsOfOrder } from '../store/orders.ts';
 import { findParts } from '../store/parts.ts';
+import { countryName } from '../store/settings.ts';
 import { picksOfOrder } from '../store/stock.ts';
 import type { Packer } from './bench-order.ts';
 import { Refusal } from './refusal.ts';
@@ -40,7 +41,7 @@ export async function viewBenchOrder(
     claimedBy: order.claimedByName,
     mine: order.claimedBy === packer.id,
     shippingMethod: order.shippingName,
-    address: addressLines(order.shipTo),
+    address: addressLines(order.shipTo, await countryName(deps.db, order.shipTo.country)),
     lines: lines.map((line) => ({
       id: line.id,
       sentence: line.sentence,

@@ -1,9 +1,9 @@
 import type { DeskOrder } from '../contracts/desk.ts';
 import { money } from '../domain/money.ts';
-import { holdsStock } from '../domain/order-state.ts';
 import type { Deps } from '../ports.ts';
 import { findOrder } from '../store/orders.ts';
 import { paymentsOfOrder, refundsOfOrder } from '../store/payments.ts';
+import { promisedPieces } from '../store/stock.ts';
 import { refundableMinor } from './refund-order.ts';
 import { Refusal } from './refusal.ts';
 import { describeOrder } from './view-order.ts';
@@ -12,11 +12,12 @@ import { describeOrder } from './view-order.ts';
 export async function viewDeskOrder(deps: Pick<Deps, 'db'>, ref: string): Promise<DeskOrder> {
   const order = await findOrder(deps.db, ref);
   if (order === null) throw new Refusal('not-found', `There is no order ${ref}.`);
-  const [base, payments, refunds, refundable] = await Promise.all([
+  const [base, payments, refunds, refundable, promised] = await Promise.all([
     describeOrder(deps.db, order),
     paymentsOfOrder(deps.db, order.id),
     refundsOfOrder(deps.db, order.id),
     refundableMinor(deps.db, order.id),
+    promisedPieces(deps.db, order.id),
   ]);
   return {
     ...base,
@@ -37,8 +38,9 @@ export async function viewDeskOrder(deps: Pick<Deps, 'db'>, ref: string): Promis
       })),
     ],
     refundable: money(refundable),
-    stockNote: holdsStock(order.status)
-      ? 'A refund puts the parts back on the shelf.'
-      : 'The parts have left or are free already; a refund moves no stock.',
+    stockNote:
+      promised > 0
+        ? 'A refund puts the parts back on the shelf.'
+        : 'The parts have left or are free already; a refund moves no stock.',
   };
 }
