@@ -11,11 +11,11 @@ if (!base) throw new Error('BASE_URL is not set; run `npm run screenshots`.');
 const folder = fileURLToPath(new URL('../../assets/screenshots', import.meta.url));
 mkdirSync(folder, { recursive: true });
 
-const { context, close } = await openBrowser({
+const browser = await openBrowser({
   viewport: { width: 1440, height: 900 },
   reducedMotion: 'reduce',
 });
-const page = await context.newPage();
+const page = await browser.context.newPage();
 
 async function call(address: string, body?: unknown): Promise<unknown> {
   return page.evaluate(
@@ -63,4 +63,4 @@ await shoot('bench', '/bench/orders/TQ-1047');
 await page.emulateMedia({ colorScheme: 'light', reducedMotion: 'reduce' });
 await signIn('owner');
 await shoot('desk', '/desk');
-await close();
+await browser.close();
