@@ -14,10 +14,12 @@ export function promiseOf(pack: RankedPack, brief: ResolvedBrief): PackPromise {
   const amps = averageSupplyAmps(pack.circuit, pack.frame.comparator.quiescentAmps);
   const half = Math.max(guaranteed.maxHz / frequencyHz - 1, 1 - guaranteed.minHz / frequencyHz);
   const figures = figuresFor(half);
-  const words = (hertz: number) => rateWords(hertz, brief.target.unit, figures);
-  const [slow, fast] = [words(guaranteed.minHz), words(guaranteed.maxHz)];
+  const { unit } = brief.target;
   // A period runs the other way: the fastest kit has the shortest beat.
-  const isPeriod = brief.target.unit === 's' || brief.target.unit === 'ms';
+  const isPeriod = unit === 's' || unit === 'ms';
+  const [least, most] = isPeriod
+    ? [guaranteed.maxHz, guaranteed.minHz]
+    : [guaranteed.minHz, guaranteed.maxHz];
   const error = frequencyHz / brief.targetHz - 1;
   return {
     frequencyHz,
@@ -28,10 +30,11 @@ export function promiseOf(pack: RankedPack, brief: ResolvedBrief): PackPromise {
     duty,
     averageSupplyAmps: amps,
     text: {
-      ...words(frequencyHz),
+      ...rateWords(frequencyHz, unit, figures),
       band: plusMinus(half),
-      from: isPeriod ? fast.rate : slow.rate,
-      to: isPeriod ? slow.rate : fast.rate,
+      // Rounded outwards, so that no kit lies outside what is said.
+      from: rateWords(least, unit, figures, 'down').rate,
+      to: rateWords(most, unit, figures, 'up').rate,
       error: errorWords(error),
       yield: yieldWords(pack.yieldWithinBand, holdsAlways(pack, brief)),
       supply: formatSi(amps, 'A', 2),

@@ -4,13 +4,23 @@ import type { Target } from '../contracts/brief.ts';
 export const nbsp = '\u00a0';
 export const thin = '\u202f';
 
+export type Rounding = 'nearest' | 'down' | 'up';
+
 /** A number in plain decimals with `digits` significant figures; trailing zeros stay. */
-export function significant(value: number, digits: number): string {
+export function significant(value: number, digits: number, rounding: Rounding = 'nearest'): string {
   if (value === 0) return '0';
   const exponent = Math.floor(Math.log10(Math.abs(value)));
   const decimals = Math.max(0, digits - 1 - exponent);
-  const rounded = Number(value.toPrecision(digits));
+  const rounded = roundedTo(value, digits, exponent, rounding);
   return rounded.toFixed(Math.min(decimals, 12)).replace('-', '−');
+}
+
+function roundedTo(value: number, digits: number, exponent: number, rounding: Rounding): number {
+  if (rounding === 'nearest') return Number(value.toPrecision(digits));
+  const places = digits - 1 - exponent;
+  const scaled = value * 10 ** places;
+  const whole = rounding === 'down' ? Math.floor(scaled + 1e-9) : Math.ceil(scaled - 1e-9);
+  return whole / 10 ** places;
 }
 
 /**
@@ -50,18 +60,23 @@ export interface RateWords {
 }
 
 /** A frequency in the unit the maker asked in, with the given number of figures. */
-export function rateWords(hertz: number, unit: Target['unit'], figures: number): RateWords {
+export function rateWords(
+  hertz: number,
+  unit: Target['unit'],
+  figures: number,
+  rounding: Rounding = 'nearest',
+): RateWords {
   switch (unit) {
     case 'per_minute':
-      return { rate: significant(hertz * 60, figures), unit: 'a minute' };
+      return { rate: significant(hertz * 60, figures, rounding), unit: 'a minute' };
     case 'Hz':
-      return { rate: significant(hertz, figures), unit: 'Hz' };
+      return { rate: significant(hertz, figures, rounding), unit: 'Hz' };
     case 'kHz':
-      return { rate: significant(hertz / 1e3, figures), unit: 'kHz' };
+      return { rate: significant(hertz / 1e3, figures, rounding), unit: 'kHz' };
     case 's':
-      return { rate: significant(1 / hertz, figures), unit: 's a beat' };
+      return { rate: significant(1 / hertz, figures, rounding), unit: 's a beat' };
     case 'ms':
-      return { rate: significant(1e3 / hertz, figures), unit: 'ms a beat' };
+      return { rate: significant(1e3 / hertz, figures, rounding), unit: 'ms a beat' };
   }
 }
 
