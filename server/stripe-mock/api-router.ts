@@ -1,10 +1,12 @@
 import express, { Router, type NextFunction, type Request, type Response } from 'express';
-import { z } from 'zod';
-import { ApiError, errorBody, missingResource } from './api-error.ts';
+import { answerError, refuseAddress } from './api-answers.ts';
+import { ApiError } from './api-error.ts';
 import { expanded } from './expand.ts';
 import { idempotent } from './idempotency.ts';
 import { makeId } from './ids.ts';
+import { expandOf, list, readable } from './listing.ts';
 import * as parameters from './parameters.ts';
+import { paymentIntentRouter } from './payment-intent-router.ts';
 import { createRefund } from './refunds.ts';
 import type { Service } from './service.ts';
 import { createSession, expireSession, findSession } from './sessions.ts';
@@ -12,12 +14,13 @@ import type { KeptSession, State } from './state.ts';
 
 const { readParameters } = parameters;
 
-/** The service's API under /v1. `afterChange` is called when events may wait to be sent. */
-export function apiRouter(service: Service, secretKey: string, afterChange: () => void): Router {
+/** The service's API under /v1. `afterAnswer` is called when events may wait to be sent. */
+export function apiRouter(service: Service, secretKey: string, afterAnswer: () => void): Router {
   const router = Router();
   const { state } = service;
   router.use((_request, response, next) => {
     response.set('request-id', makeId('req', 14));
+    response.on('finish', afterAnswer);
     next();
   });
   router.use(authenticated(secretKey), express.urlencoded({ extended: true, limit: '1mb' }));
@@ -36,24 +39,24 @@ export function apiRouter(service: Service, secretKey: string, afterChange: () =
   });
   router.post('/checkout/sessions/:id/expire', (request, response) => {
     const kept = expireSession(service, request.params.id);
-    afterChange();
     response.json(sessionView(state, kept, expandOf(request)));
   });
   router.post('/refunds', (request, response) => {
     const asked = readParameters(parameters.refundParameters, request.body);
-    const refund = createRefund(service, asked);
-    afterChange();
-    response.json(expanded(state, refund, asked.expand));
+    response.json(expanded(state, createRefund(service, asked), asked.expand));
   });
-  readable(router, state, 'payment_intents', 'payment_intent', () => state.intents);
-  readable(router, state, 'charges', 'charge', () => state.charges);
-  readable(router, state, 'refunds', 'refund', () => state.refunds);
-  readable(router, state, 'events', 'event', () => state.events);
+  router.use('/payment_intents', paymentIntentRouter(service));
+  readable(router, state, {
+    place: 'payment_intents',
+    kind: 'payment_intent',
+    param: 'intent',
+    all: () => state.intents,
+  });
+  readable(router, state, { place: 'charges', kind: 'charge', all: () => state.charges });
+  readable(router, state, { place: 'refunds', kind: 'refund', all: () => state.refunds });
+  readable(router, state, { place: 'events', kind: 'event', all: () => state.events });
 
-  router.use((request) => {
-    const message = `Unrecognized request URL (${request.method}: ${request.originalUrl}).`;
-    throw new ApiError(404, 'invalid_request_error', message);
-  });
+  router.use(refuseAddress);
   router.use(answerError);
   return router;
 }
@@ -67,46 +70,6 @@ function authenticated(secretKey: string) {
   };
 }
 
-/** Retrieve and list of one kind of object, newest first. */
-function readable(
-  router: Router,
-  state: State,
-  place: string,
-  kind: string,
-  all: () => Record<string, object & { id: string }>,
-): void {
-  router.get(`/${place}/:id`, (request, response) => {
-    const found = all()[request.params.id];
-    if (!found) throw missingResource(kind, request.params.id);
-    response.json(expanded(state, found, expandOf(request)));
-  });
-  router.get(`/${place}`, (request, response) => {
-    const answer = list(request, `/v1/${place}`, Object.values(all()).reverse());
-    response.json(expanded(state, answer, expandOf(request)));
-  });
-}
-
-const filters = ['payment_intent', 'charge', 'type'] as const;
-
-function list(request: Request, url: string, all: (object & { id: string })[]) {
-  const asked = readParameters(parameters.listParameters, request.query);
-  const matching = all.filter((item) =>
-    filters.every((name) => asked[name] === undefined || valueOf(item, name) === asked[name]),
-  );
-  const from = matching.findIndex(({ id }) => id === asked.starting_after) + 1;
-  const data = matching.slice(from, from + asked.limit);
-  return { object: 'list', url, has_more: matching.length > from + asked.limit, data };
-}
-
-function valueOf(item: object, name: string): unknown {
-  return (item as Record<string, unknown>)[name];
-}
-
-function expandOf(request: Request): string[] | undefined {
-  const source = (request.method === 'GET' ? request.query : request.body) as object | undefined;
-  return readParameters(z.object({ expand: z.array(z.string()).optional() }), source).expand;
-}
-
 /** A session as the API shows it: its items only when they are asked for. */
 function sessionView(state: State, kept: KeptSession, paths: string[] = []): object {
   const data = kept.lineItems;
@@ -114,18 +77,4 @@ function sessionView(state: State, kept: KeptSession, paths: string[] = []): obj
   const withItems = { line_items: { object: 'list', data, has_more: false, url } };
   const asked = paths.some((path) => path.split('.')[0] === 'line_items');
   return expanded(state, { ...kept.session, ...(asked && withItems) }, paths);
-}
-
-function answerError(error: unknown, _request: Request, response: Response, next: NextFunction) {
-  if (response.headersSent) return next(error);
-  const known = error instanceof ApiError ? error : unforeseen(error);
-  response.status(known.status).json(errorBody(known));
-}
-
-function unforeseen(error: unknown): ApiError {
-  const status = (error as { status?: unknown }).status;
-  const message = error instanceof Error ? error.message : 'No reason known.';
-  return typeof status === 'number' && status < 500
-    ? new ApiError(status, 'invalid_request_error', message)
-    : new ApiError(500, 'api_error', message);
 }

@@ -1,13 +1,28 @@
 import { createHash } from 'node:crypto';
 import type { NextFunction, Request, Response } from 'express';
-import { ApiError } from './api-error.ts';
+import { ApiError, invalidRequest } from './api-error.ts';
 import type { Service } from './service.ts';
 
-/** Gives a repeated request under one key the first answer; another request under it is refused. */
+const longestKey = 255;
+const keptMs = 24 * 3_600_000;
+
+/**
+ * Gives a repeated request under one key the first answer; another request under it is refused.
+ *
+ * The service keeps the first answer once the work has begun, good or bad: 2xx, a declined card
+ * (402), a refusal by the state of things (400) and 500 are all replayed. A request wrong in
+ * itself (parameters, address, API key) is not kept and may be mended under the same key. Its
+ * reference does not say on which side an unknown id falls; here it is not kept. Two requests at
+ * once under one key, which the service refuses with 409, cannot meet: each is done in one turn.
+ */
 export function idempotent(service: Service) {
   return (request: Request, response: Response, next: NextFunction): void => {
     const key = request.get('idempotency-key');
     if (request.method !== 'POST' || !key) return next();
+    if (key.length > longestKey) {
+      return next(invalidRequest(`An idempotency key has at most ${longestKey} characters.`));
+    }
+    forgetOld(service);
     const requestHash = hashOf([request.originalUrl, JSON.stringify(request.body ?? {})]);
     const kept = service.state.answers[key];
     if (!kept) {
@@ -27,13 +42,19 @@ function hashOf(parts: string[]): string {
   return createHash('sha256').update(parts.join('\n')).digest('hex');
 }
 
-/** Remembers what is sent, when it is a success; after a refusal the key may be tried again. */
+function forgetOld({ state, now }: Service): void {
+  for (const [key, { keptAt }] of Object.entries(state.answers)) {
+    if (now() - keptAt >= keptMs) delete state.answers[key];
+  }
+}
+
 function keepAnswer(service: Service, response: Response, key: string, requestHash: string): void {
   response.set('idempotency-key', key);
   const send = response.json.bind(response);
   response.json = (body: object) => {
-    if (response.statusCode < 400) {
-      service.state.answers[key] = { requestHash, status: response.statusCode, body };
+    if (response.statusCode < 400 || response.locals.underWay === true) {
+      const answer = { requestHash, keptAt: service.now(), status: response.statusCode, body };
+      service.state.answers[key] = structuredClone(answer);
       service.save();
     }
     return send(body);

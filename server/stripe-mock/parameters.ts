@@ -2,23 +2,25 @@ import { z } from 'zod';
 import { invalidRequest } from './api-error.ts';
 
 // Form bodies carry text only, so numbers arrive as digits.
-const integer = z
+export const integer = z
   .string()
   .regex(/^-?\d+$/)
   .transform(Number);
-const metadata = z
+export const metadata = z
   .record(z.string().max(40), z.string().max(500))
   .refine((value) => Object.keys(value).length <= 50, { error: 'at most 50 keys' });
-const expand = z.array(z.string()).max(20).optional();
+export const expand = z.array(z.string()).max(20).optional();
+export const flag = z.enum(['true', 'false']).transform((value) => value === 'true');
+export const currency = z
+  .string()
+  .regex(/^[a-zA-Z]{3}$/)
+  .toLowerCase();
 const url = z.url({ protocol: /^https?$/ });
 
 const lineItem = z.strictObject({
   quantity: integer.pipe(z.number().int().min(1).max(999_999)),
   price_data: z.strictObject({
-    currency: z
-      .string()
-      .regex(/^[a-zA-Z]{3}$/)
-      .toLowerCase(),
+    currency,
     unit_amount: integer.pipe(z.number().int().min(0).max(99_999_999)),
     product_data: z.strictObject({
       name: z.string().min(1).max(250),

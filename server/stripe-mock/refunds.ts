@@ -1,5 +1,5 @@
 import type Stripe from 'stripe';
-import { invalidRequest, missingResource } from './api-error.ts';
+import { invalidRequest, missingResource, refused } from './api-error.ts';
 import { makeId } from './ids.ts';
 import type { RefundParameters } from './parameters.ts';
 import { nowSeconds, record, type Service } from './service.ts';
@@ -51,11 +51,7 @@ function chargeFor(service: Service, asked: RefundParameters): Stripe.Charge {
   const latest = intent.latest_charge;
   const charge = typeof latest === 'string' ? service.state.charges[latest] : undefined;
   if (!charge) {
-    throw invalidRequest(
-      `${intent.id} has no successful charge to refund.`,
-      null,
-      'payment_intent',
-    );
+    throw refused(`${intent.id} has no successful charge to refund.`, null, 'payment_intent');
   }
   return charge;
 }
@@ -63,7 +59,7 @@ function chargeFor(service: Service, asked: RefundParameters): Stripe.Charge {
 function checkedAmount(charge: Stripe.Charge, asked: number | undefined): number {
   const left = charge.amount - charge.amount_refunded;
   if (left === 0) {
-    throw invalidRequest(`Charge ${charge.id} has been refunded.`, 'charge_already_refunded');
+    throw refused(`Charge ${charge.id} has been refunded.`, 'charge_already_refunded');
   }
   const amount = asked ?? left;
   if (amount < 1) {
@@ -72,7 +68,7 @@ function checkedAmount(charge: Stripe.Charge, asked: number | undefined): number
   }
   if (amount > left) {
     const message = `Refund amount (${amount}) is greater than unrefunded amount on charge (${left}).`;
-    throw invalidRequest(message, null, 'amount');
+    throw refused(message, null, 'amount');
   }
   return amount;
 }

@@ -29,6 +29,8 @@ export interface Delivery {
 
 export interface KeptAnswer {
   requestHash: string;
+  /** Milliseconds of the epoch. */
+  keptAt: number;
   status: number;
   body: object;
 }
@@ -39,6 +41,8 @@ export interface State {
   intents: Record<string, Stripe.PaymentIntent>;
   charges: Record<string, Stripe.Charge>;
   refunds: Record<string, Stripe.Refund>;
+  /** Id of a payment method → the test name it was made of. */
+  methods: Record<string, string>;
   events: Record<string, KeptEvent>;
   deliveries: Delivery[];
   answers: Record<string, KeptAnswer>;
@@ -50,6 +54,7 @@ function emptyState(): State {
     intents: {},
     charges: {},
     refunds: {},
+    methods: {},
     events: {},
     deliveries: [],
     answers: {},

@@ -2,6 +2,7 @@ import type { Server } from 'node:http';
 import type { AddressInfo } from 'node:net';
 import express, { type Express } from 'express';
 import { lookRouter } from '../stand-in-look/look-router.ts';
+import { answerError, refuseAddress } from './api-answers.ts';
 import { apiRouter } from './api-router.ts';
 import { cardRouter } from './card-router.ts';
 import type { Service } from './service.ts';
@@ -86,6 +87,7 @@ export function createStripeMock(settings: StripeMockSettings): StripeMock {
     async close() {
       if (beat) clearInterval(beat);
       server?.closeAllConnections();
+      await delivery.stop();
       await new Promise((done) => (server ? server.close(done) : done(undefined)));
     },
   };
@@ -99,6 +101,7 @@ function createApp(service: Service, settings: StripeMockSettings, afterChange: 
   app.use('/look', lookRouter());
   app.use('/c/pay', cardRouter(service, settings.shopName ?? 'Tockwell', afterChange));
   app.use('/v1', apiRouter(service, settings.secretKey, afterChange));
+  app.use(refuseAddress, answerError);
   return app;
 }
 

@@ -21,6 +21,7 @@ export function pauseAfter(attempts: number): number {
 export async function sendEvent(
   event: KeptEvent,
   { url, secret }: WebhookTarget,
+  stopped?: AbortSignal,
 ): Promise<boolean> {
   const payload = JSON.stringify(event);
   const signature = Stripe.webhooks.generateTestHeaderString({ payload, secret });
@@ -30,7 +31,7 @@ export async function sendEvent(
       headers: { 'content-type': 'application/json; charset=utf-8', 'stripe-signature': signature },
       body: payload,
       redirect: 'manual',
-      signal: AbortSignal.timeout(patienceMs),
+      signal: AbortSignal.any([AbortSignal.timeout(patienceMs), ...(stopped ? [stopped] : [])]),
     });
     await answer.arrayBuffer();
     return answer.ok;
@@ -42,7 +43,8 @@ export async function sendEvent(
 /** Delivers what is due, side by side and so in any order, as the service itself does. */
 export class WebhookDelivery {
   #holding = false;
-  #underWay = new Set<string>();
+  #underWay = new Map<string, Promise<void>>();
+  #stopping = new AbortController();
 
   constructor(
     private readonly service: Service,
@@ -59,20 +61,27 @@ export class WebhookDelivery {
     return this.deliverDue();
   }
 
+  /** Ends for good. What is under way is broken off and kept as not taken, to be sent again. */
+  async stop(): Promise<void> {
+    this.#stopping.abort();
+    await Promise.all(this.#underWay.values());
+  }
+
   async deliverDue(): Promise<void> {
-    if (this.#holding) return;
+    if (this.#holding || this.#stopping.signal.aborted) return;
     const now = this.service.now();
     const due = this.service.state.deliveries.filter(
       ({ eventId, dueAt }) => dueAt <= now && !this.#underWay.has(eventId),
     );
-    await Promise.all(due.map((delivery) => this.#deliver(delivery)));
+    for (const delivery of due) this.#underWay.set(delivery.eventId, this.#deliver(delivery));
+    await Promise.all(due.map(({ eventId }) => this.#underWay.get(eventId)));
   }
 
   async #deliver(delivery: Delivery): Promise<void> {
     const { state } = this.service;
     const event = state.events[delivery.eventId];
-    this.#underWay.add(delivery.eventId);
-    const taken = !event || !this.target || (await sendEvent(event, this.target));
+    const { signal } = this.#stopping;
+    const taken = !event || !this.target || (await sendEvent(event, this.target, signal));
     this.#underWay.delete(delivery.eventId);
     delivery.attempts += 1;
     delivery.dueAt = this.service.now() + pauseAfter(delivery.attempts);

@@ -1,7 +1,8 @@
 import type { BenchOrder } from '../contracts/bench.ts';
 import { shippedMail } from '../domain/order-mail.ts';
 import { queueMail } from '../store/mail-outbox.ts';
-import { addShipment, linesOfOrders } from '../store/orders.ts';
+import { linesOfOrders } from '../store/orders.ts';
+import { addShipment } from '../store/shipments.ts';
 import { shopSettings } from '../store/settings.ts';
 import { moveReservations, picksOfOrder, postToLedger } from '../store/stock.ts';
 import { inTransaction } from '../store/transaction.ts';

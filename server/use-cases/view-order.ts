@@ -5,13 +5,13 @@ import type { Deps } from '../ports.ts';
 import type { Database } from '../store/connection.ts';
 import {
   findOrder,
-  findShipment,
   linesOfOrders,
   listOrders,
   orderEvents,
   type OrderLineRow,
   type OrderRow,
 } from '../store/orders.ts';
+import { findShipment } from '../store/shipments.ts';
 import { paymentsOfOrder, refundsOfOrder } from '../store/payments.ts';
 import { Refusal } from './refusal.ts';
 

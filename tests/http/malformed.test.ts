@@ -4,7 +4,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { problemSchema } from '../../server/contracts/common.ts';
 import { analyseResponseSchema } from '../../server/contracts/circuits.ts';
 import { solveResponseSchema } from '../../server/contracts/packs.ts';
-import { calls, type Call } from '../../server/http/openapi.ts';
+import { calls, type Call } from '../../server/http/calls.ts';
 import { openTestShop, type TestShop, type Visit } from '../support/test-shop.ts';
 import { address, clockBrief, paidOrder, putIn, signIn, solve } from '../support/shopping.ts';
 

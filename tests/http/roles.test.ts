@@ -1,6 +1,6 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
 import { problemSchema } from '../../server/contracts/common.ts';
-import { calls, type Call } from '../../server/http/openapi.ts';
+import { calls, type Call } from '../../server/http/calls.ts';
 import { openTestShop, type TestShop, type Visit } from '../support/test-shop.ts';
 import { paidOrder, putIn, signIn } from '../support/shopping.ts';
 
