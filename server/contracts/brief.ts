@@ -6,19 +6,32 @@ export const ledColours = ['red', 'orange', 'yellow', 'green', 'blue'] as const;
 export const careLevels = ['as-stocked', 'lot-checked', 'bench-tuned', 'trimmer-fitted'] as const;
 export const ranks = ['best-value', 'closest', 'steadiest'] as const;
 
+const rateSentence = 'The rate must be a number above zero and not above a thousand million.';
+
 export const targetSchema = z.object({
-  value: quantity('The rate', 1e-9, 1e9, ''),
+  value: z.number({ error: rateSentence }).min(1e-9, rateSentence).max(1e9, rateSentence),
   unit: z.enum(targetUnits, { error: `The unit must be one of ${targetUnits.join(', ')}.` }),
 });
 export type Target = z.infer<typeof targetSchema>;
 
-export const supplySchema = z.union(
-  [
-    z.strictObject({ volts: quantity('The supply', 0.5, 60, 'V') }),
-    z.strictObject({ battery: line('The battery', 40) }),
-  ],
-  { error: 'Give the supply as { "volts": 5 } or { "battery": "<sku>" }.' },
-);
+const supplyForms = 'Give the supply as { "volts": 5 } or { "battery": "<sku>" }, one of the two.';
+
+/** A regulated voltage, or a battery of the shop's. */
+export const supplySchema = z
+  .strictObject(
+    {
+      volts: quantity('The supply', 0.5, 60, 'V').optional(),
+      battery: line('The battery', 40).optional(),
+    },
+    { error: supplyForms },
+  )
+  .transform((supply, context): { volts: number } | { battery: string } => {
+    const { volts, battery } = supply;
+    if (volts !== undefined && battery === undefined) return { volts };
+    if (battery !== undefined && volts === undefined) return { battery };
+    context.addIssue({ code: 'custom', message: supplyForms });
+    return z.NEVER;
+  });
 
 export const loadSchema = z.discriminatedUnion(
   'kind',

@@ -1,5 +1,28 @@
 import { z } from 'zod';
 
+const typeWords: Record<string, string> = {
+  string: 'text',
+  number: 'a number',
+  int: 'a whole number',
+  boolean: 'true or false',
+  object: 'an object',
+  array: 'a list',
+};
+
+// What a schema does not say in its own words is said in these; the path tells which field is meant.
+z.config({
+  customError: (issue) => {
+    if (issue.code === 'invalid_type') {
+      if (issue.input === undefined) return 'This is missing.';
+      return `This must be ${typeWords[issue.expected] ?? issue.expected}.`;
+    }
+    if (issue.code === 'unrecognized_keys') {
+      return `There is no field ${issue.keys.join(', ')} here; take it out.`;
+    }
+    return undefined;
+  },
+});
+
 /** A number between two bounds, with one sentence that says which numbers are accepted. */
 export function quantity(what: string, min: number, max: number, unit: string) {
   const sentence = `${what} must be a number from ${min} to ${max}${unit === '' ? '' : ` ${unit}`}.`;

@@ -27,6 +27,13 @@ export function sendProblem(
     );
 }
 
+/** The first fault as a sentence of its own: "target: This is missing." where it names no field itself. */
+function detailOf(first: FieldError | undefined): string {
+  if (first === undefined) return 'Some fields need a change.';
+  if (!first.message.startsWith('This ')) return first.message;
+  return first.path === '' ? 'Send a JSON object as the body.' : `${first.path}: ${first.message}`;
+}
+
 const bodyProblems: Record<string, [ProblemKind, string]> = {
   'entity.parse.failed': [
     'unreadable-request',
@@ -60,7 +67,7 @@ export const errorMap: ErrorRequestHandler = (error: unknown, req, res, next) =>
   if (error instanceof Refusal) return sendProblem(res, error.kind, error.message, error.errors);
   if (error instanceof ZodError) {
     const errors = fieldErrors(error);
-    return sendProblem(res, 'invalid', errors[0]?.message ?? 'Some fields need a change.', errors);
+    return sendProblem(res, 'invalid', detailOf(errors[0]), errors);
   }
   if (error instanceof BadSignature) return sendProblem(res, 'bad-signature', error.message);
   const type = error instanceof Error && 'type' in error ? String(error.type) : '';
