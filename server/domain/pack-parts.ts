@@ -41,7 +41,8 @@ export function markingOf(part: CataloguePart): Marking {
   if (isKind(part, 'resistor')) {
     const { ohms, tolerance } = part.facts;
     if (part.mounting === 'surface-mount') {
-      const code = (tolerance <= 0.01 ? e96Code(ohms) : null) ?? chipCode(ohms, 3);
+      const code =
+        (tolerance <= 0.01 ? e96Code(ohms) : null) ?? chipCode(ohms, tolerance <= 0.01 ? 3 : 2);
       return { bands: null, code, text: code ?? formatOhms(ohms) };
     }
     const coded = resistorBands(ohms, tolerance);
