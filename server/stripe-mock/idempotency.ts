@@ -42,9 +42,10 @@ function hashOf(parts: string[]): string {
   return createHash('sha256').update(parts.join('\n')).digest('hex');
 }
 
-function forgetOld({ state, now }: Service): void {
-  for (const [key, { keptAt }] of Object.entries(state.answers)) {
-    if (now() - keptAt >= keptMs) delete state.answers[key];
+function forgetOld(service: Service): void {
+  const { answers } = service.state;
+  for (const [key, { keptAt }] of Object.entries(answers)) {
+    if (service.now() - keptAt >= keptMs) delete answers[key];
   }
 }
 
@@ -53,8 +54,8 @@ function keepAnswer(service: Service, response: Response, key: string, requestHa
   const send = response.json.bind(response);
   response.json = (body: object) => {
     if (response.statusCode < 400 || response.locals.underWay === true) {
-      const answer = { requestHash, keptAt: service.now(), status: response.statusCode, body };
-      service.state.answers[key] = structuredClone(answer);
+      const { statusCode: status } = response;
+      service.state.answers[key] = { requestHash, keptAt: service.now(), status, body };
       service.save();
     }
     return send(body);

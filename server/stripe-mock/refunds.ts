@@ -39,7 +39,7 @@ export function createRefund(service: Service, asked: RefundParameters): Stripe.
 function chargeFor(service: Service, asked: RefundParameters): Stripe.Charge {
   if (asked.charge !== undefined) {
     const charge = service.state.charges[asked.charge];
-    if (!charge) throw missingResource('charge', asked.charge);
+    if (!charge) throw missingResource('charge', asked.charge, 'charge');
     return charge;
   }
   if (asked.payment_intent === undefined) {
@@ -47,7 +47,7 @@ function chargeFor(service: Service, asked: RefundParameters): Stripe.Charge {
     throw invalidRequest(message, 'parameter_missing', 'payment_intent');
   }
   const intent = service.state.intents[asked.payment_intent];
-  if (!intent) throw missingResource('payment_intent', asked.payment_intent);
+  if (!intent) throw missingResource('payment_intent', asked.payment_intent, 'payment_intent');
   const latest = intent.latest_charge;
   const charge = typeof latest === 'string' ? service.state.charges[latest] : undefined;
   if (!charge) {

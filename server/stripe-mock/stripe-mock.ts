@@ -86,9 +86,11 @@ export function createStripeMock(settings: StripeMockSettings): StripeMock {
     },
     async close() {
       if (beat) clearInterval(beat);
+      const closed = new Promise((done) => (server ? server.close(done) : done(undefined)));
       server?.closeAllConnections();
+      // A delivery that ended later would write the state file anew, over that of a successor.
       await delivery.stop();
-      await new Promise((done) => (server ? server.close(done) : done(undefined)));
+      await closed;
     },
   };
 }

@@ -73,8 +73,14 @@ export class WebhookDelivery {
     const due = this.service.state.deliveries.filter(
       ({ eventId, dueAt }) => dueAt <= now && !this.#underWay.has(eventId),
     );
-    for (const delivery of due) this.#underWay.set(delivery.eventId, this.#deliver(delivery));
-    await Promise.all(due.map(({ eventId }) => this.#underWay.get(eventId)));
+    await Promise.all(due.map((delivery) => this.#start(delivery)));
+  }
+
+  #start(delivery: Delivery): Promise<void> {
+    const { eventId } = delivery;
+    const work = this.#deliver(delivery).finally(() => this.#underWay.delete(eventId));
+    this.#underWay.set(eventId, work);
+    return work;
   }
 
   async #deliver(delivery: Delivery): Promise<void> {
@@ -82,7 +88,6 @@ export class WebhookDelivery {
     const event = state.events[delivery.eventId];
     const { signal } = this.#stopping;
     const taken = !event || !this.target || (await sendEvent(event, this.target, signal));
-    this.#underWay.delete(delivery.eventId);
     delivery.attempts += 1;
     delivery.dueAt = this.service.now() + pauseAfter(delivery.attempts);
     if (taken || delivery.attempts >= mostAttempts) {

@@ -83,24 +83,21 @@ describe('checkout sessions', () => {
     });
   });
 
-  describe('when the same idempotency key comes again', () => {
-    const key = { idempotencyKey: 'order-1001' };
-    it('gives the same session and says that it is a replay', async () => {
-      const first = await shop.stripe.checkout.sessions.create(checkout(), key);
-      const again = await shop.stripe.checkout.sessions.create(checkout(), key);
-      expect(again.id).toBe(first.id);
-      expect(again.lastResponse.headers['idempotent-replayed']).toBe('true');
-      expect(first.lastResponse.headers['idempotent-replayed']).toBeUndefined();
-      expect(again.lastResponse.requestId).toMatch(/^req_/);
+  describe('when it shall be open for exactly 30 minutes', () => {
+    const asked = (seconds: number) => {
+      const expires = Math.floor(shop.clock.now.getTime() / 1000) + seconds;
+      return shop.stripe.checkout.sessions.create(checkout({ expires_at: expires }));
+    };
+
+    it('takes it, though the request is two seconds on its way', async () => {
+      const session = asked(1800);
+      shop.clock.now = new Date(shop.clock.now.getTime() + 2000);
+      const { created, expires_at: expires } = await session;
+      expect(expires - created).toBe(1798);
     });
 
-    it('refuses it for another request', async () => {
-      await shop.stripe.checkout.sessions.create(checkout(), key);
-      const other = checkout({ client_reference_id: 'TW-1002' });
-      await expect(shop.stripe.checkout.sessions.create(other, key)).rejects.toMatchObject({
-        type: 'StripeIdempotencyError',
-        statusCode: 400,
-      });
+    it('still refuses ten seconds less', async () => {
+      await expect(asked(1790)).rejects.toMatchObject({ param: 'expires_at' });
     });
   });
 

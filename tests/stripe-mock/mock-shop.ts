@@ -4,7 +4,7 @@ import { text } from 'node:stream/consumers';
 import Stripe from 'stripe';
 import { createStripeMock, type StripeMock } from '../../server/stripe-mock/stripe-mock.ts';
 
-const secretKey = 'sk_test_local_key';
+export const secretKey = 'sk_test_local_key';
 const webhookSecret = 'whsec_local_secret';
 
 export interface MockShop {

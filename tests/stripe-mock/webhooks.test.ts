@@ -1,9 +1,21 @@
-import { mkdtempSync, rmSync } from 'node:fs';
+import { existsSync, mkdtempSync, rmSync } from 'node:fs';
+import { createServer } from 'node:http';
+import type { AddressInfo } from 'node:net';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
+import { setTimeout as pause } from 'node:timers/promises';
 import { afterEach, beforeEach, describe, expect, it } from 'vitest';
+import { createStripeMock } from '../../server/stripe-mock/stripe-mock.ts';
 import { pauseAfter } from '../../server/stripe-mock/webhook-delivery.ts';
-import { checkout, fillIn, goodCard, openMockShop, type MockShop } from './mock-shop.ts';
+import {
+  checkout,
+  clientOf,
+  fillIn,
+  goodCard,
+  openMockShop,
+  secretKey,
+  type MockShop,
+} from './mock-shop.ts';
 
 let folder: string;
 let shop: MockShop;
@@ -64,6 +76,31 @@ describe('webhooks', () => {
       expect(shop.arrived).toEqual(['checkout.session.expired', 'checkout.session.expired']);
       const kept = await shop.stripe.events.retrieve(String(event?.id));
       expect(kept.type).toBe('checkout.session.expired');
+    });
+  });
+
+  describe('when the stand-in is closed while an event is under way', () => {
+    it('writes nothing afterwards, and keeps the event for the next start', async () => {
+      let arrived = () => {};
+      const reached = new Promise<void>((done) => (arrived = done));
+      const slow = createServer((_request, _response) => arrived());
+      await new Promise<void>((done) => slow.listen(0, '127.0.0.1', done));
+      const { port } = slow.address() as AddressInfo;
+      const stateFile = path.join(folder, 'slow', 'payments.json');
+      const settings = { secretKey, webhookSecret: 'whsec_local_secret', stateFile };
+      const webhookUrl = `http://127.0.0.1:${port}/hook`;
+      const mock = createStripeMock({ ...settings, webhookUrl });
+      const stripe = clientOf(await mock.listen());
+      const intent = await stripe.paymentIntents.create({ amount: 100, currency: 'eur' });
+      await reached;
+      await mock.close();
+      const kept = createStripeMock({ ...settings, webhookUrl: null }).controls.events();
+      expect(kept).toMatchObject([{ data: { object: { id: intent.id } }, pending_webhooks: 1 }]);
+      rmSync(path.dirname(stateFile), { recursive: true });
+      slow.closeAllConnections();
+      await new Promise((done) => slow.close(done));
+      await pause(50);
+      expect(existsSync(path.dirname(stateFile))).toBe(false);
     });
   });
 
