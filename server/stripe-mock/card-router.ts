@@ -1,6 +1,7 @@
 import express, { Router, type Response } from 'express';
 import { declineOf, readCard, type CardField } from './card.ts';
-import { endedPage, payPage, successAddress, type PageTrouble } from './card-page.ts';
+import type { PageTrouble } from './card-form.ts';
+import { endedPage, payPage, successAddress } from './card-page.ts';
 import { completePayment, declinePayment } from './payments.ts';
 import type { Service } from './service.ts';
 import { findSession } from './sessions.ts';
