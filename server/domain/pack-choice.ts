@@ -82,8 +82,12 @@ export function demandOfChoice(choice: PackChoice): (PartDemand & { role: PackRo
 export function missingAccessory(inHand: BriefInHand, accessories: Accessories): string | null {
   const { brief, led, battery, holder } = inHand;
   const short = (part: CataloguePart | null, what: string) => {
-    if (part !== null && part.available >= brief.quantity) return null;
-    const left = part?.available ?? 0;
+    if (part === null) {
+      const often = brief.quantity === 1 ? '' : ` ${brief.quantity} times`;
+      return `The shelves do not hold ${what}${often} today.`;
+    }
+    if (part.available >= brief.quantity) return null;
+    const left = part.available;
     return `Only ${left} of ${what} ${left === 1 ? 'is' : 'are'} left today and the brief asks for ${brief.quantity}.`;
   };
   return (
