@@ -170,7 +170,13 @@ describe('chooseAccessories', () => {
   it('needs the cells and their holder where the brief runs from them', () => {
     const without = catalogue.filter((part) => part.kind !== 'holder');
     const inHand = resolved({ ...second, supply: { battery: 'TW-CELL-AA-2' } }, without);
-    expect(missingAccessory(inHand, chooseAccessories(without, inHand))).toMatch(/the holder/);
+    expect(missingAccessory(inHand, chooseAccessories(without, inHand))).toBe(
+      'The shelves do not hold the holder today.',
+    );
+    const many = resolved({ ...second, quantity: 101 });
+    expect(missingAccessory(many, chooseAccessories(catalogue, many))).toBe(
+      'The shelves do not hold the decoupling capacitor 101 times today.',
+    );
   });
 });
 

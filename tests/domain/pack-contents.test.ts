@@ -314,7 +314,7 @@ describe('the mails', () => {
     lines: [line, line],
     link: 'https://tockwell.example/o?a=1&b="2"',
     countryName: 'Ireland',
-  } as Parameters<typeof confirmationMail>[0]);
+  });
 
   it('confirm with totals, tax, the day, withdrawal and cautions, as text and as HTML', () => {
     for (const body of [confirmation.text, confirmation.html]) {

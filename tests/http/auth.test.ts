@@ -27,7 +27,7 @@ async function newcomer() {
 }
 
 function cookiesOf(answer: Response): Record<string, string> {
-  const set = (answer.get('Set-Cookie') ?? []) as string[];
+  const set = answer.get('Set-Cookie') ?? [];
   return Object.fromEntries(
     set.map((line) => {
       const [pair = ''] = line.split(';');
@@ -93,7 +93,7 @@ describe('sign-in', () => {
     const visit = shop.visit();
     const body = { email: 'maker@tockwell.example', password: demoPassword };
     const answer = await visit.post('/api/auth/sign-in').send(body).expect(200);
-    const set = answer.get('Set-Cookie') as string[] | undefined;
+    const set = answer.get('Set-Cookie');
     expect(set).toHaveLength(2);
     for (const line of set ?? []) expect(line).toMatch(/HttpOnly.*SameSite=Lax/);
     expect(JSON.stringify(answer.body)).not.toMatch(/password|hash/i);

@@ -14,7 +14,7 @@ import {
 } from '../../server/contracts/desk.ts';
 import { partsPageSchema } from '../../server/contracts/parts.ts';
 import { shopSchema } from '../../server/contracts/shop.ts';
-import { calls } from '../../server/http/openapi.ts';
+import { calls } from '../../server/http/calls.ts';
 import { openTestShop, type TestShop, type Visit } from '../support/test-shop.ts';
 import { paidOrder, placeOrder, signIn, stockDisagreements } from '../support/shopping.ts';
 

@@ -6,7 +6,6 @@ export const clockBrief: SolveRequestInput = {
   target: { value: 1, unit: 'kHz' },
   load: { kind: 'logic' },
 };
-export const blinkerBrief: SolveRequestInput = { target: { value: 90, unit: 'per_minute' } };
 /** Above 3 Hz, so the flash caution must be acknowledged. */
 export const flashBrief: SolveRequestInput = { target: { value: 10, unit: 'Hz' } };
 

@@ -68,7 +68,12 @@ export async function openTestShop(settings: { clientDir?: string } = {}): Promi
   const url = `http://127.0.0.1:${(server.address() as AddressInfo).port}`;
   const secretKey = 'sk_test_local_http';
   const webhookUrl = `${url}/api/webhooks/stripe`;
-  const payments = createStripeMock({ secretKey, webhookSecret, webhookUrl, clock: clock.now });
+  const payments = createStripeMock({
+    secretKey,
+    webhookSecret,
+    webhookUrl,
+    clock: () => clock.now(),
+  });
   const apiUrl = await payments.listen();
   const mail = createMailStandIn();
   const { smtpUrl } = await mail.listen();

@@ -1,11 +1,5 @@
 import fc from 'fast-check';
-import type {
-  SearchBrief,
-  Shelf,
-  StockedCapacitor,
-  StockedComparator,
-  StockedResistor,
-} from '../../../server/engine/search/shelf.ts';
+import type { SearchBrief, Shelf } from '../../../server/engine/search/shelf.ts';
 
 /** Preferred numbers of a few decades; repeated picks give several parts of one value. */
 const ohmValues = [1, 10, 100].flatMap((decade) =>
@@ -65,9 +59,9 @@ export const smallShelf: fc.Arbitrary<Shelf> = fc
     comparators: fc.array(comparator, { minLength: 1, maxLength: 3 }),
   })
   .map(({ resistors, capacitors, comparators }) => ({
-    resistors: numbered(resistors) as StockedResistor[],
-    capacitors: numbered(capacitors) as StockedCapacitor[],
-    comparators: numbered(comparators) as StockedComparator[],
+    resistors: numbered(resistors),
+    capacitors: numbered(capacitors),
+    comparators: numbered(comparators),
   }));
 
 const led = fc.record({
