@@ -33,11 +33,10 @@ export interface PackBook {
 
 /** Reads shelves, fees and home tax. */
 export async function openPackBook(db: Database): Promise<PackBook> {
-  const [catalogue, settings, rates] = await Promise.all([
-    loadCatalogue(db),
-    shopSettings(db),
-    taxRates(db),
-  ]);
+  // One after the other: inside a transaction they share a single connection.
+  const catalogue = await loadCatalogue(db);
+  const settings = await shopSettings(db);
+  const rates = await taxRates(db);
   const home = rates.find((rate) => rate.country === settings.homeCountry);
   return {
     catalogue,

@@ -2,6 +2,7 @@ import { mkdirSync } from 'node:fs';
 import path from 'node:path';
 import { fileURLToPath } from 'node:url';
 import type { Page } from 'playwright-core';
+import sharp from 'sharp';
 import { openBrowser } from './browser.ts';
 
 /** Makes the README's pictures anew from the demonstration shop. */
@@ -42,7 +43,11 @@ async function shoot(name: string, address: string, on: Page = page): Promise<vo
   await on.goto(base + address);
   await on.waitForLoadState('networkidle');
   await on.waitForTimeout(1200);
-  await on.screenshot({ path: path.join(folder, `${name}.png`) });
+  const picture = await on.screenshot();
+  // A palette keeps the pictures small; the pages have few colours.
+  await sharp(picture)
+    .png({ palette: true, quality: 92 })
+    .toFile(path.join(folder, `${name}.png`));
   console.log(`assets/screenshots/${name}.png`);
 }
 
