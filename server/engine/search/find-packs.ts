@@ -9,7 +9,7 @@ import {
 import { formTimingTables, type TimingTables } from './composites.ts';
 import { frameCircuit, framesFor, type Frame } from './frame.ts';
 import { guaranteedBand, worseEnd, type GuaranteedBand } from './guaranteed-band.ts';
-import { holdsBand, kitYield, type KitYield } from './kit-yield.ts';
+import { holdsBand, holdsBandAtBest, kitYield, type KitYield } from './kit-yield.ts';
 import type { SearchBrief, Shelf } from './shelf.ts';
 import type { Circuit } from '../circuit.ts';
 
@@ -202,7 +202,7 @@ function createHopeless(brief: SearchBrief): (frame: Frame) => boolean {
     ].join();
     let answer = known.get(key);
     if (answer === undefined) {
-      answer = !holdsBand(perfectCandidate(frame, brief), brief, hopelessYield);
+      answer = !holdsBandAtBest(perfectCandidate(frame, brief), brief, hopelessYield);
       known.set(key, answer);
     }
     return answer;

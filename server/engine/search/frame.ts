@@ -1,6 +1,7 @@
 import { createCircuit, type Circuit } from '../circuit.ts';
 import { demandMakeable, demandOf, type ResistorDemand } from './demand.ts';
 import {
+  bearsLoad,
   capacitorSuits,
   comparatorSuits,
   idealLedOhms,
@@ -40,6 +41,7 @@ export function framesFor(shelf: Shelf, brief: SearchBrief): Frame[] {
     const ledResistor = chooseLedResistor(shelf.resistors, comparator, brief);
     if (pullUp === undefined || ledResistor === undefined) continue;
     for (const thresholds of thresholdSets(shelf.resistors, comparator, brief)) {
+      if (!bearsLoad(comparator, thresholds, brief)) continue;
       const { r1, r2, r3 } = thresholds;
       const fixed = [r1, r2, r3, pullUp, ledResistor];
       if (!demandMakeable(fixed, brief.quantity)) continue;

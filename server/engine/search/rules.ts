@@ -16,6 +16,11 @@ export const limits = {
   strayFarads: 5e-12,
   /** Delays may take this part of a period before another comparator must do the work. */
   maxDelayShare: 0.1,
+  /**
+   * Share of the way from the upper threshold to the supply that the LED may pull the output down:
+   * more, and the lit share and the rate hang on the output's own resistance.
+   */
+  maxLoadDrop: 0.12,
   minThresholdOhms: 1e4,
   maxThresholdOhms: 1e6,
   /** Tolerance of resistors that may set thresholds. */
@@ -45,6 +50,23 @@ export function comparatorSuits(part: StockedComparator, brief: SearchBrief): bo
     delays * brief.targetHz <= limits.maxDelayShare &&
     (brief.load === null || (part.output === 'push-pull' && part.maxOutputAmps >= brief.load.amps))
   );
+}
+
+/**
+ * True when the LED's current leaves the output high enough for these thresholds: its drop over the
+ * typical output resistance is at most 12 % of the supply above the upper threshold. Without an LED
+ * always true.
+ */
+export function bearsLoad(
+  part: StockedComparator,
+  thresholds: { r1: StockedResistor; r2: StockedResistor; r3: StockedResistor },
+  brief: SearchBrief,
+): boolean {
+  if (brief.load === null) return true;
+  const { r1, r2, r3 } = thresholds;
+  const pull = 1 / r1.ohms + 1 / r3.ohms;
+  const upper = pull / (pull + 1 / r2.ohms);
+  return brief.load.amps * part.highOhms <= limits.maxLoadDrop * (1 - upper) * brief.supplyVolts;
 }
 
 /** True when a capacitor may set the time for this brief. Class-2 ceramics never do. */

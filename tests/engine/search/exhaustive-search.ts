@@ -66,11 +66,13 @@ function frames(shelf: Shelf, brief: SearchBrief): FrameParts[] {
             : null;
         if (ledResistor === null) return [];
       }
-      return thresholdChoices(shelf.resistors, comparator, brief).flatMap((thresholds) =>
-        shelf.capacitors
-          .filter((part) => setsTime(part, brief))
-          .map((capacitor) => ({ comparator, thresholds, pullUp, ledResistor, capacitor })),
-      );
+      return thresholdChoices(shelf.resistors, comparator, brief)
+        .filter((thresholds) => bearsLed(comparator, thresholds, brief))
+        .flatMap((thresholds) =>
+          shelf.capacitors
+            .filter((part) => setsTime(part, brief))
+            .map((capacitor) => ({ comparator, thresholds, pullUp, ledResistor, capacitor })),
+        );
     });
 }
 
@@ -81,6 +83,18 @@ function runs(part: StockedComparator, brief: SearchBrief): boolean {
   if ((part.delayLowHighSeconds + part.delayHighLowSeconds) * brief.targetHz > 0.1) return false;
   if (brief.load === null) return true;
   return part.output === 'push-pull' && part.maxOutputAmps >= brief.load.amps;
+}
+
+/** The LED's drop over the output resistance is at most 12 % of what lies above the upper threshold. */
+function bearsLed(
+  part: StockedComparator,
+  [r1, r2, r3]: Recipe['thresholds'],
+  brief: SearchBrief,
+): boolean {
+  if (brief.load === null) return true;
+  const upperVolts =
+    (brief.supplyVolts * (1 / r1.ohms + 1 / r3.ohms)) / (1 / r1.ohms + 1 / r2.ohms + 1 / r3.ohms);
+  return brief.load.amps * part.highOhms <= 0.12 * (brief.supplyVolts - upperVolts);
 }
 
 function setsTime(part: StockedCapacitor, brief: SearchBrief): boolean {
