@@ -51,6 +51,16 @@ export const quoteQuerySchema = z.object({
 });
 export const quoteSchema = z.object({
   country: z.string(),
+  /** The basket's lines at this country's prices; they add up to the goods. */
+  lines: z.array(
+    z.object({
+      id: z.string(),
+      sentence: z.string(),
+      quantity: z.int(),
+      unitPrice: moneySchema,
+      total: moneySchema,
+    }),
+  ),
   goods: moneySchema,
   shipping: moneySchema,
   tax: moneySchema,

@@ -80,6 +80,13 @@ export async function quoteCheckout(
   const shippingMinor = method ? withTax(method.netMinor, rate.basisPoints) : 0;
   return {
     country: rate.country,
+    lines: priced.lines.map(({ line, assessed, unitGrossMinor, lineGrossMinor }) => ({
+      id: line.id,
+      sentence: assessed.inHand.brief.sentence,
+      quantity: line.quantity,
+      unitPrice: money(unitGrossMinor),
+      total: money(lineGrossMinor),
+    })),
     goods: money(priced.goodsMinor),
     shipping: money(shippingMinor),
     tax: money(priced.goodsTaxMinor + taxWithin(shippingMinor, rate.basisPoints)),
