@@ -1,5 +1,6 @@
 import { existsSync } from 'node:fs';
 import path from 'node:path';
+import compression from 'compression';
 import cookieParser from 'cookie-parser';
 import express, { type Express } from 'express';
 import helmet from 'helmet';
@@ -35,7 +36,7 @@ export function createApp(deps: Deps, settings: AppSettings): Express {
   app.disable('x-powered-by');
   if (settings.trustProxy) app.set('trust proxy', 1);
   if (settings.logger) app.use(requestLog(settings.logger));
-  app.use(securityHeaders(settings.secureCookies));
+  app.use(securityHeaders(settings.secureCookies), compression());
 
   app.get('/api/health', (_req, res) => {
     res.json({ status: 'ok' });
