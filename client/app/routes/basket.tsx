@@ -1,5 +1,6 @@
 import { BasketLine } from '../../features/basket/components/basket-line.tsx';
 import { useBasket } from '../../features/basket/api/basket.ts';
+import { UnpaidNotice } from '../../features/orders/components/unpaid-notice.tsx';
 import { usePageTitle } from '../../lib/use-page-title.ts';
 import { ButtonLink } from '../../ui/button.tsx';
 import { EmptyState } from '../../ui/empty-state.tsx';
@@ -15,6 +16,7 @@ export function Component() {
   const basket = useBasket();
   return (
     <Page>
+      <UnpaidNotice />
       {basket.isPending && <Waiting words="Fetching your basket" />}
       {basket.isError && (
         <ErrorPanel isPage error={basket.error} onRetry={() => void basket.refetch()} />

@@ -1,15 +1,13 @@
 import { useQuery } from '@tanstack/react-query';
-import { Link, Navigate } from 'react-router-dom';
-import type { Basket } from '../../../server/contracts/basket.ts';
+import { Navigate } from 'react-router-dom';
 import { useBasket } from '../../features/basket/api/basket.ts';
 import { CheckoutForm } from '../../features/checkout/components/checkout-form.tsx';
 import type { KnownBuyer } from '../../features/checkout/model.ts';
 import { myOrdersOptions, orderOptions } from '../../features/orders/api/orders.ts';
+import { UnpaidNotice } from '../../features/orders/components/unpaid-notice.tsx';
 import { useSession } from '../../lib/session.ts';
-import { bindUnits } from '../../lib/spaces.ts';
 import { usePageTitle } from '../../lib/use-page-title.ts';
 import { ErrorPanel } from '../../ui/error-panel.tsx';
-import { Money } from '../../ui/money.tsx';
 import { Opening, Page } from '../../ui/page.tsx';
 import { Waiting } from '../../ui/waiting.tsx';
 import { paths } from '../paths.ts';
@@ -46,6 +44,7 @@ export function Component() {
   if (basket.data.lines.length === 0) return <Navigate to={paths.basket.link()} replace />;
   return (
     <Page>
+      <UnpaidNotice />
       <Opening>
         Where {basket.data.kits === 1 ? 'does' : 'do'}{' '}
         <strong>{basket.data.kits === 1 ? 'your kit' : `your ${basket.data.kits} kits`}</strong> go,
@@ -54,28 +53,8 @@ export function Component() {
       <CheckoutForm
         known={known}
         acknowledgements={basket.data.acknowledgements}
-        summary={<Summary basket={basket.data} />}
+        basketPath={paths.basket.link()}
       />
     </Page>
-  );
-}
-
-function Summary({ basket }: { basket: Basket }) {
-  return (
-    <section aria-label="What you order">
-      <ul className="border-t-2 border-ink">
-        {basket.lines.map((line) => (
-          <li key={line.id} className="ledger-line flex justify-between gap-4 py-2.5">
-            <span>
-              <strong className="font-heavy">{line.quantity} ×</strong> {bindUnits(line.sentence)}
-            </span>
-            <Money value={line.total} className="font-strong" />
-          </li>
-        ))}
-      </ul>
-      <Link className="link inline-block py-2" to={paths.basket.link()}>
-        Change the basket
-      </Link>
-    </section>
   );
 }

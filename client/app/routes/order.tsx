@@ -1,3 +1,4 @@
+import { useEffect } from 'react';
 import { Link, useParams, useSearchParams } from 'react-router-dom';
 import type { Order } from '../../../server/contracts/orders.ts';
 import { sheetPdfUrl } from '../../features/build-sheet/api/build-sheet.ts';
@@ -8,6 +9,7 @@ import { OrderSteps } from '../../features/orders/components/order-steps.tsx';
 import { PayNow } from '../../features/orders/components/pay-now.tsx';
 import { openingFor, wordsForStatus } from '../../features/orders/model.ts';
 import { formatDateTime } from '../../lib/format-time.ts';
+import { forgetUnpaid } from '../../lib/unpaid-order.ts';
 import { usePageTitle } from '../../lib/use-page-title.ts';
 import { Button } from '../../ui/button.tsx';
 import { ErrorPanel } from '../../ui/error-panel.tsx';
@@ -21,6 +23,10 @@ export function Component() {
   const [query] = useSearchParams();
   const token = query.get('token');
   const order = useOrder(ref, token);
+  const status = order.data?.status;
+  useEffect(() => {
+    if (status !== undefined && status !== 'awaiting_payment') forgetUnpaid(ref);
+  }, [status, ref]);
   usePageTitle(`Order ${ref}`);
   return (
     <Page>

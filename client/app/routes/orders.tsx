@@ -1,5 +1,6 @@
 import { Link, useSearchParams } from 'react-router-dom';
 import { OrderList } from '../../features/orders/components/order-list.tsx';
+import { UnpaidNotice } from '../../features/orders/components/unpaid-notice.tsx';
 import { useMyOrders } from '../../features/orders/api/orders.ts';
 import { isProblem } from '../../lib/problem-error.ts';
 import { useSession } from '../../lib/session.ts';
@@ -28,6 +29,7 @@ function Guest() {
   return (
     <>
       <h1 className="sr-only">My orders</h1>
+      <UnpaidNotice />
       <EmptyState
         title="Sign in to see your orders."
         action={<ButtonLink to={paths.signIn.link(paths.orders.link())}>Sign in</ButtonLink>}
@@ -52,6 +54,7 @@ function Orders() {
     return (
       <>
         <h1 className="sr-only">My orders</h1>
+        <UnpaidNotice />
         <EmptyState
           title="No orders yet."
           action={<ButtonLink to={paths.home.link()}>Make a kit</ButtonLink>}

@@ -5,6 +5,7 @@ import { useOrderUntilPaid } from '../../features/orders/api/orders.ts';
 import { PayNow } from '../../features/orders/components/pay-now.tsx';
 import { formatMoment } from '../../lib/format-time.ts';
 import { bindUnits } from '../../lib/spaces.ts';
+import { forgetUnpaid } from '../../lib/unpaid-order.ts';
 import { usePageTitle } from '../../lib/use-page-title.ts';
 import { ButtonLink } from '../../ui/button.tsx';
 import { ErrorPanel } from '../../ui/error-panel.tsx';
@@ -32,6 +33,10 @@ export function Component() {
   const [query] = useSearchParams();
   const token = query.get('token');
   const order = useOrderUntilPaid(ref, token);
+  const status = order.data?.status;
+  useEffect(() => {
+    if (status !== undefined && status !== 'awaiting_payment') forgetUnpaid(ref);
+  }, [status, ref]);
   usePageTitle('Thank you');
   return (
     <Page className="pb-10">
@@ -86,7 +91,8 @@ function Confirmed({ order, token }: { order: Order; token: string | null }) {
         ) : (
           <>
             Thank you. <strong className="whitespace-nowrap">{order.ref}</strong> is{' '}
-            <strong>paid</strong>, and the packers have it.
+            <strong>paid</strong>
+            {order.status === 'paid' && ' and waits in the packers’ queue'}.
           </>
         )}
       </Opening>

@@ -3,6 +3,7 @@ import { z } from 'zod';
 import { meSchema } from '../../../../server/contracts/auth.ts';
 import type { Me, SignIn, SignUp } from '../../../../server/contracts/auth.ts';
 import { request } from '../../../lib/http.ts';
+import { forgetAllKept } from '../../../lib/kept-session.ts';
 import { sessionOptions } from '../../../lib/session.ts';
 
 /** Who is at the screen changes what everything else answers: all of it is asked again. */
@@ -34,6 +35,7 @@ export function useSignUp() {
 export function useSignOut() {
   return usePersonChange(async () => {
     await request(z.unknown(), '/api/auth/sign-out', { method: 'POST' });
+    forgetAllKept();
     return null;
   });
 }

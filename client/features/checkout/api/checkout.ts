@@ -5,10 +5,12 @@ import {
   useQuery,
   useQueryClient,
 } from '@tanstack/react-query';
-import { useRef } from 'react';
+import { useEffect, useRef } from 'react';
 import { checkoutResponseSchema, quoteSchema } from '../../../../server/contracts/orders.ts';
 import type { CheckoutInput } from '../../../../server/contracts/orders.ts';
 import { newIdempotencyKey, queryString, request } from '../../../lib/http.ts';
+import { rememberUnpaid } from '../../../lib/unpaid-order.ts';
+import { forgetTyped } from '../typed-before.ts';
 
 function quoteOptions(country: string, shippingMethod: string | undefined) {
   return queryOptions({
@@ -38,16 +40,30 @@ function useKeyFor(): (body: CheckoutInput) => string {
 export function usePlaceOrder() {
   const keyFor = useKeyFor();
   const client = useQueryClient();
-  return useMutation({
+  const place = useMutation({
     mutationFn: (body: CheckoutInput) =>
       request(checkoutResponseSchema, '/api/checkout', {
         method: 'POST',
         body,
         idempotencyKey: keyFor(body),
       }),
-    onSuccess: ({ paymentUrl }) => {
+    onSuccess: ({ orderRef, paymentUrl }) => {
+      rememberUnpaid({ orderRef, paymentUrl });
+      forgetTyped();
       void client.invalidateQueries({ queryKey: ['basket'] });
       window.location.assign(paymentUrl);
     },
   });
+  const { reset } = place;
+  useEffect(() => {
+    // The Back button may bring the page back as it was left: busy, with a basket that is gone.
+    const wake = (event: PageTransitionEvent) => {
+      if (!event.persisted) return;
+      reset();
+      void client.invalidateQueries({ queryKey: ['basket'] });
+    };
+    window.addEventListener('pageshow', wake);
+    return () => window.removeEventListener('pageshow', wake);
+  }, [client, reset]);
+  return place;
 }

@@ -1,4 +1,5 @@
 import { zodResolver } from '@hookform/resolvers/zod';
+import { useState } from 'react';
 import { useForm, useWatch } from 'react-hook-form';
 import type { UseFormReturn } from 'react-hook-form';
 import type { Quote } from '../../../../server/contracts/orders.ts';
@@ -10,7 +11,9 @@ import { Check, Field, Select } from '../../../ui/field.tsx';
 import { Notice } from '../../../ui/notice.tsx';
 import { usePlaceOrder, useQuote } from '../api/checkout.ts';
 import { checkoutFormSchema, emptyForm, toCheckout } from '../model.ts';
+import { keepTyped, readTyped } from '../typed-before.ts';
 import type { Acknowledgement, CheckedForm, CheckoutForm as Values, KnownBuyer } from '../model.ts';
+import { Summary } from './summary.tsx';
 import { Totals } from './totals.tsx';
 
 type Form = UseFormReturn<Values, unknown, CheckedForm>;
@@ -19,14 +22,13 @@ type Form = UseFormReturn<Values, unknown, CheckedForm>;
 export function CheckoutForm(props: {
   known: KnownBuyer | undefined;
   acknowledgements: readonly Acknowledgement[];
-  summary: React.ReactNode;
+  basketPath: string;
 }) {
+  const [typedBefore] = useState(readTyped);
+  const codes = props.acknowledgements.map((each) => each.code);
   const form = useForm<Values, unknown, CheckedForm>({
     resolver: zodResolver(checkoutFormSchema),
-    values: emptyForm(
-      props.known,
-      props.acknowledgements.map((each) => each.code),
-    ),
+    values: { ...emptyForm(props.known, codes), ...typedBefore },
     resetOptions: { keepDirtyValues: true },
   });
   const place = usePlaceOrder();
@@ -36,6 +38,7 @@ export function CheckoutForm(props: {
   return (
     <form
       noValidate
+      onChange={() => keepTyped(form.getValues())}
       onSubmit={(event) =>
         void form.handleSubmit((values) => place.mutate(toCheckout(values)))(event)
       }
@@ -47,7 +50,7 @@ export function CheckoutForm(props: {
         <How form={form} quote={quote.data} />
       </div>
       <div className="space-y-6 lg:sticky lg:top-6">
-        {props.summary}
+        <Summary quote={quote.data} updating={quote.isFetching} basketPath={props.basketPath} />
         <Totals quote={quote.data} updating={quote.isFetching} error={quote.error} />
         <MustKnow form={form} acknowledgements={props.acknowledgements} />
         {place.isError && (
