@@ -3,7 +3,7 @@ import type { Advice } from '../contracts/packs.ts';
 import type { FoundPacks, RankedPack } from '../engine/search/find-packs.ts';
 import { worseEnd } from '../engine/search/guaranteed-band.ts';
 import { limits } from '../engine/search/rules.ts';
-import { percent, plusMinus } from './wording.ts';
+import { percent, plusMinus, rateWords, targetHertz } from './wording.ts';
 
 /** Solves the brief again with a change; the closest pack, or null. */
 export type Retry = (change: Partial<ResolvedBrief>) => RankedPack | null;
@@ -28,11 +28,52 @@ export function adviseOn(
     ];
   }
   const advice: Advice[] = [];
-  if (found.packs.length === 0) advice.push(...adviseOnNone(brief, missing, retry));
+  const nearest = [...found.packs].sort((a, b) => a.distance - b.distance)[0];
+  if (nearest === undefined) advice.push(...adviseOnNone(brief, missing, retry));
+  else if (!isNear(nearest)) advice.push(adviseOnRate(brief, nearest));
   else if (!found.packs.some((pack) => pack.wins.includes('best-value'))) {
     advice.push(...adviseOnWide(brief, found.packs));
   }
   return advice;
+}
+
+/** Packs further off than half as fast again, or half as slow, are no answer to a brief. */
+export function isNear(pack: Pick<RankedPack, 'distance'>): boolean {
+  return pack.distance <= Math.log(1.5);
+}
+
+/** Names the rate nearest to the asked one that the shelves can make. */
+function adviseOnRate(brief: ResolvedBrief, nearest: RankedPack): Advice {
+  const { unit } = brief.target;
+  const words = rateWords(nearest.frequencyHz, unit, 3);
+  const inUnit = targetHertz({ value: 1, unit });
+  const isPeriod = unit === 's' || unit === 'ms';
+  const value = isPeriod ? inUnit / nearest.frequencyHz : nearest.frequencyHz / inUnit;
+  const end = nearest.frequencyHz > brief.targetHz ? 'slowest' : 'fastest';
+  return {
+    code: 'rate',
+    text: `The ${end} the shelves can make is ${words.rate} ${words.unit}; ask for that.`,
+    change: { target: { value: Number(value.toPrecision(3)), unit } },
+  };
+}
+
+const gentlerAmps = [0.01, 0.005, 0.002, 0.001, 0.0005];
+
+/** The largest smaller LED current with which the brief can be made, or null. */
+function adviseOnCurrent(brief: ResolvedBrief, retry: Retry): Advice | null {
+  const { load } = brief;
+  if (load.kind !== 'led') return null;
+  for (const amps of gentlerAmps.filter((value) => value < load.amps)) {
+    const pack = retry({ load: { ...load, amps } });
+    if (pack === null || !isNear(pack)) continue;
+    const milliamps = `${amps * 1e3}\u202fmA`;
+    return {
+      code: 'current',
+      text: `No comparator on the shelf drives the LED that hard without bending the beat; ${milliamps} works.`,
+      change: { load: { ...load, amps } },
+    };
+  }
+  return null;
 }
 
 function adviseOnNone(brief: ResolvedBrief, missing: string | null, retry: Retry): Advice[] {
@@ -63,7 +104,9 @@ function adviseOnNone(brief: ResolvedBrief, missing: string | null, retry: Retry
       change: { mounting },
     });
   }
-  if (brief.load.kind === 'led' && retry({ load: { kind: 'logic' } }) !== null) {
+  const gentler = adviseOnCurrent(brief, retry);
+  if (gentler !== null) advice.push(gentler);
+  else if (brief.load.kind === 'led' && retry({ load: { kind: 'logic' } }) !== null) {
     advice.push({
       code: 'load',
       text: 'No comparator on the shelf drives this LED at this rate and supply; as a logic clock it can be made.',
@@ -98,13 +141,8 @@ function adviseOnWide(brief: ResolvedBrief, packs: readonly RankedPack[]): Advic
   const end = worseEnd(steadiest.guaranteed, brief.targetHz);
   const closest = Math.min(...packs.map((pack) => pack.distance));
   if (closest > Math.log1p(brief.band)) {
-    return [
-      {
-        code: 'rate',
-        text: `The nearest pack from stock is ${percent(Math.expm1(closest))} away from this rate; the shelves hold nothing between.`,
-        change: null,
-      },
-    ];
+    const nearest = [...packs].sort((a, b) => a.distance - b.distance)[0];
+    return nearest === undefined ? [] : [adviseOnRate(brief, nearest)];
   }
   const band = Math.ceil(end * 1000) / 1000;
   if (band > 0.5) return [];

@@ -147,13 +147,13 @@ function resolveLed(
     const colours = leds.filter(glows).map((part) => part.facts.colour);
     const help =
       colours.length > 0
-        ? `From this supply these work: ${colours.join(', ')}.`
+        ? `Take a higher voltage, or one of these colours: ${colours.join(', ')}.`
         : `Take at least ${significant(led.facts.forwardVolts + ledHeadroomVolts, 2)}${thin}V.`;
     return {
       path: 'load.colour',
       message:
-        `A ${load.colour} LED needs about ${significant(led.facts.forwardVolts, 2)}${thin}V and ` +
-        `${supply.label} gives ${significant(supply.volts, 2)}${thin}V. ${help}`,
+        `A ${load.colour} LED needs about ${significant(led.facts.forwardVolts + ledHeadroomVolts, 2)}${thin}V ` +
+        `with its resistor; this supply (${supply.label}) is ${significant(supply.volts, 2)}${thin}V. ${help}`,
     };
   }
   if (load.amps > led.facts.maxAmps) {

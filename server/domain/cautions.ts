@@ -11,6 +11,8 @@ export interface CautionFacts {
   maxHz: number;
   hasLed: boolean;
   hasBattery: boolean;
+  /** Volts at which the LED goes dark before the cells are empty; null where it does not. */
+  darkBelowVolts: number | null;
   hasPolarised: boolean;
 }
 
@@ -63,7 +65,10 @@ export function cautionsFor(facts: CautionFacts): Caution[] {
   if (facts.hasBattery) {
     say(
       'battery',
-      'Fit alkaline AA or AAA cells only, all of one age; never solder to a cell, short it or charge it.',
+      'Fit alkaline AA or AAA cells only, all of one age; never solder to a cell, short it or charge it.' +
+        (facts.darkBelowVolts === null
+          ? ''
+          : ` The LED dims as they run down and is dark below about ${significant(facts.darkBelowVolts, 2)}${thin}V, before they are empty.`),
     );
   }
   say(

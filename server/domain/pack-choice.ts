@@ -16,6 +16,9 @@ export interface Accessories {
   boardFor: (sections: number) => PartOf<'board'> | null;
 }
 
+/** Rated voltage of the decoupling capacitors less their margin. */
+const mostVolts = 40;
+
 /** Supply decoupling: 100 nF next to the comparator (facts collected from makers' guidelines). */
 const decouplingFarads = 100e-9;
 
@@ -83,6 +86,9 @@ export function missingAccessory(inHand: BriefInHand, accessories: Accessories):
   const { brief, led, battery, holder } = inHand;
   const short = (part: CataloguePart | null, what: string) => {
     if (part === null) {
+      if (brief.supply.maxVolts > mostVolts) {
+        return `The shop’s parts stand ${mostVolts}\u202fV at most; take a lower supply.`;
+      }
       const often = brief.quantity === 1 ? '' : ` ${brief.quantity} times`;
       return `The shelves do not hold ${what}${often} today.`;
     }

@@ -24,6 +24,8 @@ export function cardRouter(service: Service, shopName: string, afterPayment: () 
   router.get('/:id', (request, response) => show(response, find(request.params.id), null));
   router.post('/:id', express.urlencoded({ extended: false }), (request, response) => {
     const kept = find(request.params.id);
+    // A second press of the button, or another tab: paid is paid, and the buyer goes on.
+    if (kept?.session.status === 'complete') return response.redirect(303, successAddress(kept));
     if (kept?.session.status !== 'open') return show(response, kept, null);
     const trouble = pay(service, kept, typedFields(request.body));
     afterPayment();

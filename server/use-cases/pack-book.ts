@@ -87,12 +87,20 @@ export function assess(
       ...ranked.guaranteed,
       hasLed: choice.parts.LED !== undefined,
       hasBattery: choice.parts.BAT !== undefined,
+      darkBelowVolts: darkBelow(inHand),
       hasPolarised: parts.some((part) => part.dielectric === 'electrolytic'),
     }),
     strip: pulseStrip(ranked.circuit, cycle),
     wins: ranked.wins,
   };
   return { pack, choice, inHand, ranked, price };
+}
+
+/** Where the LED goes dark before the cells are empty: at its own forward voltage. */
+function darkBelow({ led, battery }: BriefInHand): number | null {
+  if (led === null || battery === null) return null;
+  const { forwardVolts } = led.facts;
+  return forwardVolts >= battery.facts.emptyVolts ? forwardVolts : null;
 }
 
 const priceGroups: readonly (readonly [string, readonly string[]])[] = [

@@ -1,6 +1,6 @@
 import { solveRequestSchema, type SolveRequest } from '../contracts/brief.ts';
 import type { Advice, SolveResponse } from '../contracts/packs.ts';
-import { adviseOn } from '../domain/advice.ts';
+import { adviseOn, isNear } from '../domain/advice.ts';
 import { resolveBrief, type BriefInHand } from '../domain/brief.ts';
 import { chooseAccessories, choiceOf, missingAccessory } from '../domain/pack-choice.ts';
 import { shelfOf } from '../domain/shelf.ts';
@@ -34,7 +34,8 @@ export async function solveBrief(
   }
   const found = searchShelves(book, inHand, request);
   const accessories = chooseAccessories(book.catalogue, inHand);
-  const packs = found.packs.map((ranked) =>
+  const offered = found.packs.filter((ranked) => isNear(ranked) && ranked.guaranteed.minHz > 0);
+  const packs = offered.map((ranked) =>
     assess(book, deps.signer, request, inHand, ranked, choiceOf(ranked, inHand, accessories)),
   );
   return {

@@ -395,7 +395,13 @@ describe('adviseOn', () => {
     expect(codes(brief, none, null, (change) => (change.mounting ? near : null))).toContain(
       'mounting',
     );
-    expect(codes(brief, none, null, (change) => (change.load ? near : null))).toContain('load');
+    const withoutLed: Parameters<typeof adviseOn>[3] = (change) =>
+      change.load?.kind === 'logic' ? near : null;
+    expect(codes(brief, none, null, withoutLed)).toContain('load');
+    const gentler = adviseOn(brief, none, null, (change) =>
+      change.load?.kind === 'led' ? near : null,
+    );
+    expect(gentler[0]).toMatchObject({ code: 'current', change: { load: { amps: 0.001 } } });
     expect(codes(brief, none, null, () => null)).toEqual(['out-of-reach']);
     expect(codes(brief, none, 'Only 1 left.', () => null)).toEqual(['missing-part']);
   });

@@ -143,6 +143,7 @@ describe('the flash caution', () => {
       ...facts,
       hasLed: true,
       hasBattery: false,
+      darkBelowVolts: null,
       hasPolarised: false,
     });
     const flash = cautions.find(({ code }) => code === 'flash');
@@ -151,7 +152,14 @@ describe('the flash caution', () => {
   });
 
   it('names the rate and what to do, for a light of the maker’s own too', () => {
-    const facts = { frequencyHz: 10, minHz: 9, maxHz: 11, hasBattery: false, hasPolarised: false };
+    const facts = {
+      frequencyHz: 10,
+      minHz: 9,
+      maxHz: 11,
+      hasBattery: false,
+      darkBelowVolts: null,
+      hasPolarised: false,
+    };
     const text = (hasLed: boolean) => cautionsFor({ ...facts, hasLed })[0]!.text;
     expect(text(true)).toMatch(/^This kit flashes 10\.0 times a second/);
     expect(text(false)).toMatch(/^A light driven by this kit/);
@@ -167,6 +175,7 @@ describe('the other cautions', () => {
       maxHz: 1.1,
       hasLed: false,
       hasBattery: false,
+      darkBelowVolts: null,
       hasPolarised: false,
       ...change,
     }).map(({ code }) => code);

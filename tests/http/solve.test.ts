@@ -165,7 +165,7 @@ describe('solving a brief', () => {
       expect(answer.status).toBe(422);
       expect(answer.body.type).toMatch(/\/impossible-brief$/);
       expect(answer.body.errors[0].path).toBe('load.colour');
-      expect(answer.body.detail).toMatch(/From this supply these work: .*red/);
+      expect(answer.body.detail).toMatch(/one of these colours: .*red/);
     });
   });
 
