@@ -8,6 +8,7 @@ import { PackScatter } from '../features/packs/components/pack-scatter.tsx';
 import { PackTag } from '../features/packs/components/pack-tag.tsx';
 import { answerInWords, frontAndBehind } from '../features/packs/model.ts';
 import { isProblem } from '../lib/problem-error.ts';
+import { Button } from '../ui/button.tsx';
 import { EmptyState } from '../ui/empty-state.tsx';
 import { ErrorPanel } from '../ui/error-panel.tsx';
 import { LiveRegion } from '../ui/live-region.tsx';
@@ -34,8 +35,34 @@ function useLastAnswer(newest: SolveResponse | undefined): SolveResponse | undef
 export function HomeRail(props: HomeRailProps) {
   const { solved } = props;
   const answer = useDeferredValue(useLastAnswer(solved.data));
-  const stale = solved.isFetching || props.refused;
-  if (solved.isError && !isProblem(solved.error)) {
+  const failed = solved.isError && !props.refused;
+  if (answer === undefined) return <NoAnswerYet {...props} failed={failed} />;
+  const isOlder = props.refused || solved.isPlaceholderData || solved.data === undefined;
+  return (
+    <section aria-label="Packs from stock" aria-busy={solved.isFetching}>
+      <StatusLine {...props} answer={answer} isOlder={isOlder} />
+      <LiveRegion words={isOlder || solved.isFetching ? '' : answerInWords(answer)} />
+      <div
+        className={clsx(
+          'transition-opacity duration-200',
+          isOlder && 'opacity-45',
+          // An answer that comes at once should not make the tags flicker.
+          isOlder && solved.isFetching && 'delay-200',
+        )}
+      >
+        {answer.packs.length === 0 && <NothingFits />}
+        <div className={answer.advice.length > 0 ? 'mb-10' : undefined}>
+          <AdviceList advice={answer.advice} onApply={props.onAdvice} />
+        </div>
+        <Packs answer={answer} isOlder={isOlder} />
+      </div>
+    </section>
+  );
+}
+
+function NoAnswerYet(props: HomeRailProps & { failed: boolean }) {
+  const { solved } = props;
+  if (props.failed) {
     return (
       <ErrorPanel
         title="The shelves could not be asked"
@@ -44,37 +71,49 @@ export function HomeRail(props: HomeRailProps) {
       />
     );
   }
-  if (answer === undefined) {
-    if (props.refused) return null;
-    return <Waiting words="Walking the shelves" />;
-  }
+  return props.refused ? null : <Waiting words="Walking the shelves" />;
+}
+
+interface StatusProps extends HomeRailProps {
+  answer: SolveResponse;
+  isOlder: boolean;
+}
+
+/** Which brief the packs below belong to, and what keeps the newer answer away. */
+function StatusLine(props: StatusProps) {
+  const { solved } = props;
+  const failed = solved.isError && !props.refused && !solved.isFetching;
+  const words = statusWords(props, failed);
+  if (words === '') return null;
   return (
-    <section aria-label="Packs from stock" aria-busy={solved.isFetching}>
-      <Answered answer={answer} stale={stale} refused={props.refused} />
-      <LiveRegion words={stale ? '' : answerInWords(answer)} />
-      <div className={clsx('transition-opacity duration-200', props.refused && 'opacity-45')}>
-        {answer.packs.length === 0 && <NothingFits />}
-        <div className={answer.advice.length > 0 ? 'mb-10' : undefined}>
-          <AdviceList advice={answer.advice} onApply={props.onAdvice} />
-        </div>
-        <Packs answer={answer} />
-      </div>
-    </section>
+    <div
+      role={failed ? 'alert' : undefined}
+      className="mb-5 flex min-h-6 flex-wrap items-center gap-3 text-soft"
+    >
+      <p className={clsx(failed && 'font-strong text-brick')}>{words}</p>
+      {failed && (
+        <Button look="outline" size="small" onClick={() => void solved.refetch()}>
+          Try again
+        </Button>
+      )}
+    </div>
   );
 }
 
-function Answered(props: { answer: SolveResponse; stale: boolean; refused: boolean }) {
-  const { answer } = props;
+function statusWords(props: StatusProps, failed: boolean): string {
+  const { answer, isOlder } = props;
+  if (props.refused)
+    return 'These were made for the brief before; the new one needs a change first.';
+  if (failed) {
+    const why = isProblem(props.solved.error)
+      ? 'The shop could not answer'
+      : 'No connection to the shop';
+    return isOlder ? `${why}; these are the packs for the brief before.` : `${why} just now.`;
+  }
+  if (isOlder || props.solved.isFetching) return 'Working out the new brief …';
+  if (answer.packs.length === 0) return '';
   const considered = answer.considered.toLocaleString('en-GB');
-  return (
-    <p className="mb-5 flex min-h-6 items-center gap-3 text-soft">
-      {props.refused
-        ? 'These were made for the brief before; the new one needs a change first.'
-        : props.stale
-          ? 'Working out the new brief …'
-          : `${considered} combinations of parts on the shelf, weighed one by one.`}
-    </p>
-  );
+  return `${considered} combinations of parts on the shelf, weighed one by one.`;
 }
 
 function NothingFits() {
@@ -85,7 +124,7 @@ function NothingFits() {
   );
 }
 
-function Packs({ answer }: { answer: SolveResponse }) {
+function Packs({ answer, isOlder }: { answer: SolveResponse; isOlder: boolean }) {
   const { front, behind } = frontAndBehind(answer.packs);
   const kits = answer.brief.quantity;
   const packPath = (token: string) => paths.pack.link(token, kits);
@@ -104,6 +143,7 @@ function Packs({ answer }: { answer: SolveResponse }) {
                 <PutInBasket
                   token={pack.token}
                   quantity={kits}
+                  disabled={isOlder}
                   basketPath={paths.basket.link()}
                   look={index === 0 ? 'solid' : 'outline'}
                   about={`${pack.promise.text.rate} ${pack.promise.text.unit}`}

@@ -17,7 +17,8 @@ export function formatDigits(value: number, digits = 3): string {
   const rounded = Number(value.toPrecision(digits));
   const text = Math.abs(rounded).toLocaleString('en-GB', {
     maximumSignificantDigits: digits,
-    useGrouping: false,
+    // Four digits read well as they are; 994,000 does not without its comma.
+    useGrouping: 'min2',
   });
   return rounded < 0 ? `${minus}${text}` : text;
 }

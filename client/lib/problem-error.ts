@@ -38,6 +38,11 @@ export function isProblem(error: unknown, kind?: ProblemKind): error is ProblemE
   return error instanceof ProblemError && (kind === undefined || error.kind === kind);
 }
 
+/** Whether what was asked must change; anything else may be asked again as it is. */
+export function isRefusal(problem: ProblemError): boolean {
+  return problem.status < 500 && problem.status !== 429 && problem.status !== 408;
+}
+
 /** One sentence for a person, whatever went wrong. */
 export function sentenceOf(error: unknown): string {
   if (error instanceof ProblemError || error instanceof ConnectionError) return error.message;

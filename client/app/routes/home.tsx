@@ -12,7 +12,7 @@ import type { BriefDraft } from '../../features/brief/model.ts';
 import { useBrief } from '../../features/brief/use-brief.ts';
 import { useSolvedPacks } from '../../features/packs/api/solve-packs.ts';
 import { shopOptions } from '../../lib/shop.ts';
-import { isProblem } from '../../lib/problem-error.ts';
+import { isProblem, isRefusal } from '../../lib/problem-error.ts';
 import { usePageTitle } from '../../lib/use-page-title.ts';
 import { useQuery } from '@tanstack/react-query';
 import type { PulseStripData } from '../../../server/contracts/drawing.ts';
@@ -42,7 +42,8 @@ export function Component() {
   // The default supply is the shop's own first battery, so the first question waits for the shop.
   const ready = shop.isPending ? undefined : settled.request;
   const solved = useSolvedPacks(ready === undefined ? undefined : { ...ready, limit: packsWanted });
-  const refused = isProblem(solved.error) ? errorsFromProblem(solved.error) : {};
+  const refused =
+    isProblem(solved.error) && isRefusal(solved.error) ? errorsFromProblem(solved.error) : {};
   const errors = { ...refused, ...typed.errors };
   return (
     <>

@@ -97,10 +97,13 @@ export function defaultBattery(shop: Shop): Shop['batteries'][number] | undefine
   return shop.batteries.find((each) => /two AA\b/i.test(each.words)) ?? shop.batteries[0];
 }
 
+/** The rates the shop's contract takes, in whichever unit is chosen. */
+const rateLimits = [1e-9, 1e9] as const;
+
 /** Target in hertz, or NaN while the rate cannot be read. */
 export function targetHertz(draft: Pick<BriefDraft, 'rate' | 'unit'>): number {
   const value = readNumber(draft.rate);
-  if (!(value > 0)) return NaN;
+  if (!(value >= rateLimits[0] && value <= rateLimits[1])) return NaN;
   const hertz: Record<Unit, number> = {
     Hz: value,
     kHz: value * 1000,
@@ -125,7 +128,7 @@ export function rateInOtherWords(draft: BriefDraft): string {
 }
 
 const sentences: Partial<Record<BriefField, string>> = {
-  rate: 'Type the rate as a number above 0, such as 90 or 1.5.',
+  rate: 'Type a rate above zero and not above a thousand million, such as 90 or 1.5.',
   lit: 'Type the lit share as a number from 5 to 95 per cent.',
   volts: 'Type the supply as a number from 0.5 to 60 volts.',
   band: 'Type the band as a number from 0.05 to 50 per cent.',
@@ -136,7 +139,7 @@ const sentences: Partial<Record<BriefField, string>> = {
 };
 
 const bounds: Partial<Record<BriefField, readonly [number, number]>> = {
-  rate: [1e-9, 1e9],
+  rate: rateLimits,
   lit: [5, 95],
   volts: [0.5, 60],
   band: [0.05, 50],

@@ -162,3 +162,9 @@ describe('errorsFromProblem', () => {
     });
   });
 });
+
+describe('a rate out of all measure', () => {
+  it.each(['1e308', '1000000001', '0', '1e-12'])('echoes nothing of %s', (rate) => {
+    expect(rateInOtherWords({ ...defaultDraft, rate })).toBe('');
+  });
+});

@@ -63,9 +63,11 @@ describe('BriefSentence', () => {
   it('says beside the sentence what is wrong with a fact', async () => {
     renderInShop(<Harness />);
     await userEvent.clear(control('Rate'));
-    expect(screen.getByRole('alert').textContent).toMatch(/Type the rate as a number/);
+    expect(screen.getByRole('alert').textContent).toMatch(
+      /Type a rate above zero and not above a thousand million/,
+    );
     expect(control('Rate').getAttribute('aria-invalid')).toBe('true');
     const described = control('Rate').getAttribute('aria-describedby') ?? '';
-    expect(document.getElementById(described)?.textContent).toMatch(/Type the rate/);
+    expect(document.getElementById(described)?.textContent).toMatch(/Type a rate/);
   });
 });

@@ -9,6 +9,7 @@ export interface PutInBasketProps {
   quantity: number;
   basketPath: string;
   look?: ButtonLook;
+  disabled?: boolean;
   /** Tells one button from the next for those who hear them in a row. */
   about: string;
 }
@@ -20,6 +21,7 @@ export function PutInBasket(props: PutInBasketProps) {
     <div className="flex flex-col items-end gap-1">
       <Button
         look={props.look}
+        disabled={props.disabled}
         busy={put.isPending}
         busyWords="Putting it in"
         onClick={() => put.mutate({ token: props.token, quantity: props.quantity })}

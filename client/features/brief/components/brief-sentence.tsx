@@ -25,6 +25,7 @@ export function BriefSentence(props: {
   const shop = useShop();
   const part = { ...state, errorId };
   const clock = isClock(props.draft);
+  const inOtherWords = rateInOtherWords(props.draft);
   const wrong = [...new Set(Object.values(props.errors))];
   return (
     <form role="search" aria-label="Your brief" onSubmit={(event) => event.preventDefault()}>
@@ -43,7 +44,7 @@ export function BriefSentence(props: {
         ))}
       </div>
       <div className="mt-5 flex flex-wrap items-center gap-x-6 gap-y-1 text-lead text-soft">
-        <span>{rateInOtherWords(props.draft)}</span>
+        {inOtherWords !== '' && <span>{inOtherWords}</span>}
         {children}
       </div>
     </form>
