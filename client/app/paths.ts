@@ -1,3 +1,4 @@
+import type { Role } from '../../server/contracts/auth.ts';
 import { queryString } from '../lib/http.ts';
 
 /** Every page's address: the pattern the router matches, and the function that builds a link to it. */
@@ -39,7 +40,12 @@ export const paths = {
   desk: { pattern: '/desk/*', link: () => '/desk' },
 } as const;
 
-/** Where to go after signing in: only ever a page of this shop. */
-export function safeNext(next: string | null): string {
-  return next !== null && /^\/(?![/\\])/.test(next) ? next : paths.home.link();
+function homeOf(role: Role): string {
+  if (role === 'owner') return paths.desk.link();
+  return role === 'packer' ? paths.bench.link() : paths.home.link();
+}
+
+/** Where to go after signing in: only ever a page of this shop; unasked, to where one's work is. */
+export function safeNext(next: string | null, role: Role = 'customer'): string {
+  return next !== null && /^\/(?![/\\])/.test(next) ? next : homeOf(role);
 }

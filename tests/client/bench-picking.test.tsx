@@ -137,17 +137,22 @@ describe('the queue', () => {
   };
 
   describe('when somebody else was quicker', () => {
-    it('says who has the order, beside it', async () => {
+    it('says who has the order, above the list, and still after the queue is read again', async () => {
       const taken = 'Maud Tarrow has TQ-1041. Take another from the queue.';
+      let claimed = false;
       await openBench(({ path }) => {
         if (!path.endsWith('/claim')) {
-          return { status: 200, body: { items: [item], page: 1, pageSize: 25, total: 1 } };
+          const theirs = { ...item, status: 'picking', claimedBy: 'Maud Tarrow' };
+          const items = [claimed ? theirs : item];
+          return { status: 200, body: { items, page: 1, pageSize: 25, total: 1 } };
         }
+        claimed = true;
         const type = 'https://tockwell.example/problems/already-claimed';
         return { status: 409, body: { type, title: 'Taken', status: 409, detail: taken } };
       }, '/');
       await userEvent.click(await screen.findByRole('button', { name: 'Claim TQ-1041' }));
-      expect((await screen.findByRole('alert')).textContent).toBe(taken);
+      await screen.findByText('is picking it');
+      expect(screen.getByRole('alert').textContent).toBe(taken);
     });
   });
 

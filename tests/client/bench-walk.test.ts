@@ -67,6 +67,23 @@ describe('readScan', () => {
       sentence: expect.stringContaining('Z-99 is not on this walk.') as string,
     });
   });
+  it('asks for the part where the bin holds another value of this walk', () => {
+    const other = samplePick({ id: '4', bin: 'D-64', sku: 'TW-R1-464K' });
+    const shared = [...picks, other];
+    expect(readScan('d64', stop, shared)).toEqual({
+      kind: 'unclear',
+      sentence: 'D-64 holds several values of this walk; scan the part, TW-R1-453K.',
+    });
+    expect(readScan('TW-R1-453K', stop, shared).kind).toBe('right');
+    expect(readScan('TW-R1-464K', stop, shared)).toEqual({
+      kind: 'wrong',
+      sentence: 'TW-R1-464K is stop 4 of this walk. This stop wants TW-R1-453K.',
+    });
+  });
+  it('takes the bin for two lots of the same part', () => {
+    const lot = samplePick({ id: '4', lot: '2609-B' });
+    expect(readScan('D-64', stop, [...picks, lot]).kind).toBe('right');
+  });
   it('takes a bare Enter, as scanners send it, for nothing at all', () => {
     expect(readScan('  ', stop, picks).kind).toBe('empty');
   });

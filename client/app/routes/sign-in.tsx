@@ -14,7 +14,7 @@ export function Component() {
       <Opening>
         <strong>Sign in</strong> to find your orders and build sheets again.
       </Opening>
-      <SignInForm onDone={() => void navigate(safeNext(next), { replace: true })} />
+      <SignInForm onDone={(me) => void navigate(safeNext(next, me.role), { replace: true })} />
       <p className="mt-8">
         No account yet?{' '}
         <Link className="link" to={paths.signUp.link(next ?? undefined)}>

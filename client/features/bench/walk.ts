@@ -37,21 +37,34 @@ export function withPicked(order: BenchOrder, id: string, quantity: number): Ben
   return { ...order, picks };
 }
 
-export type Scan = { kind: 'right' } | { kind: 'empty' } | { kind: 'wrong'; sentence: string };
+export type Scan =
+  { kind: 'right' } | { kind: 'empty' } | { kind: 'wrong' | 'unclear'; sentence: string };
 
 const plain = (code: string) => code.toUpperCase().replaceAll(/[^A-Z0-9]/g, '');
 const names = (pick: Pick, code: string) => plain(pick.bin) === code || plain(pick.sku) === code;
+
+/** Whether this stop's bin holds another part of the same walk, so that its code does not tell them apart. */
+export function sharesBin(stop: Pick, picks: readonly Pick[]): boolean {
+  const bin = plain(stop.bin);
+  return picks.some((pick) => plain(pick.bin) === bin && pick.sku !== stop.sku);
+}
 
 /** What a scanned or typed code means at this stop; scanners differ in case, spaces and dashes. */
 export function readScan(text: string, stop: Pick, picks: readonly Pick[]): Scan {
   const code = plain(text);
   if (code === '') return { kind: 'empty' };
+  const isShared = sharesBin(stop, picks);
+  if (isShared && plain(stop.bin) === code) {
+    const sentence = `${stop.bin} holds several values of this walk; scan the part, ${stop.sku}.`;
+    return { kind: 'unclear', sentence };
+  }
   if (names(stop, code)) return { kind: 'right' };
   const other = picks.findIndex((pick) => names(pick, code));
   const said = text.trim().slice(0, 40);
   const found =
     other >= 0 ? `${said} is stop ${other + 1} of this walk.` : `${said} is not on this walk.`;
-  return { kind: 'wrong', sentence: `${found} This stop wants bin ${stop.bin} or ${stop.sku}.` };
+  const wanted = isShared ? stop.sku : `bin ${stop.bin} or ${stop.sku}`;
+  return { kind: 'wrong', sentence: `${found} This stop wants ${wanted}.` };
 }
 
 /** The pick with what the lines know of its looks. */

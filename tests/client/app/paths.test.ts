@@ -30,6 +30,17 @@ describe('safeNext', () => {
   );
 });
 
+describe('after signing in from nowhere in particular', () => {
+  it.each([
+    ['customer', '/'],
+    ['packer', '/bench'],
+    ['owner', '/desk'],
+  ] as const)('a %s lands on %s', (role, home) => {
+    expect(safeNext(null, role)).toBe(home);
+    expect(safeNext('/basket', role)).toBe('/basket');
+  });
+});
+
 describe('what a role may open', () => {
   it.each([
     [null, false, false],

@@ -7,7 +7,7 @@ import { forgetAllKept } from '../../../lib/kept-session.ts';
 import { sessionOptions } from '../../../lib/session.ts';
 
 /** Who is at the screen changes what everything else answers: all of it is asked again. */
-function usePersonChange<Input>(send: (input: Input) => Promise<Me | null>) {
+function usePersonChange<Input, Person extends Me | null>(send: (input: Input) => Promise<Person>) {
   const client = useQueryClient();
   return useMutation({
     mutationFn: send,

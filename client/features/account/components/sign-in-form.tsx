@@ -1,14 +1,14 @@
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useForm } from 'react-hook-form';
 import { signInSchema } from '../../../../server/contracts/auth.ts';
-import type { SignIn } from '../../../../server/contracts/auth.ts';
+import type { Me, SignIn } from '../../../../server/contracts/auth.ts';
 import { sentenceOf } from '../../../lib/problem-error.ts';
 import { Button } from '../../../ui/button.tsx';
 import { Field } from '../../../ui/field.tsx';
 import { Notice } from '../../../ui/notice.tsx';
 import { useSignIn } from '../api/account.ts';
 
-export function SignInForm({ onDone }: { onDone: () => void }) {
+export function SignInForm({ onDone }: { onDone: (me: Me) => void }) {
   const form = useForm<SignIn>({
     resolver: zodResolver(signInSchema),
     defaultValues: { email: '', password: '' },
@@ -20,7 +20,9 @@ export function SignInForm({ onDone }: { onDone: () => void }) {
       noValidate
       className="max-w-md space-y-4"
       onSubmit={(event) =>
-        void form.handleSubmit((values) => signIn.mutate(values, { onSuccess: onDone }))(event)
+        void form.handleSubmit((values) =>
+          signIn.mutate(values, { onSuccess: (me) => onDone(me) }),
+        )(event)
       }
     >
       <Field

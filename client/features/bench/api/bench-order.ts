@@ -58,14 +58,18 @@ function keep(client: QueryClient, order: BenchOrder): void {
   void client.invalidateQueries({ queryKey: queueKey });
 }
 
-/** Claim, hand back, pack. A refusal means that something changed: the order is read again. */
-export function useMove(ref: string) {
+/**
+ * Claim, hand back, pack. A refusal means that something changed: the order is read again. `onRefused`
+ * is told even when the refresh has taken away the button that asked.
+ */
+export function useMove(ref: string, onRefused?: (error: Error) => void) {
   const client = useQueryClient();
   return useMutation({
     scope: { id: `bench-${ref}` },
     mutationFn: (move: Move) => call(ref, `/${move}`, { method: 'POST' }),
     onSuccess: (order) => keep(client, order),
-    onError: () => {
+    onError: (error) => {
+      onRefused?.(error);
       void client.invalidateQueries({ queryKey: benchOrderOptions(ref).queryKey });
       void client.invalidateQueries({ queryKey: queueKey });
     },

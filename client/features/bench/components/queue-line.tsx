@@ -10,8 +10,16 @@ import { shipByWords, timeLeftWords } from '../ship-by.ts';
 import { Beads } from './beads.tsx';
 import { LateFlag } from './late-flag.tsx';
 
+export interface QueueLineProps {
+  item: QueueItem;
+  isLead: boolean;
+  /** What the page says of a claim: the shop's refusal, or null while a new claim is under way. */
+  onClaimSaid: (sentence: string | null) => void;
+}
+
 /** One order in the queue: when it must leave, what it is, who has it, and the one thing to do. */
-export function QueueLine({ item, isLead }: { item: QueueItem; isLead: boolean }) {
+export function QueueLine(props: QueueLineProps) {
+  const { item } = props;
   const now = new Date();
   return (
     <li
@@ -39,14 +47,15 @@ export function QueueLine({ item, isLead }: { item: QueueItem; isLead: boolean }
         </p>
         <p className="mt-1 max-w-prose">{bindUnits(item.sentence)}</p>
       </div>
-      <Todo item={item} isLead={isLead} />
+      <Todo {...props} />
     </li>
   );
 }
 
-function Todo({ item, isLead }: { item: QueueItem; isLead: boolean }) {
+function Todo(props: QueueLineProps) {
+  const { item, isLead } = props;
   if (item.claimedBy === null || item.status === 'paid') {
-    return <Claim item={item} isLead={isLead} />;
+    return <Claim {...props} />;
   }
   const done = item.status === 'packed' ? 'packed' : 'picking';
   if (!item.mine) {
@@ -77,11 +86,13 @@ function Todo({ item, isLead }: { item: QueueItem; isLead: boolean }) {
   );
 }
 
-function Claim({ item, isLead }: { item: QueueItem; isLead: boolean }) {
-  const claim = useMove(item.ref);
+function Claim({ item, isLead, onClaimSaid }: QueueLineProps) {
+  const claim = useMove(item.ref, (error) => onClaimSaid(sentenceOf(error)));
   const navigate = useNavigate();
-  const take = () =>
+  const take = () => {
+    onClaimSaid(null);
     claim.mutate('claim', { onSuccess: () => void navigate(benchPaths.order.link(item.ref)) });
+  };
   return (
     <div className="md:max-w-56 md:min-w-44 md:text-right">
       <Button
@@ -95,11 +106,6 @@ function Claim({ item, isLead }: { item: QueueItem; isLead: boolean }) {
       >
         Claim
       </Button>
-      {claim.isError && (
-        <p role="alert" className="mt-2 text-small font-strong text-brick">
-          {sentenceOf(claim.error)}
-        </p>
-      )}
     </div>
   );
 }

@@ -1,3 +1,4 @@
+import { useState } from 'react';
 import { Link, useSearchParams } from 'react-router-dom';
 import type { QueueItem, QueuePage as QueueData } from '../../../../server/contracts/bench.ts';
 import { sentenceOf } from '../../../lib/problem-error.ts';
@@ -18,6 +19,7 @@ export function QueuePage() {
   const [query] = useSearchParams();
   const page = Math.max(1, Math.trunc(Number(query.get('page') ?? 1)) || 1);
   const queue = useQueue(page);
+  const [claimSaid, setClaimSaid] = useState<string | null>(null);
   return (
     <Page className="pb-16">
       {queue.isPending && <Waiting words="Fetching the queue" />}
@@ -34,7 +36,12 @@ export function QueuePage() {
               {sentenceOf(queue.error)} It asks again by itself.
             </Notice>
           )}
-          <QueueLines queue={queue.data} />
+          {claimSaid !== null && (
+            <Notice tone="danger" urgent className="mb-6">
+              {claimSaid}
+            </Notice>
+          )}
+          <QueueLines queue={queue.data} onClaimSaid={setClaimSaid} />
         </>
       )}
     </Page>
@@ -78,11 +85,16 @@ function QueueOpening({ queue }: { queue: QueueData }) {
   );
 }
 
+interface QueueLinesProps {
+  queue: QueueData;
+  onClaimSaid: (sentence: string | null) => void;
+}
+
 function isForMe(item: QueueItem): boolean {
   return item.mine && item.status !== 'paid';
 }
 
-function QueueLines({ queue }: { queue: QueueData }) {
+function QueueLines({ queue, onClaimSaid }: QueueLinesProps) {
   if (queue.items.length === 0) {
     return (
       <EmptyState title="Nothing to pack just now.">
@@ -96,7 +108,12 @@ function QueueLines({ queue }: { queue: QueueData }) {
     <>
       <ol aria-label="Orders by ship-by time" className="border-t-2 border-ink">
         {queue.items.map((item) => (
-          <QueueLine key={item.ref} item={item} isLead={item.ref === lead} />
+          <QueueLine
+            key={item.ref}
+            item={item}
+            isLead={item.ref === lead}
+            onClaimSaid={onClaimSaid}
+          />
         ))}
       </ol>
       <Pages queue={queue} />

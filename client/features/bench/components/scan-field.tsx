@@ -27,10 +27,16 @@ function useAlwaysFocused(): RefObject<HTMLInputElement | null> {
   return field;
 }
 
+/** A code that was not taken: another part's, or one that does not say enough. */
+export interface Refused {
+  kind: 'wrong' | 'unclear';
+  sentence: string;
+}
+
 /** Takes the scanner's word. It asks for no keyboard on the glass until somebody wants to type. */
 export function ScanField(props: {
   label: string;
-  wrong: string | null;
+  wrong: Refused | null;
   onCode: (text: string) => void;
 }) {
   const id = useId();
@@ -86,7 +92,8 @@ export function ScanField(props: {
         <p id={`${id}-wrong`} role="alert" className="mt-1 flex gap-2 text-lead text-brick">
           <WrongSign />
           <span>
-            <strong className="font-heavy">Wrong one.</strong> {props.wrong}
+            {props.wrong?.kind === 'wrong' && <strong className="font-heavy">Wrong one. </strong>}
+            {props.wrong?.sentence}
           </span>
         </p>
       )}

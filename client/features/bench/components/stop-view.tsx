@@ -4,9 +4,10 @@ import { bindUnits } from '../../../lib/spaces.ts';
 import { Button } from '../../../ui/button.tsx';
 import { PartDrawing } from '../../../ui/part-drawing.tsx';
 import { rolesText } from '../../../ui/part-groups.ts';
-import { drawableOf, isTaken, readScan } from '../walk.ts';
+import { drawableOf, isTaken, readScan, sharesBin } from '../walk.ts';
 import { MarkingView } from './marking-view.tsx';
 import { ScanField } from './scan-field.tsx';
+import type { Refused } from './scan-field.tsx';
 
 const largeClass = 'min-h-20 text-title max-sm:w-full sm:min-w-88';
 
@@ -23,11 +24,14 @@ export interface StopViewProps {
 /** One stop: the bin as large as the screen allows, what to take, how many, and one big button. */
 export function StopView(props: StopViewProps) {
   const { stop, order } = props;
-  const [wrong, setWrong] = useState<string | null>(null);
+  const [wrong, setWrong] = useState<Refused | null>(null);
   const done = isTaken(stop);
+  const scanLabel = sharesBin(stop, order.picks)
+    ? `Scan the part, ${stop.sku}`
+    : `Scan ${stop.bin} or the part`;
   const onCode = (text: string) => {
     const scan = readScan(text, stop, order.picks);
-    if (scan.kind === 'wrong') setWrong(scan.sentence);
+    if (scan.kind === 'wrong' || scan.kind === 'unclear') setWrong(scan);
     if (scan.kind !== 'right') return;
     setWrong(null);
     if (done) props.onGoOn();
@@ -37,7 +41,7 @@ export function StopView(props: StopViewProps) {
     <section aria-labelledby="stop" className="animate-rise">
       <BinAndCount stop={stop} />
       <WhatToTake stop={stop} order={order} />
-      <ScanField label={`Scan ${stop.bin} or the part`} wrong={wrong} onCode={onCode} />
+      <ScanField label={scanLabel} wrong={wrong} onCode={onCode} />
       <div className="mt-5 flex flex-wrap gap-4">
         {done ? (
           <>
