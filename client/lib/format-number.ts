@@ -32,6 +32,11 @@ export function formatQuantity(value: number, unit: string, digits = 3): string 
   return `${formatDigits(value / prefix.factor, digits)}${narrow}${prefix.symbol}${unit}`;
 }
 
+/** Volts beside volts, always in one unit: 0.98 V under 2.04 V, never 980 mV. */
+export function formatVolts(volts: number, digits = 3): string {
+  return `${formatDigits(volts, digits)}${narrow}V`;
+}
+
 /** A fraction as a percentage: 0.046 reads 4.6 %. */
 export function formatPercent(fraction: number, digits = 2): string {
   return `${formatDigits(fraction * 100, digits)}${narrow}%`;

@@ -59,11 +59,7 @@ export function Scale({ asked, error, low, high }: ScaleProps) {
             <ScaleLabel at={x(asked) / width} words={`+${percent}`} edge="end" />
           </>
         ) : (
-          <>
-            <ScaleLabel at={0} words={formatSignedPercent(low)} edge="first" />
-            <ScaleLabel at={0.5} words={`asked ±${percent}`} edge="middle" />
-            <ScaleLabel at={1} words={formatSignedPercent(high)} edge="last" />
-          </>
+          <ScaleLabel at={0.5} words={`asked ±${percent}`} edge="middle" />
         )}
       </div>
     </div>
@@ -71,11 +67,9 @@ export function Scale({ asked, error, low, high }: ScaleProps) {
 }
 
 const labelShifts = {
-  first: '',
   start: '-translate-x-1/4',
   middle: '-translate-x-1/2',
   end: '-translate-x-3/4',
-  last: '-translate-x-full',
 };
 
 function ScaleLabel(props: { at: number; words: string; edge: keyof typeof labelShifts }) {

@@ -1,4 +1,4 @@
-import { formatQuantity } from '../lib/format-number.ts';
+import { formatQuantity, formatVolts } from '../lib/format-number.ts';
 import { useElementWidth } from '../lib/use-element-width.ts';
 import { niceTicks } from './axis.ts';
 
@@ -44,7 +44,7 @@ function Axes({ props, width }: { props: WaveformProps; width: number }) {
       ))}
       {[0, props.supplyVolts].map((v) => (
         <text key={v} x={frame.left - 8} y={y(v) + 5} textAnchor="end">
-          {formatQuantity(v, 'V')}
+          {formatVolts(v)}
         </text>
       ))}
       <path d={`M${frame.left} ${floor}H${width - frame.right}`} className="stroke-soft" />
@@ -75,7 +75,7 @@ export function Waveform(props: WaveformProps) {
               textAnchor="end"
               className="fill-ink text-small font-strong"
             >
-              {formatQuantity(volts, 'V')}
+              {formatVolts(volts)}
             </text>
           </g>
         ))}

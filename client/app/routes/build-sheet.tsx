@@ -41,7 +41,8 @@ function SheetHead({ sheet, address }: { sheet: BuildSheet; address: SheetAddres
     <>
       <Opening>
         Built right, it makes <strong>{keepTogether(`${text.rate} ${text.unit}`)}</strong>, and
-        always between <strong>{text.from}</strong> and <strong>{text.to}</strong>.
+        always between <strong>{text.from}</strong> and{' '}
+        <strong>{keepTogether(`${text.to} ${text.unit}`)}</strong>.
       </Opening>
       <p className="-mt-4 mb-4 max-w-[60em] text-soft">
         Build sheet for: {bindUnits(insideSentence(sheet.sentence))}. Order{' '}

@@ -53,9 +53,9 @@ export function openingFor(order: Pick<Order, 'status' | 'shipment'>): {
     case 'awaiting_payment':
       return { light: 'Your parts are set aside; the order is', heavy: 'waiting for payment' };
     case 'paid':
-      return { light: 'Paid. The packers have it', heavy: 'next in their queue' };
+      return { light: 'Paid. It waits in', heavy: 'the packers’ queue' };
     case 'picking':
-      return { light: 'Somebody is walking the shelves and', heavy: 'picking your parts' };
+      return { light: 'A packer has your order and is', heavy: 'picking your parts' };
     case 'packed':
       return { light: 'Your kits are bagged and', heavy: 'packed' };
     case 'shipped':

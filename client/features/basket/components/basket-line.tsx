@@ -35,7 +35,7 @@ export function BasketLine({ line, packPath }: { line: Line; packPath: string })
         </h2>
         <p className="mt-1 text-soft">
           {keepTogether(`${text.rate} ${text.unit}`)}, {keepTogether(text.band)}; every kit between{' '}
-          {text.from} and {text.to}.
+          {text.from} and {keepTogether(`${text.to} ${text.unit}`)}.
         </p>
         <div className="mt-3 flex flex-wrap items-center gap-x-4 gap-y-2">
           <Stepper

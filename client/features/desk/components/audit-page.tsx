@@ -39,7 +39,9 @@ export function AuditPage() {
       {audit.isError && <ErrorPanel error={audit.error} onRetry={() => void audit.refetch()} />}
       {audit.data !== undefined && (
         <div className={audit.isPlaceholderData ? 'opacity-60' : undefined}>
-          <LiveRegion words={`${audit.data.total} lines found.`} />
+          <LiveRegion
+            words={audit.data.total === 1 ? 'One line found.' : `${audit.data.total} lines found.`}
+          />
           <AuditLines page={audit.data} isSearch={search !== ''} />
           <Pager {...audit.data} linkTo={list.linkTo} />
         </div>

@@ -54,7 +54,11 @@ export function OrdersPage() {
       {orders.isError && <ErrorPanel error={orders.error} onRetry={() => void orders.refetch()} />}
       {orders.data !== undefined && (
         <div className={orders.isPlaceholderData ? 'opacity-60' : undefined}>
-          <LiveRegion words={`${orders.data.total} orders found.`} />
+          <LiveRegion
+            words={
+              orders.data.total === 1 ? 'One order found.' : `${orders.data.total} orders found.`
+            }
+          />
           <OrderLines orders={orders.data.items} />
           <Pager {...orders.data} linkTo={list.linkTo} />
         </div>

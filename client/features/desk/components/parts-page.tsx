@@ -71,7 +71,9 @@ export function PartsPage() {
       {parts.isError && <ErrorPanel error={parts.error} onRetry={() => void parts.refetch()} />}
       {parts.data !== undefined && (
         <div className={parts.isPlaceholderData ? 'opacity-60' : undefined}>
-          <LiveRegion words={`${parts.data.total} parts found.`} />
+          <LiveRegion
+            words={parts.data.total === 1 ? 'One part found.' : `${parts.data.total} parts found.`}
+          />
           <PartsResult page={parts.data} query={query} list={list} />
         </div>
       )}

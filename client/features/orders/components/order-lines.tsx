@@ -20,7 +20,8 @@ export function OrderLines(props: { order: Order; lineLinks: (line: Line) => Rea
               <p className="mt-1 text-soft">
                 Promised: {keepTogether(`${line.promise.text.rate} ${line.promise.text.unit}`)},{' '}
                 {keepTogether(line.promise.text.band)}; every kit between {line.promise.text.from}{' '}
-                and {line.promise.text.to}. Pack {line.identifier}.
+                and {keepTogether(`${line.promise.text.to} ${line.promise.text.unit}`)}. Pack{' '}
+                {line.identifier}.
               </p>
               <div className="no-print mt-2 flex flex-wrap gap-x-6">{props.lineLinks(line)}</div>
               <details className="mt-2">

@@ -15,8 +15,9 @@ export function PromiseCard(props: { brief: ResolvedBrief; pack: Pack; identifie
       <p className="text-[clamp(1.375rem,1.1rem+1.1vw,1.75rem)] leading-[1.42] font-light [&_strong]:font-heavy">
         This kit {said.verb} <strong>{keepTogether(said.rate)}</strong>. Every kit we send stays
         between <strong className="whitespace-nowrap">{text.from}</strong> and{' '}
-        <strong className="whitespace-nowrap">{text.to}</strong> from {brief.ambient.minCelsius} to{' '}
-        {keepTogether(`${brief.ambient.maxCelsius}${narrow}°C`)}, {bindUnits(supplyRange(brief))}.
+        <strong className="whitespace-nowrap">{keepTogether(`${text.to} ${text.unit}`)}</strong>,
+        from {brief.ambient.minCelsius} to {keepTogether(`${brief.ambient.maxCelsius}${narrow}°C`)},{' '}
+        {bindUnits(supplyRange(brief))}.
       </p>
       <div className="mt-5">
         <Scale asked={brief.band} error={pack.promise.error} low={low} high={high} />
