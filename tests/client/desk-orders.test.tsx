@@ -2,11 +2,14 @@ import { QueryClient, QueryClientProvider } from '@tanstack/react-query';
 import { render, screen, waitFor } from '@testing-library/react';
 import { userEvent } from '@testing-library/user-event';
 import { MemoryRouter } from 'react-router-dom';
-import { afterEach, describe, expect, it } from 'vitest';
+import { afterEach, beforeEach, describe, expect, it } from 'vitest';
 import { DeskRoutes } from '../../client/features/desk/desk-routes.tsx';
 import { deskOrderSchema, type DeskOrder } from '../../server/contracts/desk.ts';
 import { startAnswering } from './bench-server.ts';
+import { openDialogs } from './support/dialog.ts';
 import './support/render.tsx';
+
+beforeEach(openDialogs);
 
 let stop: (() => Promise<void>) | undefined;
 afterEach(async () => {
