@@ -73,18 +73,16 @@ export function confirmationMail(facts: {
   const blocks: Block[] = [
     { kind: 'text', text: `Thank you. Order ${order.ref} is paid and waits for the bench.` },
     {
-      kind: 'list',
-      items: lines.map(
-        (line) =>
-          `${line.quantity} × ${line.sentence}. ${promiseLine(line.promise)}. ${amount(line.lineGrossMinor)}. Identifier ${line.identifier}.`,
-      ),
-    },
-    {
-      kind: 'list',
-      items: [
-        `Goods: ${amount(order.goodsMinor)}`,
-        `Shipping, ${order.shippingName}: ${amount(order.shippingMinor)}`,
-        `Total: ${amount(order.totalMinor)}, of which ${amount(order.taxMinor)} tax (${rate}${nbsp}%)`,
+      kind: 'table',
+      rows: [
+        ...lines.map((line): Row => [
+          `${line.quantity} × ${line.sentence}. ${promiseLine(line.promise)}. Identifier ${line.identifier}.`,
+          amount(line.lineGrossMinor),
+        ]),
+        ['Goods', amount(order.goodsMinor)],
+        [`Shipping, ${order.shippingName}`, amount(order.shippingMinor)],
+        ['Total', amount(order.totalMinor)],
+        [`of which tax (${rate}${nbsp}%)`, amount(order.taxMinor)],
       ],
     },
     { kind: 'text', text: `It goes to: ${addressLines(order.shipTo, countryName).join(', ')}.` },
@@ -136,7 +134,11 @@ export function refundMail(facts: { shop: Shop; order: MailOrder; amount: Money 
   );
 }
 
+/** What, and what it costs. */
+type Row = [string, string];
+
 type Block =
+  | { kind: 'table'; rows: Row[] }
   | { kind: 'text'; text: string }
   | { kind: 'list'; items: string[] }
   | { kind: 'link'; text: string; href: string };
@@ -151,11 +153,22 @@ function cautionBlocks(lines: readonly MailLine[]): Block[] {
 
 const escape = (text: string) => text.replace(/[&<>"']/g, (sign) => `&#${sign.charCodeAt(0)};`);
 
+function htmlTable(rows: readonly Row[]): string {
+  const rule = 'border-bottom:1px solid #CFC4AE;padding:8px 0;vertical-align:top';
+  const cells = rows.map(
+    ([what, cost]) =>
+      `<tr><td style="${rule}">${escape(what)}</td>` +
+      `<td style="${rule};padding-left:16px;text-align:right;white-space:nowrap;font-weight:bold">${escape(cost)}</td></tr>`,
+  );
+  return `<table style="border-collapse:collapse;width:100%">${cells.join('')}</table>`;
+}
+
 function compose(subject: string, blocks: readonly Block[], shop: Shop): Mail {
   const sender = [...shop.address, shop.email].join('\n');
   const text = blocks
     .map((block) => {
       if (block.kind === 'text') return block.text;
+      if (block.kind === 'table') return block.rows.map((row) => row.join(': ')).join('\n');
       if (block.kind === 'link') return `${block.text}:\n${block.href}`;
       return block.items.map((item) => `- ${item}`).join('\n');
     })
@@ -164,8 +177,12 @@ function compose(subject: string, blocks: readonly Block[], shop: Shop): Mail {
   const body = blocks
     .map((block) => {
       if (block.kind === 'text') return `<p>${escape(block.text)}</p>`;
+      if (block.kind === 'table') return htmlTable(block.rows);
       if (block.kind === 'link') {
-        return `<p><a href="${escape(block.href)}" style="color:#0E5C50;font-weight:bold">${escape(block.text)}</a></p>`;
+        return (
+          `<p style="margin:24px 0"><a href="${escape(block.href)}" style="background:#0E5C50;color:#FFFFFF;` +
+          `display:inline-block;padding:12px 20px;font-weight:bold;text-decoration:none">${escape(block.text)}</a></p>`
+        );
       }
       return `<ul>${block.items.map((item) => `<li>${escape(item)}</li>`).join('')}</ul>`;
     })
