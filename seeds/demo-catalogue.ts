@@ -1,3 +1,4 @@
+import { formatFarads, formatOhms } from '../server/engine/si-format.ts';
 import { e24, e6, e96, inventedCount, scaled } from './shelf-values.ts';
 
 /** One row of `parts` with the shelf it lies on. All of it is invented for the demonstration shop. */
@@ -25,21 +26,6 @@ const faradUnits = [
   [1e-9, 'N'],
   [1e-12, 'P'],
 ] as const;
-
-/** 887000 → "887 kΩ" with the narrow no-break space between value and unit. */
-function words(value: number, unit: string): string {
-  const prefixes = [
-    [1e6, 'M'],
-    [1e3, 'k'],
-    [1, ''],
-    [1e-3, 'm'],
-    [1e-6, 'µ'],
-    [1e-9, 'n'],
-    [1e-12, 'p'],
-  ] as const;
-  const [size, prefix] = prefixes.find(([limit]) => value >= limit * (1 - 1e-9)) ?? [1e-12, 'p'];
-  return `${Number((value / size).toPrecision(4))}\u202f${prefix}${unit}`;
-}
 
 const percent = (fraction: number) => `±\u00a0${Number((fraction * 100).toPrecision(3))}\u202f%`;
 
@@ -136,7 +122,7 @@ function resistors(): DemoPart[] {
       row: {
         sku: `TW-${family.code}-${rkm(ohms, ohmUnits)}`.replace('.', 'D'),
         kind: 'resistor',
-        name: `Resistor ${words(ohms, 'Ω')} ${percent(family.tolerance)}`,
+        name: `Resistor ${formatOhms(ohms)} ${percent(family.tolerance)}`,
         mounting: family.mounting,
         cost_minor: family.cost,
         price_minor: family.price,
@@ -333,7 +319,7 @@ function capacitors(): DemoPart[] {
         row: {
           sku: `TW-${family.code}-${rkm(farads, faradUnits)}`,
           kind: 'capacitor',
-          name: `Capacitor ${words(farads, 'F')} ${percent(family.tolerance)} ${family.words}`,
+          name: `Capacitor ${formatFarads(farads)} ${percent(family.tolerance)} ${family.words}`,
           mounting: family.mounting,
           cost_minor: cost,
           price_minor: Math.round(cost * 2.1) + 3,

@@ -1,12 +1,12 @@
+import { eSeriesMantissas } from '../server/engine/e-series.ts';
+
 /** Preferred numbers (IEC 60063) and the invented, repeatable quantities of the demonstration shop. */
 
-export const e6 = [10, 15, 22, 33, 47, 68];
-export const e24 = [
-  10, 11, 12, 13, 15, 16, 18, 20, 22, 24, 27, 30, 33, 36, 39, 43, 47, 51, 56, 62, 68, 75, 82, 91,
-];
+export const e6 = eSeriesMantissas('E6');
+export const e24 = eSeriesMantissas('E24');
 
-/** E96 by its generation rule, as hundreds: 100 … 976. */
-export const e96 = Array.from({ length: 96 }, (_, k) => Math.round(100 * 10 ** (k / 96)));
+/** Three figures: 100 … 976. */
+export const e96 = eSeriesMantissas('E96');
 
 /** A number that stays a plain decimal: 887 × 10³ instead of 886999.9999. */
 export function scaled(mantissa: number, exponent: number): number {

@@ -32,7 +32,7 @@ export function adviseOn(
   if (nearest === undefined) advice.push(...adviseOnNone(brief, missing, retry));
   else if (!isNear(nearest)) advice.push(adviseOnRate(brief, nearest));
   else if (!found.packs.some((pack) => pack.wins.includes('best-value'))) {
-    advice.push(...adviseOnWide(brief, found.packs));
+    advice.push(...adviseOnWide(brief, found.packs, nearest));
   }
   return advice;
 }
@@ -135,15 +135,15 @@ function largestQuantity(asked: number, retry: Retry): number {
   return works;
 }
 
-function adviseOnWide(brief: ResolvedBrief, packs: readonly RankedPack[]): Advice[] {
+function adviseOnWide(
+  brief: ResolvedBrief,
+  packs: readonly RankedPack[],
+  nearest: RankedPack,
+): Advice[] {
   const steadiest = packs.find((pack) => pack.wins.includes('steadiest'));
   if (!steadiest) return [];
   const end = worseEnd(steadiest.guaranteed, brief.targetHz);
-  const closest = Math.min(...packs.map((pack) => pack.distance));
-  if (closest > Math.log1p(brief.band)) {
-    const nearest = [...packs].sort((a, b) => a.distance - b.distance)[0];
-    return nearest === undefined ? [] : [adviseOnRate(brief, nearest)];
-  }
+  if (nearest.distance > Math.log1p(brief.band)) return [adviseOnRate(brief, nearest)];
   const band = Math.ceil(end * 1000) / 1000;
   if (band > 0.5) return [];
   return [

@@ -3,7 +3,7 @@ import type { OrderStatus } from '../contracts/orders.ts';
 import { money } from '../domain/money.ts';
 import type { Deps } from '../ports.ts';
 import { linesOfOrders, listOrders } from '../store/orders.ts';
-import { sentenceOfLines } from './view-order.ts';
+import { summariseKits } from './view-order.ts';
 
 /** A page of orders, newest first. */
 export async function listDeskOrders(
@@ -26,16 +26,14 @@ export async function listDeskOrders(
     orders.map((order) => order.id),
   );
   const items = orders.map((order) => {
-    const own = lines.filter((line) => line.orderId === order.id);
     return {
       ref: order.ref,
       status: order.status,
       placedAt: order.placedAt.toISOString(),
       email: order.email,
       name: order.shipTo.name,
-      kits: own.reduce((sum, line) => sum + line.quantity, 0),
+      ...summariseKits(lines, order.id),
       total: money(order.totalMinor),
-      sentence: sentenceOfLines(own),
     };
   });
   return { items, page: filter.page, pageSize: filter.pageSize, total };

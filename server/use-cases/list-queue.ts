@@ -4,7 +4,7 @@ import type { Deps } from '../ports.ts';
 import { linesOfOrders, listOrders } from '../store/orders.ts';
 import { stopsOfOrders } from '../store/stock.ts';
 import type { Packer } from './bench-order.ts';
-import { sentenceOfLines } from './view-order.ts';
+import { summariseKits } from './view-order.ts';
 
 /** The orders that wait for the bench, the most urgent first. */
 export async function listQueue(
@@ -24,16 +24,14 @@ export async function listQueue(
   ]);
   const now = deps.clock.now();
   const items = orders.map((order) => {
-    const own = lines.filter((line) => line.orderId === order.id);
     const shipBy = order.shipBy ?? order.placedAt;
     return {
       ref: order.ref,
       status: order.status,
       shipBy: shipBy.toISOString(),
       late: shipBy < now,
-      kits: own.reduce((sum, line) => sum + line.quantity, 0),
+      ...summariseKits(lines, order.id),
       stops: stops.get(order.id) ?? 0,
-      sentence: sentenceOfLines(own),
       shippingMethod: order.shippingName,
       claimedBy: order.claimedByName,
       mine: order.claimedBy === packer.id,

@@ -2,7 +2,12 @@ import { solveRequestSchema, type SolveRequest } from '../contracts/brief.ts';
 import type { Advice, SolveResponse } from '../contracts/packs.ts';
 import { adviseOn, isNear } from '../domain/advice.ts';
 import { resolveBrief, type BriefInHand } from '../domain/brief.ts';
-import { chooseAccessories, choiceOf, missingAccessory } from '../domain/pack-choice.ts';
+import {
+  chooseAccessories,
+  choiceOf,
+  missingAccessory,
+  type Accessories,
+} from '../domain/pack-choice.ts';
 import { shelfOf } from '../domain/shelf.ts';
 import { formTimingTables, restock, type TimingTables } from '../engine/search/composites.ts';
 import {
@@ -32,8 +37,8 @@ export async function solveBrief(
   if (inHand.kind === 'impossible') {
     throw new Refusal('impossible-brief', inHand.errors[0]!.message, inHand.errors);
   }
-  const found = searchShelves(book, inHand, request);
   const accessories = chooseAccessories(book.catalogue, inHand);
+  const found = searchShelves(book, inHand, accessories, request);
   const offered = found.packs.filter((ranked) => isNear(ranked) && ranked.guaranteed.minHz > 0);
   const packs = offered.map((ranked) =>
     assess(book, deps.signer, request, inHand, ranked, choiceOf(ranked, inHand, accessories)),
@@ -43,29 +48,29 @@ export async function solveBrief(
     packs: packs.map(({ pack }) => pack).filter((pack) => pack.makeable >= request.quantity),
     considered: found.considered,
     elapsedMs: Math.round((performance.now() - started) * 100) / 100,
-    advice: advice(book, inHand, request, found),
+    advice: advice(book, inHand, accessories, request, found),
   };
 }
 
 function searchShelves(
   book: PackBook,
   inHand: BriefInHand,
+  accessories: Accessories,
   request: Pick<SolveRequest, 'rank' | 'limit'>,
 ): FoundPacks {
-  const shelf = shelfFor(book, inHand);
+  const shelf = shelfFor(book, inHand, accessories);
   if (shelf === null) return nothing;
   return findPacks(shelf, inHand.search, request.rank, request.limit, timingTables(shelf));
 }
 
 /** The steadiest pack for a brief in hand, or null: what the coverage map asks for. */
 export function steadiestOnShelves(book: PackBook, inHand: BriefInHand): RankedPack | null {
-  const shelf = shelfFor(book, inHand);
+  const shelf = shelfFor(book, inHand, chooseAccessories(book.catalogue, inHand));
   return shelf && findSteadiestPack(shelf, inHand.search, timingTables(shelf));
 }
 
 /** The shelf a brief may take from; null when something every kit needs is missing. */
-function shelfFor(book: PackBook, inHand: BriefInHand): Shelf | null {
-  const accessories = chooseAccessories(book.catalogue, inHand);
+function shelfFor(book: PackBook, inHand: BriefInHand, accessories: Accessories): Shelf | null {
   if (inHand.brief.careLevel !== 'as-stocked') return null;
   if (missingAccessory(inHand, accessories) !== null) return null;
   return shelfOf(book.catalogue, inHand.brief.mounting, (comparator) =>
@@ -84,14 +89,20 @@ export async function warmSearch(deps: Pick<Deps, 'db' | 'signer'>): Promise<voi
 function advice(
   book: PackBook,
   inHand: BriefInHand,
+  accessories: Accessories,
   request: SolveRequest,
   found: FoundPacks,
 ): Advice[] {
-  const missing = missingAccessory(inHand, chooseAccessories(book.catalogue, inHand));
+  const missing = missingAccessory(inHand, accessories);
   const retry = (change: Partial<BriefInHand['brief']>) => {
     const other = resolveBrief({ ...request, ...change }, book.catalogue);
     if (other.kind === 'impossible') return null;
-    return searchShelves(book, other, { rank: 'closest', limit: 1 }).packs[0] ?? null;
+    return (
+      searchShelves(book, other, chooseAccessories(book.catalogue, other), {
+        rank: 'closest',
+        limit: 1,
+      }).packs[0] ?? null
+    );
   };
   return adviseOn(inHand.brief, found, missing, retry);
 }

@@ -110,22 +110,32 @@ export async function listMyOrders(
     orders.map((order) => order.id),
   );
   const items = orders.map((order) => {
-    const own = lines.filter((line) => line.orderId === order.id);
     return {
       ref: order.ref,
       status: order.status,
       placedAt: order.placedAt.toISOString(),
       total: money(order.totalMinor),
-      kits: own.reduce((sum, line) => sum + line.quantity, 0),
-      sentence: sentenceOfLines(own),
-      strip: own[0]?.strip ?? null,
+      ...summariseKits(lines, order.id),
+      strip: lines.find((line) => line.orderId === order.id)?.strip ?? null,
     };
   });
   return { items, ...page, total };
 }
 
+/** What a list says of one order's kits: how many, and the first line's sentence. */
+export function summariseKits(
+  lines: readonly OrderLineRow[],
+  orderId: number,
+): { kits: number; sentence: string } {
+  const own = lines.filter((line) => line.orderId === orderId);
+  return {
+    kits: own.reduce((sum, line) => sum + line.quantity, 0),
+    sentence: sentenceOfLines(own),
+  };
+}
+
 /** The first line's sentence, and how many more there are. */
-export function sentenceOfLines(lines: readonly { sentence: string }[]): string {
+function sentenceOfLines(lines: readonly { sentence: string }[]): string {
   const more = lines.length - 1;
   const first = lines[0]?.sentence ?? '';
   return more > 0 ? `${first}, and ${more} more ${more === 1 ? 'pack' : 'packs'}` : first;
