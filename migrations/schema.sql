@@ -12,11 +12,44 @@ CREATE FUNCTION public.lots_move_by_ledger_only() RETURNS trigger
       return new;
     end $$;
 
-CREATE FUNCTION public.note_catalogue_change() RETURNS trigger
+CREATE FUNCTION public.lots_notify() RETURNS trigger
     LANGUAGE plpgsql
     AS $$
     begin
-      update catalogue_revision set number = number + 1;
+      if tg_op = 'INSERT' then
+        perform notify_shelves(array(select distinct part_id from new_rows));
+      elsif tg_op = 'DELETE' then
+        perform notify_shelves(array(select distinct part_id from old_rows));
+      elsif tg_op = 'UPDATE' then
+        perform notify_shelves(array(select part_id from old_rows union select part_id from new_rows));
+      else
+        perform pg_notify('shelves', 'all');
+      end if;
+      return null;
+    end $$;
+
+CREATE FUNCTION public.notify_shelves(touched integer[]) RETURNS void
+    LANGUAGE plpgsql
+    AS $$
+    begin
+      if cardinality(touched) > 500 then perform pg_notify('shelves', 'all');
+      elsif cardinality(touched) > 0 then perform pg_notify('shelves', array_to_string(touched, ','));
+      end if;
+    end $$;
+
+CREATE FUNCTION public.parts_notify() RETURNS trigger
+    LANGUAGE plpgsql
+    AS $$
+    begin
+      if tg_op = 'INSERT' then
+        perform notify_shelves(array(select id from new_rows));
+      elsif tg_op = 'DELETE' then
+        perform notify_shelves(array(select id from old_rows));
+      elsif tg_op = 'UPDATE' then
+        perform notify_shelves(array(select id from old_rows union select id from new_rows));
+      else
+        perform pg_notify('shelves', 'all');
+      end if;
       return null;
     end $$;
 
@@ -108,12 +141,6 @@ ALTER TABLE public.bins ALTER COLUMN id ADD GENERATED ALWAYS AS IDENTITY (
     NO MINVALUE
     NO MAXVALUE
     CACHE 1
-);
-
-CREATE TABLE public.catalogue_revision (
-    only_row boolean DEFAULT true NOT NULL,
-    number bigint DEFAULT 1 NOT NULL,
-    CONSTRAINT catalogue_revision_only_row_check CHECK (only_row)
 );
 
 CREATE TABLE public.idempotency_keys (
@@ -694,9 +721,6 @@ ALTER TABLE ONLY public.bins
 ALTER TABLE ONLY public.bins
     ADD CONSTRAINT bins_walk_once UNIQUE (walk_order);
 
-ALTER TABLE ONLY public.catalogue_revision
-    ADD CONSTRAINT catalogue_revision_pkey PRIMARY KEY (only_row);
-
 ALTER TABLE ONLY public.idempotency_keys
     ADD CONSTRAINT idempotency_keys_pkey PRIMARY KEY (scope, key);
 
@@ -861,11 +885,25 @@ CREATE TRIGGER audit_append_only BEFORE DELETE OR UPDATE OR TRUNCATE ON public.a
 
 CREATE TRIGGER lots_guarded BEFORE INSERT OR UPDATE ON public.lots FOR EACH ROW EXECUTE FUNCTION public.lots_move_by_ledger_only();
 
+CREATE TRIGGER lots_notify_delete AFTER DELETE ON public.lots REFERENCING OLD TABLE AS old_rows FOR EACH STATEMENT EXECUTE FUNCTION public.lots_notify();
+
+CREATE TRIGGER lots_notify_insert AFTER INSERT ON public.lots REFERENCING NEW TABLE AS new_rows FOR EACH STATEMENT EXECUTE FUNCTION public.lots_notify();
+
+CREATE TRIGGER lots_notify_truncate AFTER TRUNCATE ON public.lots FOR EACH STATEMENT EXECUTE FUNCTION public.lots_notify();
+
+CREATE TRIGGER lots_notify_update AFTER UPDATE ON public.lots REFERENCING OLD TABLE AS old_rows NEW TABLE AS new_rows FOR EACH STATEMENT EXECUTE FUNCTION public.lots_notify();
+
 CREATE TRIGGER order_events_append_only BEFORE DELETE OR UPDATE OR TRUNCATE ON public.order_events FOR EACH STATEMENT EXECUTE FUNCTION public.refuse_change();
 
 CREATE TRIGGER packs_frozen BEFORE DELETE OR UPDATE OR TRUNCATE ON public.packs FOR EACH STATEMENT EXECUTE FUNCTION public.refuse_change();
 
-CREATE TRIGGER parts_note_change AFTER INSERT OR DELETE OR UPDATE ON public.parts FOR EACH STATEMENT EXECUTE FUNCTION public.note_catalogue_change();
+CREATE TRIGGER parts_notify_delete AFTER DELETE ON public.parts REFERENCING OLD TABLE AS old_rows FOR EACH STATEMENT EXECUTE FUNCTION public.parts_notify();
+
+CREATE TRIGGER parts_notify_insert AFTER INSERT ON public.parts REFERENCING NEW TABLE AS new_rows FOR EACH STATEMENT EXECUTE FUNCTION public.parts_notify();
+
+CREATE TRIGGER parts_notify_truncate AFTER TRUNCATE ON public.parts FOR EACH STATEMENT EXECUTE FUNCTION public.parts_notify();
+
+CREATE TRIGGER parts_notify_update AFTER UPDATE ON public.parts REFERENCING OLD TABLE AS old_rows NEW TABLE AS new_rows FOR EACH STATEMENT EXECUTE FUNCTION public.parts_notify();
 
 CREATE TRIGGER reservations_reserve AFTER INSERT OR DELETE OR UPDATE ON public.reservations FOR EACH ROW EXECUTE FUNCTION public.reserve_on_lot();
 

@@ -11,10 +11,10 @@ import { warmSearch } from './use-cases/solve-brief.ts';
 
 const config = readConfig(process.env);
 const log = pino({ level: config.logLevel });
-const deps = composeDeps(config);
+const noteLoss = (error: Error) => log.warn({ err: error }, 'database connection lost');
+const deps = composeDeps(config, noteLoss);
 const mail = createSmtpMail(config.smtpUrl, config.mailFrom);
 const pool = new pg.Pool({ connectionString: config.databaseUrl, max: 5 });
-const noteLoss = (error: Error) => log.warn({ err: error }, 'database connection lost');
 pool.on('error', noteLoss);
 pool.on('connect', (client) => client.on('error', noteLoss));
 
@@ -45,7 +45,7 @@ async function stop(): Promise<void> {
   await worker.stop();
   mail.close();
   await pool.end();
-  await deps.db.destroy();
+  await deps.close();
 }
 
 for (const signal of ['SIGTERM', 'SIGINT', 'SIGHUP'] as const)

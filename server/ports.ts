@@ -1,5 +1,6 @@
 import type { Knex } from 'knex';
 import type { BuildSheet } from './contracts/orders.ts';
+import type { StockView } from './store/stock-view.ts';
 
 /** What the use cases need of the outside world. Adapters implement these; tests may too. */
 
@@ -84,6 +85,8 @@ export interface Printer {
 
 export interface Deps {
   db: Knex;
+  /** The shelves as they stand, kept in memory. What a transaction writes shows once it commits. */
+  stockView: StockView;
   clock: Clock;
   payments: PaymentGateway;
   signer: Signer;

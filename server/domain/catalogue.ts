@@ -1,6 +1,17 @@
 import type { Mounting } from '../contracts/common.ts';
 import type { Part, PartKind } from '../contracts/parts.ts';
 
+/** One delivery of a part on the shelf. The figures measured of a sample are SI; all null or none. */
+export interface LotFacts {
+  id: number;
+  /** Pieces on hand less reserved, above zero. */
+  available: number;
+  measuredMean: number | null;
+  /** Standard deviation of single pieces. */
+  measuredDeviation: number | null;
+  measuredCount: number | null;
+}
+
 /** A part as the shop keeps it: the public facts, and what only the house sees. */
 export interface CataloguePart {
   id: number;
@@ -15,6 +26,8 @@ export interface CataloguePart {
   reserved: number;
   /** On hand less reserved. */
   available: number;
+  /** The lots with unreserved pieces, ascending by the day they were received, then by id. */
+  lots: readonly LotFacts[];
   facts: PartFacts;
 }
 

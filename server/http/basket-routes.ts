@@ -16,7 +16,10 @@ export function lineId(value: string | undefined): string {
 }
 
 /** The basket, a guest's or a signed-in buyer's. */
-export function basketRoutes(deps: Pick<Deps, 'db' | 'signer'>, cookies: CookieSettings): Router {
+export function basketRoutes(
+  deps: Pick<Deps, 'db' | 'stockView' | 'signer'>,
+  cookies: CookieSettings,
+): Router {
   const router = Router();
 
   router.get('/', async (req, res) => {

@@ -15,7 +15,9 @@ import { sendProblem } from './problem.ts';
 const solvesPerMinute = 6000;
 
 /** The public side: shop, catalogue, circuits, packs. */
-export function packRoutes(deps: Pick<Deps, 'db' | 'signer' | 'demo' | 'mailPageUrl'>): Router {
+export function packRoutes(
+  deps: Pick<Deps, 'db' | 'stockView' | 'signer' | 'demo' | 'mailPageUrl'>,
+): Router {
   const router = Router();
   const limiter = rateLimit({
     windowMs: 60_000,

@@ -1,7 +1,8 @@
+import type { Client } from 'pg';
 import type { DeskPartsQuery } from '../contracts/desk.ts';
 import type { Mounting } from '../contracts/common.ts';
 import type { PartKind } from '../contracts/parts.ts';
-import type { CataloguePart, PartFacts } from '../domain/catalogue.ts';
+import type { CataloguePart, LotFacts, PartFacts } from '../domain/catalogue.ts';
 import type { Database } from './connection.ts';
 
 interface PartRow {
@@ -16,6 +17,7 @@ interface PartRow {
   grams: number;
   on_hand: number;
   reserved: number;
+  lots: LotFacts[] | null;
   [column: string]: unknown;
 }
 
@@ -95,68 +97,53 @@ function toPart(row: PartRow): CataloguePart {
     onHand: row.on_hand,
     reserved: row.reserved,
     available: row.on_hand - row.reserved,
+    lots: row.lots ?? [],
     facts: facts as PartFacts,
   };
 }
 
-/** Every part with its stock summed over lots; the base of all reads below. */
-function partsWithStock(db: Database) {
+/** Every part, or the named ones, with the stock of its lots; the base of all reads below. */
+function partsWithStock(db: Database, ids?: readonly number[]) {
   const stock = db('lots')
     .select('part_id')
     .sum({ on_hand: 'on_hand', reserved: 'reserved' })
+    .select(
+      db.raw(`
+        json_agg(json_build_object('id', id, 'available', on_hand - reserved,
+          'measuredMean', measured_mean, 'measuredDeviation', measured_deviation,
+          'measuredCount', measured_count) order by received_on, id)
+          filter (where on_hand > reserved) as lots`),
+    )
     .groupBy('part_id')
     .as('stock');
-  return db('parts')
+  const parts = db('parts')
     .leftJoin(stock, 'stock.part_id', 'parts.id')
-    .select('parts.*')
+    .select('parts.*', 'stock.lots')
     .select(db.raw('coalesce(stock.on_hand, 0)::int as on_hand'))
     .select(db.raw('coalesce(stock.reserved, 0)::int as reserved'));
+  if (ids === undefined) return parts;
+  // Named on both sides of the join: the planner does not carry a list into an aggregate.
+  stock.whereRaw('part_id = any(?)', [[...ids]]);
+  return parts.whereRaw('parts.id = any(?)', [[...ids]]);
 }
-
-interface KeptFacts {
-  revision: number;
-  parts: CataloguePart[];
-}
-
-/** Facts of all active parts as last read, for each database this process talks to. */
-const keptFacts = new WeakMap<object, KeptFacts>();
 
 /**
- * Every active part with its stock, ascending by id: what a solve looks at. Facts and prices change
- * seldom and are kept until the catalogue's revision moves; quantities are read each time.
+ * The active parts with their stock, ascending by id, all of them or those named: facts and
+ * quantities of one snapshot. `through` reads over that connection instead of the pool's.
  */
-export async function loadCatalogue(db: Database): Promise<CataloguePart[]> {
-  const { rows } = await db.raw(`
-    select (select number from catalogue_revision) as revision, part_id, sum(on_hand)::int as on_hand,
-      sum(reserved)::int as reserved
-    from lots group by part_id`);
-  const stock = new Map<number, { on_hand: number; reserved: number }>();
-  for (const row of rows) stock.set(row.part_id, row);
-  const { parts } = await factsAt(db, rows[0]?.revision ?? -1);
-  return parts.map((part) => {
-    const { on_hand: onHand, reserved } = stock.get(part.id) ?? { on_hand: 0, reserved: 0 };
-    return { ...part, onHand, reserved, available: onHand - reserved };
-  });
-}
-
-async function factsAt(db: Database, revision: number): Promise<KeptFacts> {
-  const pool = db.client.pool as object;
-  const kept = keptFacts.get(pool);
-  if (kept?.revision === revision) return kept;
-  // Read in one statement, so that facts and revision belong together.
-  const rows: (PartRow & { revision: number })[] = await partsWithStock(db)
-    .select(db.raw('(select number from catalogue_revision) as revision'))
-    .where('parts.active', true)
-    .orderBy('parts.id');
-  const fresh = { revision: rows[0]?.revision ?? -1, parts: rows.map(toPart) };
-  // Inside a transaction the rows may be its own unsaved changes; those are nobody else's facts.
-  if (!db.isTransaction) keptFacts.set(pool, fresh);
-  return fresh;
+export async function loadCatalogue(
+  db: Database,
+  ids?: readonly number[],
+  through?: Client,
+): Promise<CataloguePart[]> {
+  const query = partsWithStock(db, ids).where('parts.active', true).orderBy('parts.id');
+  const rows: PartRow[] = await (through ? query.connection(through) : query);
+  return rows.map(toPart);
 }
 
 /** The named parts, retired ones too, in no particular order. */
 export async function findParts(db: Database, ids: readonly number[]): Promise<CataloguePart[]> {
-  const rows: PartRow[] = await partsWithStock(db).whereIn('parts.id', ids);
+  const rows: PartRow[] = await partsWithStock(db, ids);
   return rows.map(toPart);
 }
 

@@ -10,11 +10,25 @@ export interface ShopSettings {
   carriers: string[];
 }
 
+const neverSeeded = 'The settings are missing: run the migrations with their seeds.';
+
 /** The shop's own details and fees; throws when the database was never seeded. */
 export async function shopSettings(db: Database): Promise<ShopSettings> {
   const row = await db('settings').where({ name: 'shop' }).first('value');
-  if (!row) throw new Error('The settings are missing: run the migrations with their seeds.');
+  if (!row) throw new Error(neverSeeded);
   return row.value;
+}
+
+/** The shop's details with the tax rate of its own country, zero where none is kept. */
+export async function homeTerms(
+  db: Database,
+): Promise<{ settings: ShopSettings; taxBasisPoints: number }> {
+  const row = await db('settings')
+    .leftJoin('tax_rates', 'tax_rates.country', db.raw(`settings.value ->> 'homeCountry'`))
+    .where({ 'settings.name': 'shop' })
+    .first('value', 'basis_points');
+  if (!row) throw new Error(neverSeeded);
+  return { settings: row.value, taxBasisPoints: row.basis_points ?? 0 };
 }
 
 export interface TaxRate {

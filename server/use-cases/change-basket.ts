@@ -12,7 +12,7 @@ import { openPackBook, openToken } from './pack-book.ts';
 import { Refusal } from './refusal.ts';
 import { viewBasket } from './view-basket.ts';
 
-type BasketDeps = Pick<Deps, 'db' | 'signer'>;
+type BasketDeps = Pick<Deps, 'db' | 'stockView' | 'signer'>;
 
 /** Puts kits of a pack into the basket, if the shelves can make that many. */
 export async function addToBasket(
@@ -20,7 +20,7 @@ export async function addToBasket(
   keeper: BasketKeeper,
   input: { token: string; quantity: number },
 ): Promise<Basket> {
-  const opened = openToken(await openPackBook(deps.db), deps.signer, input.token);
+  const opened = openToken(await openPackBook(deps), deps.signer, input.token);
   if (opened.kind === 'unknown') {
     throw new Refusal('invalid', 'This pack is unknown; ask for it again from the brief.', [
       { path: 'token', message: 'The token was not made by this shop, or was altered.' },

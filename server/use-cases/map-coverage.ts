@@ -19,10 +19,10 @@ let kept: { at: number; work: Promise<Coverage> } | null = null;
  * How steadily today's shelves hold a rate, over a log-spaced range. Kept for half a minute, since it
  * takes about a second; other requests are served between its points.
  */
-export function mapCoverage(deps: Pick<Deps, 'db' | 'clock'>): Promise<Coverage> {
+export function mapCoverage(deps: Pick<Deps, 'db' | 'stockView' | 'clock'>): Promise<Coverage> {
   const now = deps.clock.now().getTime();
   if (kept === null || now - kept.at > keptForMs) {
-    kept = { at: now, work: openPackBook(deps.db).then(survey) };
+    kept = { at: now, work: openPackBook(deps).then(survey) };
     kept.work.catch(() => (kept = null));
   }
   return kept.work;

@@ -18,32 +18,37 @@ import { promise, type RankedPack } from '../engine/search/find-packs.ts';
 import type { Frame } from '../engine/search/frame.ts';
 import { periodAt } from '../engine/prepared-single.ts';
 import type { ParsedBrief } from '../contracts/brief.ts';
-import type { Database } from '../store/connection.ts';
-import { loadCatalogue } from '../store/parts.ts';
-import { shopSettings, taxRates, type ShopSettings } from '../store/settings.ts';
-import type { Signer } from '../ports.ts';
+import { homeTerms, type ShopSettings } from '../store/settings.ts';
+import type { Deps, Signer } from '../ports.ts';
 
 /** Everything that packs are made and priced from, as it stands at one moment. */
 export interface PackBook {
-  catalogue: CataloguePart[];
-  byId: Map<number, CataloguePart>;
+  catalogue: readonly CataloguePart[];
+  byId: ReadonlyMap<number, CataloguePart>;
   settings: ShopSettings;
   rule: PriceRule;
 }
 
-/** Reads shelves, fees and home tax. */
-export async function openPackBook(db: Database): Promise<PackBook> {
-  // One after the other: inside a transaction they share a single connection.
-  const catalogue = await loadCatalogue(db);
-  const settings = await shopSettings(db);
-  const rates = await taxRates(db);
-  const home = rates.find((rate) => rate.country === settings.homeCountry);
-  return {
-    catalogue,
-    byId: new Map(catalogue.map((part) => [part.id, part])),
-    settings,
-    rule: { kitFeeMinor: settings.kitFeeMinor, taxBasisPoints: home?.basisPoints ?? 0 },
-  };
+/** The shelves as they stand, fees and home tax. */
+export async function openPackBook(deps: Pick<Deps, 'db' | 'stockView'>): Promise<PackBook> {
+  const [catalogue, { settings, taxBasisPoints }] = await Promise.all([
+    deps.stockView.current(),
+    homeTerms(deps.db),
+  ]);
+  const rule = { kitFeeMinor: settings.kitFeeMinor, taxBasisPoints };
+  return { catalogue, byId: indexOf(catalogue), settings, rule };
+}
+
+const indexes = new WeakMap<PackBook['catalogue'], PackBook['byId']>();
+
+/** Parts by id, made once for each state of the shelves. */
+function indexOf(catalogue: PackBook['catalogue']): PackBook['byId'] {
+  let index = indexes.get(catalogue);
+  if (!index) {
+    index = new Map(catalogue.map((part) => [part.id, part]));
+    indexes.set(catalogue, index);
+  }
+  return index;
 }
 
 /** A pack in full: what the maker sees, and what the house works with. */

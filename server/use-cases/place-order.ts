@@ -44,7 +44,9 @@ export async function placeOrder(
   buyer: Buyer,
   input: Checkout,
 ): Promise<CheckoutResponse> {
-  const placed = await inTransaction(deps.db, (trx) => writeOrder(deps, trx, buyer, input));
+  // Opened before the transaction, which counts the lots anew once it has locked them.
+  const book = await openPackBook(deps);
+  const placed = await inTransaction(deps.db, (trx) => writeOrder(deps, trx, book, buyer, input));
   const token = deps.signer.orderToken(placed.ref);
   try {
     const { sessionId, url } = await deps.payments.openCheckout({
@@ -79,6 +81,7 @@ export async function placeOrder(
 async function writeOrder(
   deps: Deps,
   trx: Database,
+  book: PackBook,
   buyer: Buyer,
   input: Checkout,
 ): Promise<PlacedOrder> {
@@ -97,7 +100,6 @@ async function writeOrder(
     const message = `Choose one of ${methods.map((one) => one.code).join(', ')} for this country.`;
     throw new Refusal('invalid', message, [{ path: 'shippingMethod', message }]);
   }
-  const book = await openPackBook(trx);
   const opened = openLines(book, deps.signer, stored);
   if (opened.length < stored.length) {
     throw new Refusal(

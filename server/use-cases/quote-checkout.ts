@@ -67,12 +67,12 @@ export function priceLines(
 
 /** What the basket would cost, shipped to a country: everything said before anybody pays. */
 export async function quoteCheckout(
-  deps: Pick<Deps, 'db' | 'signer'>,
+  deps: Pick<Deps, 'db' | 'stockView' | 'signer'>,
   keeper: BasketKeeper | null,
   query: { country: string; shippingMethod?: string | undefined },
 ): Promise<Quote> {
   const { rate, rates, methods } = await destination(deps.db, query.country, 'country');
-  const book = await openPackBook(deps.db);
+  const book = await openPackBook(deps);
   const basketId = keeper === null ? null : await findBasket(deps.db, keeper);
   const stored = basketId === null ? [] : await basketLines(deps.db, basketId);
   const priced = priceLines(book, openLines(book, deps.signer, stored), rate.basisPoints);

@@ -28,11 +28,11 @@ const nothing: FoundPacks = { packs: [], considered: 0 };
  * physics can serve is refused; one that the shelves cannot hold gets the nearest packs and advice.
  */
 export async function solveBrief(
-  deps: Pick<Deps, 'db' | 'signer'>,
+  deps: Pick<Deps, 'db' | 'stockView' | 'signer'>,
   request: SolveRequest,
 ): Promise<SolveResponse> {
   const started = performance.now();
-  const book = await openPackBook(deps.db);
+  const book = await openPackBook(deps);
   const inHand = resolveBrief(request, book.catalogue);
   if (inHand.kind === 'impossible') {
     throw new Refusal('impossible-brief', inHand.errors[0]!.message, inHand.errors);
@@ -79,7 +79,7 @@ function shelfFor(book: PackBook, inHand: BriefInHand, accessories: Accessories)
 }
 
 /** Forms the timing tables of both mountings ahead of the first brief. */
-export async function warmSearch(deps: Pick<Deps, 'db' | 'signer'>): Promise<void> {
+export async function warmSearch(deps: Pick<Deps, 'db' | 'stockView' | 'signer'>): Promise<void> {
   for (const mounting of ['through-hole', 'surface-mount'] as const) {
     const brief = { target: { value: 1, unit: 'Hz' as const }, mounting };
     await solveBrief(deps, solveRequestSchema.parse(brief));

@@ -26,7 +26,9 @@ export function openLines(
   signer: Deps['signer'],
   lines: readonly BasketLine[],
 ): OpenBasketLine[] {
-  const left = new Map(book.catalogue.map((part) => [part.id, part.available]));
+  const taken = new Map<number, number>();
+  const left = (partId: number) =>
+    (book.byId.get(partId)?.available ?? 0) - (taken.get(partId) ?? 0);
   const opened: OpenBasketLine[] = [];
   for (const line of lines) {
     const token = openToken(book, signer, line.token);
@@ -39,7 +41,9 @@ export function openLines(
     );
     const problem = shortage(book, demand, left);
     if (problem === null) {
-      for (const { partId, quantity } of demand) left.set(partId, left.get(partId)! - quantity);
+      for (const { partId, quantity } of demand) {
+        taken.set(partId, (taken.get(partId) ?? 0) + quantity);
+      }
     }
     opened.push({ line, assessed: token.assessed, problem });
   }
@@ -49,12 +53,12 @@ export function openLines(
 function shortage(
   book: PackBook,
   demand: readonly PartDemand[],
-  left: ReadonlyMap<number, number>,
+  left: (partId: number) => number,
 ): string | null {
-  const short = demand.find(({ partId, quantity }) => (left.get(partId) ?? 0) < quantity);
+  const short = demand.find(({ partId, quantity }) => left(partId) < quantity);
   if (!short) return null;
   const name = book.byId.get(short.partId)?.facts.name ?? 'a part';
-  const available = Math.max(0, left.get(short.partId) ?? 0);
+  const available = Math.max(0, left(short.partId));
   return (
     `${name}: ${available} left for this line and ${short.quantity} needed. ` +
     'Lower the quantity, or take another pack.'
@@ -63,13 +67,13 @@ function shortage(
 
 /** The keeper's basket at today's prices, with what must be acknowledged before paying. */
 export async function viewBasket(
-  deps: Pick<Deps, 'db' | 'signer'>,
+  deps: Pick<Deps, 'db' | 'stockView' | 'signer'>,
   keeper: BasketKeeper | null,
 ): Promise<Basket> {
   const basketId = keeper === null ? null : await findBasket(deps.db, keeper);
   const stored = basketId === null ? [] : await basketLines(deps.db, basketId);
   if (stored.length === 0) return { lines: [], kits: 0, total: money(0), acknowledgements: [] };
-  const book = await openPackBook(deps.db);
+  const book = await openPackBook(deps);
   const lines = openLines(book, deps.signer, stored).map(({ line, assessed, problem }) => ({
     id: line.id,
     sentence: assessed.inHand.brief.sentence,

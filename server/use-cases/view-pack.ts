@@ -16,10 +16,10 @@ function packIdentifier(token: string): string {
 
 /** A pack in full, worked out from today's shelves and prices. */
 export async function viewPack(
-  deps: Pick<Deps, 'db' | 'signer'>,
+  deps: Pick<Deps, 'db' | 'stockView' | 'signer'>,
   token: string,
 ): Promise<PackPage> {
-  const book = await openPackBook(deps.db);
+  const book = await openPackBook(deps);
   const opened = openToken(book, deps.signer, token);
   if (opened.kind === 'unknown') {
     throw new Refusal('not-found', 'This link leads to no pack. Ask for it again from the brief.');

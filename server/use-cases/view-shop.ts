@@ -4,12 +4,16 @@ import { partsOf } from '../domain/catalogue.ts';
 import { currency } from '../domain/money.ts';
 import { countWords } from '../domain/wording.ts';
 import type { Deps } from '../ports.ts';
-import { loadCatalogue } from '../store/parts.ts';
 import { shopSettings } from '../store/settings.ts';
 
 /** What the forms need to know of the shop before anybody types. */
-export async function viewShop(deps: Pick<Deps, 'db' | 'demo' | 'mailPageUrl'>): Promise<Shop> {
-  const [settings, catalogue] = await Promise.all([shopSettings(deps.db), loadCatalogue(deps.db)]);
+export async function viewShop(
+  deps: Pick<Deps, 'db' | 'stockView' | 'demo' | 'mailPageUrl'>,
+): Promise<Shop> {
+  const [settings, catalogue] = await Promise.all([
+    shopSettings(deps.db),
+    deps.stockView.current(),
+  ]);
   const colours = new Set<string>(partsOf(catalogue, 'led').map((part) => part.facts.colour));
   return {
     name: settings.name,

@@ -53,7 +53,7 @@ engineSpeed();
 
 shop.close();
 bare.close();
-await deps.db.destroy();
+await deps.close();
 process.exitCode = quantile(solved.times, 0.95) < 100 && solved.worst < 1e-3 ? 0 : 1;
 
 async function solveAll(targets: readonly number[]): Promise<{ times: number[]; worst: number }> {

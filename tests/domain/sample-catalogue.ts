@@ -2,11 +2,13 @@ import type { CataloguePart, PartFacts } from '../../server/domain/catalogue.ts'
 
 let count = 0;
 
-/** A catalogue part with everything filled in; 100 on hand unless said. */
+/** A catalogue part with everything filled in; 100 on hand unless said, in one unmeasured lot. */
 export function part(facts: PartFacts, change: Partial<CataloguePart> = {}): CataloguePart {
   count += 1;
   const onHand = change.onHand ?? 100;
   const reserved = change.reserved ?? 0;
+  const available = onHand - reserved;
+  const unmeasured = { measuredMean: null, measuredDeviation: null, measuredCount: null };
   return {
     id: count,
     kind: facts.kind,
@@ -16,10 +18,11 @@ export function part(facts: PartFacts, change: Partial<CataloguePart> = {}): Cat
     priceMinor: 10,
     grams: 0.2,
     facts,
+    lots: available > 0 ? [{ id: count, available, ...unmeasured }] : [],
     ...change,
     onHand,
     reserved,
-    available: onHand - reserved,
+    available,
   };
 }
 

@@ -15,6 +15,7 @@ import { createApp } from '../../server/http/app.ts';
 import { tasks, type JobDeps } from '../../server/jobs/worker.ts';
 import { createMailStandIn, type MailStandIn } from '../../server/mail-stand-in/mail-stand-in.ts';
 import type { Deps } from '../../server/ports.ts';
+import { createStockView } from '../../server/store/stock-view.ts';
 import { createStripeMock, type StripeMock } from '../../server/stripe-mock/stripe-mock.ts';
 import { openTestDatabase } from './database.ts';
 
@@ -78,8 +79,10 @@ export async function openTestShop(settings: { clientDir?: string } = {}): Promi
   const mail = createMailStandIn();
   const { smtpUrl } = await mail.listen();
   const smtp = createSmtpMail(smtpUrl, 'Tockwell <shop@tockwell.example>');
+  const stockView = createStockView(database.url, database.db);
   const deps: JobDeps = {
     db: database.db,
+    stockView,
     clock,
     payments: createStripePayments({ secretKey, webhookSecret, apiUrl }),
     signer: createSigner('token-secret-of-the-tests-of-http'),
@@ -115,6 +118,7 @@ export async function openTestShop(settings: { clientDir?: string } = {}): Promi
       await payments.close();
       await mail.close();
       await closed(server);
+      await stockView.close();
       await database.drop();
     },
   };
