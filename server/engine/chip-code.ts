@@ -44,17 +44,18 @@ export function e96Code(ohms: number): string | null {
 
 /**
  * Ohms of a chip resistor's print: three or four digits, R for the decimal point, zeros for a
- * link, or the three-character E96 code. Null when it is none of these. R is always the decimal
- * point here (68R is 68 Ω), though the E96 code accepts it as a multiplier: see `readE96Code`.
+ * link, or the three-character E96 code. Null when it is none of these, a leading zero included.
+ * R is always the decimal point here (68R is 68 Ω), though the E96 code accepts it as a
+ * multiplier: see `readE96Code`.
  */
 export function readChipCode(code: string): number | null {
-  if (/^0+$/.test(code)) return code.length === 2 ? null : 0;
+  if (/^(?:0|000|0000)$/.test(code)) return 0;
   const powered = /^([1-9]\d{1,2})(\d)$/.exec(code);
   if (powered) return fromDecimal(powered[1] ?? '', Number(powered[2]));
-  if (/^(?=.*\d)\d{0,3}R\d{0,3}$/.test(code) && code.length >= 3 && code.length <= 4) {
+  if (/^(?=.{3,4}$)(?:0|[1-9]\d{0,2})?R\d{0,3}$/.test(code)) {
     return fromDecimal(`0${code.replace('R', '.')}0`, 0);
   }
-  return readE96Code(code);
+  return code.includes('R') ? null : readE96Code(code);
 }
 
 /** Ohms of a three-character E96 code, or null when its number or letter is not in the table. */

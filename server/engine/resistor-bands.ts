@@ -59,8 +59,10 @@ export type BandCode =
  * Colour bands in reading order for a resistance in ohms and a tolerance as a fraction, by IEC
  * 60062:2016: two figures for 5 % and wider, three for 2 % and tighter (and for a wider one that
  * needs three), no tolerance band for 20 %, one black band for a link of 0 Ω. A temperature
- * coefficient in parts per million per kelvin adds a sixth band. Uncodable when the value needs
- * more figures or another multiplier, or no colour stands for the tolerance or the coefficient.
+ * coefficient in parts per million per kelvin adds a sixth band. Uncodable when the value is not
+ * positive and finite, needs more figures or another multiplier, when no colour stands for the
+ * tolerance or the coefficient, or when it needs three figures at 20 %: without a tolerance band
+ * those would be read as two figures with one.
  */
 export function resistorBands(
   ohms: number,
@@ -68,15 +70,20 @@ export function resistorBands(
   partsPerMillionPerKelvin: number | null = null,
 ): BandCode {
   if (ohms === 0) return { kind: 'bands', colours: ['black'] };
+  if (!(ohms > 0 && ohms < Infinity)) return uncodable('Bands say a resistance above zero only.');
   const wide = tolerance > 0.02 && partsPerMillionPerKelvin === null;
-  const figures = (wide ? decimalFigures(ohms, 2) : null) ?? decimalFigures(ohms, 3);
+  const ways = (wide ? [2, 3] : [3]).map((count) => decimalFigures(ohms, count));
+  const figures = ways.find((way) => way && multiplierOf(way.exponent)) ?? ways.at(-1);
   if (!figures) return uncodable('The value has more than three figures, which bands cannot say.');
-  const multiplier = meanings.find((entry) => entry.multiplierExponent === figures.exponent);
+  const multiplier = multiplierOf(figures.exponent);
   if (!multiplier) return uncodable('No colour stands for a multiplier as small or large as this.');
   const digits = [...String(figures.mantissa)].map(digitColour);
   const ending = endingBands(tolerance, partsPerMillionPerKelvin);
   if (ending === null) {
     return uncodable('No colour stands for this tolerance or temperature coefficient.');
+  }
+  if (ending.length === 0 && digits.length > 2) {
+    return uncodable('Without a tolerance band, bands can say two figures only.');
   }
   return { kind: 'bands', colours: [...digits, multiplier.colour, ...ending] };
 }
@@ -85,8 +92,12 @@ function uncodable(reason: string): BandCode {
   return { kind: 'uncodable', reason };
 }
 
+function multiplierOf(exponent: number): ColourMeaning | undefined {
+  return meanings.find((entry) => entry.multiplierExponent === exponent);
+}
+
 function digitColour(digit: string): BandColour {
-  return meanings.find((entry) => entry.multiplierExponent === Number(digit))?.colour ?? 'black';
+  return multiplierOf(Number(digit))?.colour ?? 'black';
 }
 
 function endingBands(tolerance: number, coefficient: number | null): BandColour[] | null {
@@ -109,8 +120,8 @@ export interface BandReading {
 }
 
 /**
- * Reads one to six bands in order, or null when they are no code (a metallic digit, a colour that
- * is no tolerance, too many or too few). Three and four bands have two figures, five and six have
+ * Reads one to six bands in order, or null when they are no code (a metallic or a leading black
+ * digit, a colour that is no tolerance, too many or too few). Three and four bands have two figures, five and six have
  * three.
  */
 export function readResistorBands(colours: readonly BandColour[]): BandReading | null {
@@ -122,7 +133,7 @@ export function readResistorBands(colours: readonly BandColour[]): BandReading |
   const figureCount = colours.length < 5 ? 2 : 3;
   const digits = found.slice(0, figureCount).map((entry) => entry?.multiplierExponent ?? -1);
   const [multiplier, tolerance, coefficient] = found.slice(figureCount);
-  if (!multiplier || digits.some((digit) => digit < 0)) return null;
+  if (!multiplier || digits.some((digit) => digit < 0) || digits[0] === 0) return null;
   const toleranceValue =
     colours.length === 3 ? toleranceWithoutBand : (tolerance?.tolerance ?? null);
   const coefficientValue = coefficient?.partsPerMillionPerKelvin ?? null;

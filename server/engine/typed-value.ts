@@ -23,7 +23,7 @@ const prefixes: Record<string, number> = {
 
 /**
  * Ohms that somebody typed: 4k7, 887k, 4.7 kΩ, 470, 1,5M, 0R47, 1e5; null when it cannot be
- * understood or is ambiguous (4m7: milli or mega). A comma counts as the decimal point.
+ * understood, is ambiguous (4m7: milli or mega) or beyond what a number can hold. A comma counts as the decimal point.
  */
 export function readTypedOhms(text: string): number | null {
   const trimmed = plainText(text);
@@ -35,8 +35,8 @@ export function readTypedOhms(text: string): number | null {
 
 /**
  * Farads that somebody typed or a meter sent: 0.82 uF, 818n2, 100 nF, 4p7, 8.2e-7 F; null when it
- * cannot be understood, or is a plain number without a unit (104 might be a printed code). A
- * number in exponent form needs no unit. A comma counts as the decimal point.
+ * cannot be understood, is beyond what a number can hold, or is a plain number without a unit (104 might be
+ * a printed code). A number in exponent form needs no unit. A comma counts as the decimal point.
  */
 export function readTypedFarads(text: string): number | null {
   const trimmed = plainText(text);
@@ -56,5 +56,6 @@ function plainText(text: string): string {
 function valueOf(digits = '', power = '0', prefix = ''): number | null {
   const plain = `0${digits.replace(',', '.')}`.replace(/\.$/, '');
   const value = fromDecimal(plain, Number(power) + (prefixes[prefix] ?? 0));
-  return Number.isFinite(value) ? value : null;
+  const isLost = value === 0 && /[1-9]/.test(plain);
+  return Number.isFinite(value) && !isLost ? value : null;
 }

@@ -1,3 +1,4 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import {
   eSeriesMantissas,
@@ -46,7 +47,28 @@ describe('eSeriesMantissas', () => {
       if (!isSeries(series)) throw new Error(`${series} is no series.`);
       expect(isPreferred(Number(row('standard_value')), series)).toBe(true);
       expect(isPreferred(Number(row('rounded_2sf')), series)).toBe(false);
+      const mantissas = eSeriesMantissas(series);
+      const scale = series === 'E192' ? 100 : 10;
+      const index = Number(row('index_k'));
+      expect(mantissas[index]).toBe(Math.round(Number(row('standard_value')) * scale));
+      const exact = 10 ** (index / mantissas.length);
+      expect(exact).toBeCloseTo(Number(row('10^(k/n)')), 4);
     }
+  });
+
+  it('follows the rounded formula everywhere else', () => {
+    const apart = allSeries.flatMap((series) => {
+      const mantissas = eSeriesMantissas(series);
+      const scale = mantissas.length > 24 ? 100 : 10;
+      return mantissas.flatMap((mantissa, index) => {
+        const rounded = Math.round(scale * 10 ** (index / mantissas.length));
+        return rounded === mantissa ? [] : [`${series} ${index}`];
+      });
+    });
+    const listed = referenceRows('e24_vs_formula.csv').map(
+      (row) => `${row('series')} ${row('index_k')}`,
+    );
+    expect(apart).toEqual(listed);
   });
 
   it.each(invariants)('has the count, sum, ends and steps of $series', ({ series, row }) => {
@@ -118,6 +140,90 @@ describe('isPreferred', () => {
   it('knows that the two families do not nest', () => {
     const foreign = eSeriesMantissas('E24').filter((value) => !isPreferred(value, 'E192'));
     expect(foreign).toEqual([22, 27, 30, 33, 36, 39, 43, 51, 56, 62, 68, 82, 91]);
-    expect(isPreferred(-47, 'E24')).toBe(false);
+    expect(eSeriesMantissas('E24').filter((value) => !isPreferred(value, 'E96'))).toHaveLength(18);
+    expect(eSeriesMantissas('E24').filter((value) => isPreferred(value, 'E48'))).toEqual([
+      10, 11, 75,
+    ]);
+  });
+
+  it('is false for what has no decade', () => {
+    expect([-47, 0, NaN, Infinity].map((value) => isPreferred(value, 'E24'))).toEqual([
+      false,
+      false,
+      false,
+      false,
+    ]);
+  });
+});
+
+// No package on the npm registry holds these series; the table and the formula judge them above.
+describe('every series, in every decade', () => {
+  const anySeries = fc.constantFrom(...allSeries);
+  const anyDecade = fc.integer({ min: -14, max: 12 });
+  const anyMember = fc.tuple(anySeries, anyDecade, fc.nat(191)).map(([series, decade, place]) => {
+    const mantissas = eSeriesMantissas(series);
+    const mantissa = mantissas[place % mantissas.length] ?? 0;
+    return { series, value: Number(`${mantissa}e${decade - (mantissas.length > 24 ? 2 : 1)}`) };
+  });
+  const anyValue = fc
+    .tuple(fc.double({ min: 1, max: 9.999, noNaN: true }), anyDecade)
+    .map(([mantissa, decade]) => mantissa * 10 ** decade);
+
+  it('knows its own values, and gives them back as the nearest and as the least', () => {
+    fc.assert(
+      fc.property(anyMember, ({ series, value }) => {
+        expect(isPreferred(value, series)).toBe(true);
+        expect(nearestPreferred(value, series)).toBe(value);
+        expect(nearestPreferred(value, series, 'difference')).toBe(value);
+        expect(preferredAtLeast(value, series)).toBe(value);
+        expect(preferredBetween(value, value, series)).toEqual([value]);
+      }),
+      { numRuns: 1000 },
+    );
+  });
+
+  it('knows no value a millionth beside its own', () => {
+    fc.assert(
+      fc.property(anyMember, fc.constantFrom(1 - 1e-6, 1 + 1e-6), ({ series, value }, factor) => {
+        expect(isPreferred(value * factor, series)).toBe(false);
+        expect(nearestPreferred(value * factor, series)).toBe(value);
+      }),
+    );
+  });
+
+  it('takes as nearest a value of its own that no other undercuts', () => {
+    fc.assert(
+      fc.property(anySeries, anyValue, (series, value) => {
+        const nearest = nearestPreferred(value, series, 'difference');
+        expect(isPreferred(nearest, series)).toBe(true);
+        const distance = Math.abs(nearest - value) * (1 - 1e-3);
+        fc.pre(distance > 1e-5 * value);
+        expect(preferredBetween(value - distance, value + distance, series)).toEqual([]);
+      }),
+      { numRuns: 1000 },
+    );
+  });
+
+  it('takes as least a value of its own with none between', () => {
+    fc.assert(
+      fc.property(anySeries, anyValue, (series, value) => {
+        const least = preferredAtLeast(value, series);
+        expect(isPreferred(least, series)).toBe(true);
+        expect(least).toBeGreaterThanOrEqual(value * (1 - 1e-9));
+        expect(preferredBetween(value, least, series)).toEqual([least]);
+      }),
+      { numRuns: 1000 },
+    );
+  });
+
+  it('is listed whole, in order and without repeats between any two ends', () => {
+    fc.assert(
+      fc.property(anyMember, fc.integer({ min: 1, max: 4 }), ({ series, value }, decades) => {
+        const listed = preferredBetween(value, value * 10 ** decades, series);
+        expect(listed).toHaveLength(decades * eSeriesMantissas(series).length + 1);
+        expect(listed).toEqual([...new Set(listed)].sort((a, b) => a - b));
+      }),
+      { numRuns: 200 },
+    );
   });
 });

@@ -1,4 +1,7 @@
+import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { preferredBetween } from '../../server/engine/e-series.ts';
+import { faradCode, ohmCode } from '../../server/engine/letter-code.ts';
 import {
   digitsForUncertainty,
   formatFarads,
@@ -28,7 +31,7 @@ describe('readTypedOhms', () => {
     expect(readTypedOhms(text)).toBe(ohms);
   });
 
-  it.each(['', 'k', '4m7', '10m', '47u', '4k7k7', '-5', '1.2.3', '10 F', '1e999', 'abc'])(
+  it.each(['', 'k', '4m7', '10m', '47u', '4k7k7', '-5', '1.2.3', '10 F', '1e999', '1e-999', 'abc'])(
     'does not guess at "%s"',
     (text) => {
       expect(readTypedOhms(text)).toBeNull();
@@ -53,12 +56,53 @@ describe('readTypedFarads', () => {
     expect(readTypedFarads(text)).toBe(farads);
   });
 
-  it.each(['', '104', '0.82', '10N', '4k7', '-1n', '10 nΩ', '1e999F'])(
+  it.each(['', '104', '0.82', '10N', '4k7', '-1n', '10 nΩ', '1e999F', '1e-330F', '4p7C'])(
     'does not guess at "%s"',
     (text) => {
       expect(readTypedFarads(text)).toBeNull();
     },
   );
+});
+
+describe('typed values and formats', () => {
+  const ohms = ['E24', 'E192'] as const;
+  const allOhms = ohms.flatMap((series) => preferredBetween(1e-3, 9.9e11, series));
+  const allFarads = ohms.flatMap((series) => preferredBetween(1e-12, 9.9, series));
+
+  it('read back every preferred value as the shop itself writes it', () => {
+    expect(allOhms.filter((value) => readTypedOhms(formatOhms(value)) !== value)).toEqual([]);
+    expect(allOhms.filter((value) => readTypedOhms(ohmCode(value) ?? '') !== value)).toEqual([]);
+    expect(allFarads.filter((value) => readTypedFarads(formatFarads(value)) !== value)).toEqual([]);
+    expect(allFarads.filter((value) => readTypedFarads(faradCode(value) ?? '') !== value)).toEqual(
+      [],
+    );
+  });
+
+  it('read a decimal comma as a point', () => {
+    const withComma = (value: number) => formatOhms(value).replace('.', ',');
+    expect(allOhms.filter((value) => readTypedOhms(withComma(value)) !== value)).toEqual([]);
+  });
+
+  it('read any text as nothing or as a number that is not negative', () => {
+    const signs = fc.constantFrom(...'0123456789.,eE+- kKMGmunpµRrΩFohfmeg');
+    const anyText = fc.oneof(
+      fc.string({ unit: signs, maxLength: 9 }),
+      fc.string({ unit: 'grapheme', maxLength: 6 }),
+      fc.string({ unit: fc.constantFrom(...'0123456789kRp'), minLength: 300, maxLength: 400 }),
+    );
+    fc.assert(
+      fc.property(anyText, (text) => {
+        for (const value of [readTypedOhms(text), readTypedFarads(text)]) {
+          if (value === null) continue;
+          expect(Number.isFinite(value)).toBe(true);
+          expect(value).toBeGreaterThanOrEqual(0);
+          if (value === 0) expect(text.replace(/e[+-]?\d+/, '')).not.toMatch(/[1-9]/);
+        }
+      }),
+      { numRuns: 5000 },
+    );
+    expect(readTypedOhms(`${'9'.repeat(400)}k`)).toBeNull();
+  });
 });
 
 describe('formatSi', () => {
