@@ -99,30 +99,46 @@ export function createStockView(
 }
 
 /**
- * The parts as newly read in place of those before, for the ids read (undefined: all). Keeps each
- * object that says the same as before, and the array itself when all do. Both ascend by id.
+ * The parts with those of the ids as newly read, and without those no longer there (ids undefined:
+ * all were read). Keeps each object that says the same as before, and the array itself when all do.
  */
 function renewed(before: Catalogue, ids: readonly number[] | undefined, fresh: Catalogue) {
-  const wasRead = ids && new Set(ids);
-  const after: CataloguePart[] = [];
-  let changed = false;
-  let k = 0;
-  const takeBelow = (id: number) => {
-    for (; k < fresh.length && fresh[k]!.id < id; k += 1) {
-      after.push(Object.freeze(fresh[k]!));
-      changed = true;
-    }
-  };
-  for (const part of before) {
-    takeBelow(part.id);
-    if (fresh[k]?.id === part.id) {
-      const same = isDeepStrictEqual(part, fresh[k]);
-      after.push(same ? part : Object.freeze(fresh[k]!));
-      changed ||= !same;
-      k += 1;
-    } else if (wasRead === undefined || wasRead.has(part.id)) changed = true;
-    else after.push(part);
+  const kept = fresh.map((part) => sameAs(before[positionOf(before, part.id)], part));
+  if (ids === undefined) {
+    const same = kept.length === before.length && kept.every((part, k) => part === before[k]);
+    return same ? before : Object.freeze(kept);
   }
-  takeBelow(Infinity);
-  return changed ? Object.freeze(after) : before;
+  const read = new Map(kept.map((part) => [part.id, part]));
+  const changed = ids.filter((id) => partWithId(before, id) !== read.get(id));
+  if (changed.length === 0) return before;
+  const after = before.slice();
+  for (const id of changed) {
+    const part = read.get(id);
+    const at = positionOf(after, id);
+    const stands = after[at]?.id === id;
+    if (part && stands) after[at] = part;
+    else after.splice(at, stands ? 1 : 0, ...(part ? [part] : []));
+  }
+  return Object.freeze(after);
+}
+
+function sameAs(before: CataloguePart | undefined, part: CataloguePart): CataloguePart {
+  return isDeepStrictEqual(before, part) ? before! : Object.freeze(part);
+}
+
+function partWithId(parts: Catalogue, id: number): CataloguePart | undefined {
+  const part = parts[positionOf(parts, id)];
+  return part?.id === id ? part : undefined;
+}
+
+/** Where the first part stands whose id is not below; parts ascend by id. */
+function positionOf(parts: Catalogue, id: number): number {
+  let from = 0;
+  let to = parts.length;
+  while (from < to) {
+    const middle = (from + to) >> 1;
+    if (parts[middle]!.id < id) from = middle + 1;
+    else to = middle;
+  }
+  return from;
 }
