@@ -9,6 +9,7 @@ import { analyseCycle } from '../../server/engine/cycle.ts';
 import { periodAt, prepareSingle } from '../../server/engine/prepared-single.ts';
 import { createApp } from '../../server/http/app.ts';
 import { warmSearch } from '../../server/use-cases/solve-brief.ts';
+import { httpThroughput } from './http-throughput.ts';
 
 /** Prints speed as ratios to a bare Express + one-row SELECT of the same run: machines differ, ratios less. */
 
@@ -49,6 +50,7 @@ console.log(
 );
 console.log(`  p95 ${quantile(solved.times, 0.95).toFixed(1)} ms, wanted under 100 ms`);
 console.log(`  worst nominal error ${(solved.worst * 100).toExponential(2)} %, wanted under 0.1 %`);
+await httpThroughput(deps);
 engineSpeed();
 
 shop.close();
