@@ -147,6 +147,12 @@ export async function findParts(db: Database, ids: readonly number[]): Promise<C
   return rows.map(toPart);
 }
 
+/** The named parts as listed: a page is chosen first, so that lots are gathered for its parts alone. */
+async function partsInOrder(db: Database, ids: readonly number[]): Promise<CataloguePart[]> {
+  const found = new Map((await findParts(db, ids)).map((part) => [part.id, part]));
+  return ids.flatMap((id) => found.get(id) ?? []);
+}
+
 /** One part by id, or null. */
 export async function findPart(db: Database, id: number): Promise<CataloguePart | null> {
   const [part] = await findParts(db, [id]);
@@ -172,12 +178,13 @@ export async function listPublicParts(
       if (filter.mounting) query.where('parts.mounting', filter.mounting);
     });
   const [{ total }] = (await matching.clone().count({ total: '*' })) as [{ total: number }];
-  const rows: PartRow[] = await partsWithStock(db)
-    .whereIn('parts.id', matching.clone().select('parts.id'))
+  const ids: number[] = await matching
+    .clone()
     .orderBy('parts.id')
     .limit(filter.pageSize)
-    .offset((filter.page - 1) * filter.pageSize);
-  return { parts: rows.map(toPart), total };
+    .offset((filter.page - 1) * filter.pageSize)
+    .pluck('parts.id');
+  return { parts: await partsInOrder(db, ids), total };
 }
 
 /** A part runs low below this many unreserved pieces. */
@@ -219,13 +226,13 @@ export async function listDeskParts(
   });
   const [{ total }] = (await matching.clone().count({ total: '*' })) as [{ total: number }];
   const direction = filter.direction === 'up' ? 'asc' : 'desc';
-  const rows: PartRow[] = await matching
+  const ids: number[] = await matching
     .clone()
-    .select('*')
     .orderByRaw(`${sortColumns[filter.sort]} ${direction} nulls last, id asc`)
     .limit(filter.pageSize)
-    .offset((filter.page - 1) * filter.pageSize);
-  return { parts: rows.map(toPart), total };
+    .offset((filter.page - 1) * filter.pageSize)
+    .pluck('id');
+  return { parts: await partsInOrder(db, ids), total };
 }
 
 function matchSearch(query: ReturnType<Database['from']>, db: Database, search: string): void {
