@@ -354,7 +354,7 @@ CREATE TABLE public.packs (
     strip jsonb NOT NULL,
     circuit jsonb NOT NULL,
     created_at timestamp with time zone DEFAULT now() NOT NULL,
-    CONSTRAINT packs_topology_check CHECK ((topology = ANY (ARRAY['equal-thresholds'::text, 'shifted-thresholds'::text])))
+    CONSTRAINT packs_topology_check CHECK ((topology = ANY (ARRAY['equal-thresholds'::text, 'shifted-thresholds'::text, 'steered'::text])))
 );
 
 CREATE TABLE public.parts (

@@ -54,7 +54,8 @@ const resistorFamilies: ResistorFamily[] = [
     bins: 'C',
     mounting: 'through-hole',
     tolerance: 0.05,
-    ppm: 200,
+    // Carbon film falls as it warms; the figure from memory.
+    ppm: -350,
     watts: 0.25,
     cost: 1,
     price: 4,
@@ -657,29 +658,55 @@ function power(): DemoPart[] {
   );
 }
 
+/** Whole track of trimmers, as they are usually made: 1, 2 and 5 in every decade. */
+const trimmerOhms = [1e3, 2e3, 5e3, 10e3, 20e3, 50e3, 100e3, 200e3, 500e3, 1e6, 2e6];
+
+function trimmers(): DemoPart[] {
+  return (['through-hole', 'surface-mount'] as const).flatMap((mounting, m) =>
+    trimmerOhms.map((ohms, k) => ({
+      row: {
+        sku: `TW-V${m === 0 ? 'T' : 'S'}-${rkm(ohms, ohmUnits)}`,
+        kind: 'trimmer',
+        name: `Trimmer ${formatOhms(ohms)} ${percent(m === 0 ? 0.1 : 0.2)}`,
+        mounting,
+        cost_minor: m === 0 ? 62 : 48,
+        price_minor: m === 0 ? 140 : 115,
+        grams: m === 0 ? 1.1 : 0.2,
+        ohms,
+        tolerance: m === 0 ? 0.1 : 0.2,
+        temperature_coefficient_per_kelvin: 100 * perMillion,
+      },
+      bin: `U-${String(1 + k + 11 * m).padStart(2, '0')}`,
+      count: 70 + ((k * 13 + 31 * m) % 40),
+    })),
+  );
+}
+
+const diodeModels = [
+  ['D1', 'silicon', 2.5e-9, 1.75, 1.11, 3],
+  ['D2', 'Schottky', 1.5e-7, 1.05, 0.69, 2],
+] as const;
+
 function diodes(): DemoPart[] {
-  return (
-    [
-      ['D1', 2.5e-9, 1.75, 1.11, 3],
-      ['D2', 1.5e-7, 1.05, 0.69, 2],
-    ] as const
-  ).map(([code, saturation, emission, gap, exponent], k) => ({
-    row: {
-      sku: `TW-${code}`,
-      kind: 'diode',
-      name: k === 0 ? 'Diode, silicon signal' : 'Diode, Schottky signal',
-      mounting: 'through-hole',
-      cost_minor: 3,
-      price_minor: 9,
-      grams: 0.2,
-      saturation_amps: saturation,
-      emission_coefficient: emission,
-      energy_gap_electron_volts: gap,
-      saturation_temperature_exponent: exponent,
-    },
-    bin: `R-1${1 + k}`,
-    count: 380,
-  }));
+  return (['through-hole', 'surface-mount'] as const).flatMap((mounting, m) =>
+    diodeModels.map(([code, words, saturation, emission, gap, exponent], k) => ({
+      row: {
+        sku: `TW-${code}${m === 0 ? '' : 'S'}`,
+        kind: 'diode',
+        name: `Diode, ${words} signal`,
+        mounting,
+        cost_minor: 3,
+        price_minor: 9,
+        grams: m === 0 ? 0.2 : 0.01,
+        saturation_amps: saturation,
+        emission_coefficient: emission,
+        energy_gap_electron_volts: gap,
+        saturation_temperature_exponent: exponent,
+      },
+      bin: `R-1${1 + k + 2 * m}`,
+      count: 380,
+    })),
+  );
 }
 
 /** Every part of the demonstration shop with its bin and count. Invented; no real part is meant. */
@@ -692,5 +719,6 @@ export function demoCatalogue(): DemoPart[] {
     ...boards(),
     ...power(),
     ...diodes(),
+    ...trimmers(),
   ];
 }

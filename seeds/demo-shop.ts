@@ -30,6 +30,7 @@ const places: Record<string, string> = {
   R: 'Lamp cabinet',
   S: 'Back room, power',
   T: 'Loft, second lots',
+  U: 'Window bench, trimmers',
 };
 
 /**
@@ -108,6 +109,26 @@ async function insertAll(
   return inserted.map((row) => Number(row.id));
 }
 
+const sampleCount = 30;
+
+/**
+ * What a sample of a capacitor lot measured, invented and always the same: a mean up to half the
+ * tolerance off, pieces scattered by about a ninth of it. Ceramics for decoupling are not sampled.
+ */
+function sampleOf({ row }: DemoPart, k: number) {
+  if (row.kind !== 'capacitor' || row.dielectric === 'X7R') {
+    return { measured_mean: null, measured_deviation: null, measured_count: null };
+  }
+  const [farads, tolerance] = [Number(row.farads), Number(row.tolerance)];
+  const off = ((k * 37) % 101) / 100 - 0.5;
+  const scatter = 0.08 + ((k * 53) % 61) / 1000;
+  return {
+    measured_mean: Number((farads * (1 + off * tolerance)).toPrecision(5)),
+    measured_deviation: Number((farads * tolerance * scatter).toPrecision(3)),
+    measured_count: sampleCount,
+  };
+}
+
 /** One lot for most parts; every ninth has a second, newer one in the loft. */
 function lotsFor(part: DemoPart, k: number, partId: number, bins: ReadonlyMap<string, number>) {
   const month = String(1 + (k % 9)).padStart(2, '0');
@@ -117,13 +138,20 @@ function lotsFor(part: DemoPart, k: number, partId: number, bins: ReadonlyMap<st
       bin_id: bins.get(part.bin),
       code: `26${month}-A`,
       received_on: `2026-${month}-12`,
+      ...sampleOf(part, k),
     },
     count: part.count,
   };
   if (k % 9 !== 4 || part.count === 0) return [first];
   const bin = `T-${String(1 + (k % 24)).padStart(2, '0')}`;
   const second = {
-    row: { part_id: partId, bin_id: bins.get(bin), code: '2610-B', received_on: '2026-10-05' },
+    row: {
+      part_id: partId,
+      bin_id: bins.get(bin),
+      code: '2610-B',
+      received_on: '2026-10-05',
+      ...sampleOf(part, k + 400),
+    },
     count: Math.ceil(part.count / 3),
   };
   return [{ ...first, count: part.count - second.count + Math.min(second.count, 3) }, second];

@@ -45,6 +45,9 @@ const shop = {
   email: 'shop@tockwell.example',
   homeCountry: 'IE',
   kitFeeMinor: 145,
+  careFeesMinor: { 'as-stocked': 0, 'lot-checked': 60, 'bench-tuned': 240, 'trimmer-fitted': 0 },
+  // A good handheld meter at 1 kHz; from memory.
+  meterUncertainty: 0.0025,
   carriers: ['Quay Post', 'Harbour Courier'],
 };
 

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { resolvedBriefSchema } from './brief.ts';
+import { careLevels, resolvedBriefSchema } from './brief.ts';
 import { moneySchema, mountingSchema } from './common.ts';
 import { drawingSchema, pulseStripSchema } from './drawing.ts';
 import { partKindSchema } from './parts.ts';
@@ -20,6 +20,13 @@ export const packRoles = [
   'PCB',
   'BAT',
   'BH',
+  'R5',
+  'R6',
+  'RC',
+  'RD',
+  'DC',
+  'DD',
+  'RV',
 ] as const;
 export const packRoleSchema = z.enum(packRoles);
 export type PackRole = z.infer<typeof packRoleSchema>;
@@ -93,20 +100,31 @@ export const promiseSchema = z.object({
 });
 export type PackPromise = z.infer<typeof promiseSchema>;
 
+export const topologies = ['equal-thresholds', 'shifted-thresholds', 'steered'] as const;
+export type Topology = (typeof topologies)[number];
+
 export const wins = ['best-value', 'closest', 'steadiest'] as const;
 
 export const packSchema = z.object({
   token: z.string(),
-  topology: z.enum(['equal-thresholds', 'shifted-thresholds']),
-  /** How R4A and R4B are joined; null with a single R4. */
+  topology: z.enum(topologies),
+  /** Why the pack is built this way, in a sentence or two. */
+  why: z.string(),
+  careLevel: z.enum(careLevels),
+  /** How R4A and R4B are joined; null with a single R4 and with steered timing. */
   join: z.enum(['series', 'parallel']).nullable(),
-  timingOhms: z.number(),
+  /** The whole timing resistance; with a trimmer, what it is set to; null with steered timing. */
+  timingOhms: z.number().nullable(),
+  /** True where a spare section of the comparator drives the LED. */
+  buffered: z.boolean(),
   parts: z.array(packPartSchema),
   promise: promiseSchema,
   price: z.object({ unit: moneySchema, total: moneySchema }),
   makeable: z.int(),
   cautions: z.array(cautionSchema),
   strip: pulseStripSchema,
+  /** Where the pack comes near a limit of the trade, and what that means. */
+  notes: z.array(z.object({ code: z.string(), text: z.string() })),
   /** The ranks for which this pack is the first of all. */
   wins: z.array(z.enum(wins)),
 });
@@ -117,6 +135,8 @@ export const adviceSchema = z.object({
   code: z.string(),
   text: z.string(),
   change: z.record(z.string(), z.unknown()).nullable(),
+  /** The worse end of the steadiest pack's guaranteed band with that change, as a fraction; null where it is not about that. */
+  worseEnd: z.number().nullable(),
 });
 export type Advice = z.infer<typeof adviceSchema>;
 
@@ -148,6 +168,13 @@ export const packPageSchema = z.object({
   /** What causes the spread: half-width of each cause alone, as a fraction of the rate, largest first. */
   causes: z.array(z.object({ role: z.string(), label: z.string(), fraction: z.number() })),
   causesText: z.string(),
+  /** Average current by where it goes, largest first, and how long the cells last; null without cells. */
+  supply: z.object({
+    causes: z.array(z.object({ code: z.string(), label: z.string(), amps: z.number() })),
+    totalAmps: z.number(),
+    batteryHours: z.number().nullable(),
+    text: z.string(),
+  }),
   /** What the price is made of; adds up to the unit price. */
   priceLines: z.array(z.object({ label: z.string(), amount: moneySchema })),
   /** Maker's address and identifier as product-safety law wants them on the offer. */

@@ -1,11 +1,12 @@
-import type { ResolvedBrief } from '../contracts/brief.ts';
+import type { CareLevel, ResolvedBrief } from '../contracts/brief.ts';
 import type { Advice } from '../contracts/packs.ts';
+import { valueYield } from '../engine/search/best-value.ts';
 import type { FoundPacks, RankedPack } from '../engine/search/find-packs.ts';
 import { worseEnd } from '../engine/search/guaranteed-band.ts';
 import { limits } from '../engine/search/rules.ts';
-import { percent, plusMinus, rateWords, targetHertz } from './wording.ts';
+import { celsiusRange, percent, plusMinus, rateWords, targetHertz } from './wording.ts';
 
-/** Solves the brief again with a change; the closest pack, or null. */
+/** Solves the brief again with a change; the steadiest pack, or null. */
 export type Retry = (change: Partial<ResolvedBrief>) => RankedPack | null;
 
 /**
@@ -18,21 +19,12 @@ export function adviseOn(
   missing: string | null,
   retry: Retry,
 ): Advice[] {
-  if (brief.careLevel !== 'as-stocked') {
-    return [
-      {
-        code: 'care-level',
-        text: 'The bench sells packs as stocked today; choose that care level.',
-        change: { careLevel: 'as-stocked' },
-      },
-    ];
-  }
   const advice: Advice[] = [];
   const nearest = [...found.packs].sort((a, b) => a.distance - b.distance)[0];
   if (nearest === undefined) advice.push(...adviseOnNone(brief, missing, retry));
   else if (!isNear(nearest)) advice.push(adviseOnRate(brief, nearest));
   else if (!found.packs.some((pack) => pack.wins.includes('best-value'))) {
-    advice.push(...adviseOnWide(brief, found.packs, nearest));
+    advice.push(...adviseOnWide(brief, found.packs, nearest, retry));
   }
   return advice;
 }
@@ -54,6 +46,7 @@ function adviseOnRate(brief: ResolvedBrief, nearest: RankedPack): Advice {
     code: 'rate',
     text: `The ${end} the shelves can make is ${words.rate} ${words.unit}; ask for that.`,
     change: { target: { value: Number(value.toPrecision(3)), unit } },
+    worseEnd: null,
   };
 }
 
@@ -71,20 +64,23 @@ function adviseOnCurrent(brief: ResolvedBrief, retry: Retry): Advice | null {
       code: 'current',
       text: `No comparator on the shelf drives the LED that hard without bending the beat; ${milliamps} works.`,
       change: { load: { ...load, amps } },
+      worseEnd: null,
     };
   }
   return null;
 }
 
 function adviseOnNone(brief: ResolvedBrief, missing: string | null, retry: Retry): Advice[] {
-  const advice: Advice[] = [];
-  if (missing !== null) advice.push({ code: 'missing-part', text: missing, change: null });
+  const advice: Advice[] = adviseOnCare(brief, retry);
+  if (missing !== null)
+    advice.push({ code: 'missing-part', text: missing, change: null, worseEnd: null });
   if (brief.quantity > 1 && retry({ quantity: 1 }) !== null) {
     const most = largestQuantity(brief.quantity, retry);
     advice.push({
       code: 'quantity',
       text: `The shelves hold this brief ${most} ${most === 1 ? 'time' : 'times'} today; lower the quantity to ${most}.`,
       change: { quantity: most },
+      worseEnd: null,
     });
   }
   if (brief.duty < limits.minDuty || brief.duty > limits.maxDuty) {
@@ -93,6 +89,7 @@ function adviseOnNone(brief: ResolvedBrief, missing: string | null, retry: Retry
       code: 'duty',
       text: `These kits are lit for ${percent(limits.minDuty)} to ${percent(limits.maxDuty)} of each beat; take ${percent(nearest)}.`,
       change: { duty: nearest },
+      worseEnd: null,
     });
   }
   const mounting = brief.mounting === 'through-hole' ? 'surface-mount' : 'through-hole';
@@ -102,6 +99,7 @@ function adviseOnNone(brief: ResolvedBrief, missing: string | null, retry: Retry
       code: 'mounting',
       text: `With ${mounting} parts the shelves come within ${percent(Math.expm1(other.distance))}.`,
       change: { mounting },
+      worseEnd: worseEnd(other.guaranteed, brief.targetHz),
     });
   }
   const gentler = adviseOnCurrent(brief, retry);
@@ -111,6 +109,7 @@ function adviseOnNone(brief: ResolvedBrief, missing: string | null, retry: Retry
       code: 'load',
       text: 'No comparator on the shelf drives this LED at this rate and supply; as a logic clock it can be made.',
       change: { load: { kind: 'logic' } },
+      worseEnd: null,
     });
   }
   if (advice.length === 0) {
@@ -118,10 +117,33 @@ function adviseOnNone(brief: ResolvedBrief, missing: string | null, retry: Retry
       code: 'out-of-reach',
       text: 'No comparator on the shelf runs from this supply at this rate. Try a supply between 2 and 16\u202fV and a rate under 500\u202fkHz.',
       change: null,
+      worseEnd: null,
     });
   }
   return advice;
 }
+
+/** A care level that the shelves cannot give, where as stocked there is a pack. */
+function adviseOnCare(brief: ResolvedBrief, retry: Retry): Advice[] {
+  if (brief.careLevel === 'as-stocked') return [];
+  const pack = retry({ careLevel: 'as-stocked' });
+  if (pack === null) return [];
+  const end = worseEnd(pack.guaranteed, brief.targetHz);
+  return [
+    {
+      code: 'care-level',
+      text: `${whyNoCare[brief.careLevel]} As stocked, every kit stays within ${plusMinus(end)}.`,
+      change: { careLevel: 'as-stocked' },
+      worseEnd: end,
+    },
+  ];
+}
+
+const whyNoCare: Record<Exclude<CareLevel, 'as-stocked'>, string> = {
+  'lot-checked': 'No measured lot on the shelf serves this brief.',
+  'bench-tuned': 'The shelf’s resistors do not cover all that a capacitor for this brief may need.',
+  'trimmer-fitted': 'No trimmer on the shelf reaches this rate with every kit.',
+};
 
 /** The largest quantity the shelves hold, by halving; 1 is known to work. */
 function largestQuantity(asked: number, retry: Retry): number {
@@ -135,15 +157,79 @@ function largestQuantity(asked: number, retry: Retry): number {
   return works;
 }
 
+/** Care levels from the least to the most that the shop does to a pack. */
+const careWords: Partial<Record<CareLevel, string>> = {
+  'lot-checked': 'Lot-checked',
+  'bench-tuned': 'Bench-tuned',
+  'trimmer-fitted': 'With a trimmer fitted',
+};
+/** A change that narrows the band by less than this is no help. */
+const worthwhile = 0.9;
+
+/**
+ * For a brief whose band no pack holds: what a stronger care level, the other mounting, a narrower
+ * ambient range, a smaller quantity and a wider band would each do, worked out by solving again.
+ */
 function adviseOnWide(
   brief: ResolvedBrief,
   packs: readonly RankedPack[],
   nearest: RankedPack,
+  retry: Retry,
 ): Advice[] {
   const steadiest = packs.find((pack) => pack.wins.includes('steadiest'));
   if (!steadiest) return [];
-  const end = worseEnd(steadiest.guaranteed, brief.targetHz);
   if (nearest.distance > Math.log1p(brief.band)) return [adviseOnRate(brief, nearest)];
+  const now = worseEnd(steadiest.guaranteed, brief.targetHz);
+  const consider = (code: string, what: string, change: Partial<ResolvedBrief>): Advice[] => {
+    const pack = retry(change);
+    if (pack === null || !(pack.guaranteed.minHz > 0)) return [];
+    const end = worseEnd(pack.guaranteed, brief.targetHz);
+    const holds = pack.yieldWithinBand >= valueYield;
+    if (!holds && end > worthwhile * now) return [];
+    const kits = holds ? `, and ${shareWords(pack)} of kits hold ${plusMinus(brief.band)}` : '';
+    const text = `${what}, every kit stays within ${plusMinus(end)}${kits}; now it is ${plusMinus(now)}.`;
+    return [{ code, text, change, worseEnd: end }];
+  };
+  const mounting = brief.mounting === 'through-hole' ? 'surface-mount' : 'through-hole';
+  return [
+    ...strongerCare(brief.careLevel).flatMap((careLevel) =>
+      consider('care-level', careWords[careLevel]!, { careLevel }),
+    ),
+    ...consider('mounting', `With ${mounting} parts`, { mounting }),
+    ...adviseOnAmbient(brief, consider),
+    ...(brief.quantity > 1 ? consider('quantity', 'For a single kit', { quantity: 1 }) : []),
+    ...adviseOnBand(now),
+  ];
+}
+
+const careOrder: readonly CareLevel[] = [
+  'as-stocked',
+  'lot-checked',
+  'bench-tuned',
+  'trimmer-fitted',
+];
+
+function strongerCare(careLevel: CareLevel): CareLevel[] {
+  return careOrder.slice(careOrder.indexOf(careLevel) + 1);
+}
+
+const roomCelsius = { minCelsius: 15, maxCelsius: 30 };
+
+function adviseOnAmbient(
+  { ambient }: ResolvedBrief,
+  consider: (code: string, what: string, change: Partial<ResolvedBrief>) => Advice[],
+): Advice[] {
+  const narrower = {
+    minCelsius: Math.max(ambient.minCelsius, roomCelsius.minCelsius),
+    maxCelsius: Math.min(ambient.maxCelsius, roomCelsius.maxCelsius),
+  };
+  const width = narrower.maxCelsius - narrower.minCelsius;
+  if (width <= 0 || width >= ambient.maxCelsius - ambient.minCelsius) return [];
+  const words = celsiusRange(narrower.minCelsius, narrower.maxCelsius);
+  return consider('ambient', `Indoors, between ${words}`, { ambient: narrower });
+}
+
+function adviseOnBand(end: number): Advice[] {
   const band = Math.ceil(end * 1000) / 1000;
   if (band > 0.5) return [];
   return [
@@ -151,6 +237,12 @@ function adviseOnWide(
       code: 'band',
       text: `No pack from stock keeps 99\u202f% of kits within this band. The steadiest always stays within ${plusMinus(end)}; ask for that.`,
       change: { band },
+      worseEnd: end,
     },
   ];
+}
+
+/** Rounded down, so that it never says more than is so. */
+function shareWords({ yieldWithinBand }: RankedPack): string {
+  return yieldWithinBand > 0.9995 ? 'all' : percent(Math.floor(yieldWithinBand * 1000) / 1000, 3);
 }

@@ -22,6 +22,12 @@ export interface BriefInHand {
   holder: PartOf<'holder'> | null;
 }
 
+/** What the bench can do. */
+export interface Bench {
+  /** Uncertainty of its capacitance meter, as a fraction of the reading. */
+  meterUncertainty: number;
+}
+
 export type ResolvedOrNot = BriefInHand | { kind: 'impossible'; errors: FieldError[] };
 
 export interface FieldError {
@@ -44,6 +50,7 @@ const ledHeadroomVolts = 0.3;
 export function resolveBrief(
   parsed: ParsedBrief,
   catalogue: readonly CataloguePart[],
+  bench: Bench,
 ): ResolvedOrNot {
   const targetHz = targetHertz(parsed.target);
   const supply = resolveSupply(parsed, catalogue);
@@ -70,7 +77,7 @@ export function resolveBrief(
   return {
     kind: 'resolved',
     brief,
-    search: toSearch(brief, lit.led),
+    search: toSearch(brief, lit.led, bench),
     led: lit.led,
     battery: supply.battery,
     holder: supply.holder,
@@ -165,8 +172,14 @@ function resolveLed(
   return { led };
 }
 
-function toSearch(brief: ResolvedBrief, led: PartOf<'led'> | null): SearchBrief {
+function toSearch(
+  brief: ResolvedBrief,
+  led: PartOf<'led'> | null,
+  { meterUncertainty }: Bench,
+): SearchBrief {
   return {
+    care: brief.careLevel,
+    meterUncertainty,
     targetHz: brief.targetHz,
     duty: brief.duty,
     supplyVolts: brief.supply.volts,

@@ -1,4 +1,5 @@
 import type { PackRole } from '../contracts/packs.ts';
+import type { TimingParts } from '../engine/search/candidate.ts';
 import type { RankedPack } from '../engine/search/find-packs.ts';
 import type { BriefInHand } from './brief.ts';
 import { partsOf, type CataloguePart, type PartOf } from './catalogue.ts';
@@ -50,26 +51,47 @@ export function choiceOf(
   inHand: BriefInHand,
   accessories: Accessories,
 ): PackChoice {
-  const { frame, first, second, join } = pack;
+  const { head, capacitor } = pack.frame;
+  const { thresholds } = head;
   const parts: PackChoice['parts'] = {
-    U1: frame.comparator.id,
-    R1: frame.thresholds.r1.id,
-    R2: frame.thresholds.r2.id,
-    R3: frame.thresholds.r3.id,
-    ...(second === null ? { R4: first.id } : { R4A: first.id, R4B: second.id }),
-    C1: frame.capacitor.id,
+    U1: head.comparator.id,
+    R1: thresholds.r1.id,
+    R2: thresholds.r2.id,
+    R3: thresholds.r3.id,
+    ...timingRoles(pack.timing),
+    C1: capacitor.id,
   };
-  if (frame.pullUp) parts.RP = frame.pullUp.id;
+  if (head.pullUp) parts.RP = head.pullUp.id;
+  if (head.idle) Object.assign(parts, { R5: head.idle.id, R6: head.idle.id });
   if (accessories.decoupling) parts.C2 = accessories.decoupling.id;
-  if (inHand.led && frame.ledResistor) {
+  if (inHand.led && head.ledResistor) {
     parts.LED = inHand.led.id;
-    parts.RL = frame.ledResistor.id;
+    parts.RL = head.ledResistor.id;
   }
-  const board = accessories.boardFor(frame.comparator.sections);
+  const board = accessories.boardFor(head.comparator.sections);
   if (board) parts.PCB = board.id;
   if (inHand.holder) parts.BH = inHand.holder.id;
   if (inHand.battery) parts.BAT = inHand.battery.id;
-  return { parts, join };
+  return { parts, join: pack.timing.kind === 'single' ? pack.timing.join : null };
+}
+
+/** A trimmer stands in series with R4; steering diodes and resistors go by C and D. */
+function timingRoles(timing: TimingParts): PackChoice['parts'] {
+  switch (timing.kind) {
+    case 'single':
+      return timing.second === null
+        ? { R4: timing.first.id }
+        : { R4A: timing.first.id, R4B: timing.second.id };
+    case 'steered':
+      return {
+        RC: timing.charge.id,
+        RD: timing.discharge.id,
+        DC: timing.diode.id,
+        DD: timing.diode.id,
+      };
+    case 'trimmed':
+      return { R4: timing.fixed.id, RV: timing.trimmer.id };
+  }
 }
 
 /** What one kit takes from the shelves. A value used by two roles appears twice. */

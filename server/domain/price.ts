@@ -1,11 +1,21 @@
+import type { CareLevel } from '../contracts/brief.ts';
 import { withTax } from './money.ts';
 
 /** How the shop prices a kit. */
 export interface PriceRule {
   /** Net fee per kit for bag, build sheet and picking, in minor units. */
   kitFeeMinor: number;
+  /** Net fee per kit for what the shop does beyond that, by care level. */
+  careFeesMinor: Readonly<Record<CareLevel, number>>;
   taxBasisPoints: number;
 }
+
+const careLabels: Record<CareLevel, string> = {
+  'as-stocked': 'As stocked',
+  'lot-checked': 'Checking against the lot',
+  'bench-tuned': 'Tuning on the bench',
+  'trimmer-fitted': 'Fitting the trimmer',
+};
 
 export interface PriceLine {
   label: string;
@@ -23,8 +33,17 @@ export interface KitPrice {
  * Price of one kit. Tax is put on the sum of the net amounts, then shared out over the shown lines by
  * largest remainder, so that the lines always add up to the price. All amounts in minor units.
  */
-export function kitPrice(partLines: readonly PriceLine[], rule: PriceRule): KitPrice {
-  const net = [...partLines, { label: 'Picking, bag and build sheet', netMinor: rule.kitFeeMinor }];
+export function kitPrice(
+  partLines: readonly PriceLine[],
+  rule: PriceRule,
+  careLevel: CareLevel,
+): KitPrice {
+  const careFee = rule.careFeesMinor[careLevel];
+  const net = [
+    ...partLines,
+    { label: 'Picking, bag and build sheet', netMinor: rule.kitFeeMinor },
+    ...(careFee > 0 ? [{ label: careLabels[careLevel], netMinor: careFee }] : []),
+  ];
   const netMinor = net.reduce((sum, line) => sum + line.netMinor, 0);
   const grossMinor = withTax(netMinor, rule.taxBasisPoints);
   const shares = shareOut(

@@ -11,7 +11,7 @@ export function promiseOf(pack: RankedPack, brief: ResolvedBrief): PackPromise {
   const { frequencyHz, guaranteed } = pack;
   const cycle = analyseCycle(pack.circuit);
   const duty = cycle.kind === 'oscillates' ? cycle.duty : Number.NaN;
-  const amps = averageSupplyAmps(pack.circuit, pack.frame.comparator.quiescentAmps);
+  const amps = averageSupplyAmps(pack.circuit, pack.frame.head.comparator.quiescentAmps);
   const half = Math.max(guaranteed.maxHz / frequencyHz - 1, 1 - guaranteed.minHz / frequencyHz);
   const figures = figuresFor(half);
   const { unit } = brief.target;

@@ -2,15 +2,26 @@ import type {
   Shelf,
   StockedCapacitor,
   StockedComparator,
+  StockedDiode,
   StockedResistor,
+  StockedTrimmer,
 } from '../engine/search/shelf.ts';
 import { partsOf, type CataloguePart, type PartOf } from './catalogue.ts';
+import { lotWindow } from './lot-window.ts';
 
 /** A catalogue resistor as the search sees it. */
 export function toStockedResistor(part: PartOf<'resistor'>): StockedResistor {
-  const { ohms, tolerance, temperatureCoefficientPerKelvin } = part.facts;
+  const { ohms, tolerance, temperatureCoefficientPerKelvin, ratedWatts } = part.facts;
   const { id, available, priceMinor } = part;
-  return { id, available, priceMinor, ohms, tolerance, temperatureCoefficientPerKelvin };
+  return {
+    id,
+    available,
+    priceMinor,
+    ohms,
+    tolerance,
+    temperatureCoefficientPerKelvin,
+    ratedWatts,
+  };
 }
 
 /** A catalogue capacitor as the search sees it. */
@@ -22,6 +33,7 @@ export function toStockedCapacitor(part: PartOf<'capacitor'>): StockedCapacitor 
     priceMinor,
     farads: facts.farads,
     tolerance: facts.tolerance,
+    deviation: null,
     dielectric: facts.dielectric,
     ratedVolts: facts.ratedVolts,
     temperatureCoefficientPerKelvin: facts.temperatureCoefficientPerKelvin,
@@ -58,24 +70,65 @@ export function toStockedComparator(part: PartOf<'comparator'>): StockedComparat
   };
 }
 
-/** Stands for a board that must be on the shelf before a comparator is offered. */
-export type BoardFor = (comparator: PartOf<'comparator'>) => PartOf<'board'> | null;
+/**
+ * The same capacitor by what its lots were measured to be; null when a lot with unreserved pieces was
+ * never measured. `meterUncertainty` is that of the receiving meter, as a fraction.
+ */
+export function toLotChecked(
+  part: PartOf<'capacitor'>,
+  meterUncertainty: number,
+): StockedCapacitor | null {
+  const window = lotWindow(part.facts, part.lots, meterUncertainty);
+  if (window === null) return null;
+  const { mean, tolerance, deviation } = window;
+  return { ...toStockedCapacitor(part), farads: mean, tolerance, deviation };
+}
+
+/** A catalogue diode as the search sees it. */
+export function toStockedDiode({
+  facts,
+  id,
+  available,
+  priceMinor,
+}: PartOf<'diode'>): StockedDiode {
+  return {
+    id,
+    available,
+    priceMinor,
+    saturationAmps: facts.saturationAmps,
+    emissionCoefficient: facts.emissionCoefficient,
+    energyGapElectronVolts: facts.energyGapElectronVolts,
+    saturationTemperatureExponent: facts.saturationTemperatureExponent,
+  };
+}
+
+/** A catalogue trimmer as the search sees it. */
+export function toStockedTrimmer(part: PartOf<'trimmer'>): StockedTrimmer {
+  const { ohms, tolerance, temperatureCoefficientPerKelvin } = part.facts;
+  const { id, available, priceMinor } = part;
+  return { id, available, priceMinor, ohms, tolerance, temperatureCoefficientPerKelvin };
+}
 
 /**
- * The shelf of one mounting, ascending by id. A comparator without a stocked board that takes it is
- * left out. Resistors stay even when sold out, since the composites are formed over all of them.
+ * The shelf of one mounting, ascending by id; with lot-checked capacitors, only those whose lots were
+ * measured. Resistors stay even when sold out, since the timing table is formed over all values.
  */
 export function shelfOf(
   catalogue: readonly CataloguePart[],
   mounting: string,
-  boardFor: BoardFor,
+  lotChecked: { meterUncertainty: number } | null,
 ): Shelf {
   const mounted = catalogue.filter((part) => part.mounting === mounting);
   return {
     resistors: partsOf(mounted, 'resistor').map(toStockedResistor),
-    capacitors: partsOf(mounted, 'capacitor').map(toStockedCapacitor),
-    comparators: partsOf(mounted, 'comparator')
-      .filter((part) => boardFor(part) !== null)
-      .map(toStockedComparator),
+    capacitors: partsOf(mounted, 'capacitor').flatMap(
+      (part) =>
+        (lotChecked === null
+          ? toStockedCapacitor(part)
+          : toLotChecked(part, lotChecked.meterUncertainty)) ?? [],
+    ),
+    comparators: partsOf(mounted, 'comparator').map(toStockedComparator),
+    diodes: partsOf(mounted, 'diode').map(toStockedDiode),
+    trimmers: partsOf(mounted, 'trimmer').map(toStockedTrimmer),
   };
 }

@@ -1,70 +1,52 @@
-import type { RankedPack } from '../engine/search/find-packs.ts';
-import type { SearchBrief, StockedResistor } from '../engine/search/shelf.ts';
-import { widenedResistor, widestKelvin } from '../engine/search/guaranteed-band.ts';
+import type { CauseWidth, SpreadCause } from '../engine/search/kit-causes.ts';
+import type { CareLevel } from '../contracts/brief.ts';
 import { percent } from './wording.ts';
 
-export interface SpreadCause {
+export interface SpreadCauseLine {
   role: string;
   label: string;
   /** Half-width of this cause alone, as a fraction of the rate. */
   fraction: number;
 }
 
-/**
- * What each cause alone may move the rate by, largest first: tolerance and drift times sensitivity
- * (model section 5) for the passive parts; what the guaranteed band has beyond those is the
- * comparator, the supply and the load.
- */
-export function spreadCauses(pack: RankedPack, brief: SearchBrief): SpreadCause[] {
-  const kelvin = widestKelvin(brief);
-  const { r1, r2, r3 } = pack.frame.thresholds;
-  const x1 = r1.ohms / (r1.ohms + r3.ohms);
-  const x2 = r2.ohms / (r2.ohms + r3.ohms);
-  const log = Math.log((1 + r1.ohms / r3.ohms) * (1 + r2.ohms / r3.ohms));
-  const thresholds =
-    (x1 * widenedResistor(r1, kelvin) +
-      x2 * widenedResistor(r2, kelvin) +
-      (x1 + x2) * widenedResistor(r3, kelvin)) /
-    log;
-  const capacitor = pack.frame.capacitor;
-  const capacitance =
-    capacitor.tolerance +
-    Math.abs(capacitor.temperatureCoefficientPerKelvin) * kelvin +
-    capacitor.temperatureSpread;
-  const timing = timingFraction(pack, kelvin);
-  const whole = Math.log(pack.guaranteed.maxHz / Math.max(pack.guaranteed.minHz, 1e-300)) / 2;
-  const rest = Math.max(0, whole - thresholds - capacitance - timing);
-  const causes = [
-    { role: 'C1', label: 'Capacitor C1', fraction: capacitance },
-    { role: pack.second === null ? 'R4' : 'R4A', label: 'Timing resistor R4', fraction: timing },
-    { role: 'R1', label: 'Thresholds R1–R3', fraction: thresholds },
-    { role: 'U1', label: 'Comparator, supply and load', fraction: rest },
-  ];
-  return causes.sort((a, b) => b.fraction - a.fraction);
+const labels: Record<SpreadCause, [role: string, label: string, sentence: string]> = {
+  capacitor: ['C1', 'Capacitor C1', 'The capacitor makes'],
+  timing: ['R4', 'Timing resistor R4', 'The timing resistor makes'],
+  thresholds: ['R1', 'Thresholds R1–R3', 'The threshold resistors make'],
+  comparator: ['U1', 'Comparator', 'The comparator makes'],
+  load: ['LED', 'LED on the output', 'The LED makes'],
+  temperature: ['°C', 'Temperature', 'Temperature makes'],
+  supply: ['V+', 'Supply', 'The supply makes'],
+};
+
+/** A cause in the words of the care level: measured, the capacitor leaves but the meter's doubt. */
+function labelOf(cause: SpreadCause, careLevel: CareLevel, isSteered: boolean): string {
+  if (cause === 'capacitor' && careLevel === 'bench-tuned') return 'Meter and capacitor C1';
+  if (cause === 'capacitor' && careLevel === 'lot-checked') return 'Capacitor C1 within its lots';
+  if (cause === 'capacitor' && careLevel === 'trimmer-fitted') return 'Dielectric of C1';
+  if (cause === 'timing' && careLevel === 'trimmer-fitted') return 'Setting of the trimmer';
+  if (cause === 'timing' && careLevel === 'bench-tuned') return 'Timing resistor and its grid';
+  if (cause === 'timing' && isSteered) return 'Steering resistors and diodes';
+  return labels[cause][1];
 }
 
-/** Tolerance of a composite: each part's own, weighted by its share of the whole. */
-function timingFraction(pack: RankedPack, kelvin: number): number {
-  if (pack.second === null) return widenedResistor(pack.first, kelvin);
-  const share = (part: StockedResistor) =>
-    pack.join === 'parallel' ? pack.timingOhms / part.ohms : part.ohms / pack.timingOhms;
-  return (
-    share(pack.first) * widenedResistor(pack.first, kelvin) +
-    share(pack.second) * widenedResistor(pack.second, kelvin)
-  );
+/** The causes of a pack's spread with their names, in the order given. */
+export function causeLines(
+  causes: readonly CauseWidth[],
+  careLevel: CareLevel,
+  isSteered: boolean,
+): SpreadCauseLine[] {
+  return causes.map(({ cause, fraction }) => ({
+    role: cause === 'timing' && isSteered ? 'RC' : labels[cause][0],
+    label: labelOf(cause, careLevel, isSteered),
+    fraction,
+  }));
 }
 
 /** The conclusion, said before the picture. */
-export function causesSentence(causes: readonly SpreadCause[]): string {
+export function causesSentence(causes: readonly CauseWidth[]): string {
   const sum = causes.reduce((total, cause) => total + cause.fraction, 0);
   const [first] = causes;
   if (!first || sum === 0) return 'Nothing spreads this pack.';
-  const names: Record<string, string> = {
-    C1: 'The capacitor makes',
-    R4: 'The timing resistor makes',
-    R4A: 'The timing resistors make',
-    R1: 'The threshold resistors make',
-    U1: 'The comparator and its supply make',
-  };
-  return `${names[first.role] ?? first.label} ${percent(first.fraction / sum, 2)} of the spread.`;
+  return `${labels[first.cause][2]} ${percent(first.fraction / sum, 2)} of the spread.`;
 }

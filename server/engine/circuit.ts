@@ -68,6 +68,8 @@ export interface Comparator {
 export interface IndicatorLoad {
   volts: number;
   ohms: number;
+  /** True where a spare section drives it, so that the oscillator's own output does not feel it. */
+  buffered?: boolean;
 }
 
 /**

@@ -23,7 +23,8 @@ export interface ReducedState {
  * The comparator's output in one state together with pull-up and indicator, as one source.
  * Push-pull: (V_OH, R_OH) or (V_OL, R_OL), in parallel with the pull-up when it has resistance.
  * Open drain: (V+, pull-up) when high; when low (V_OL, R_OL) in parallel with the pull-up, or V_OL
- * alone when R_OL is 0. The indicator joins the high state; see `withIndicator`.
+ * alone when R_OL is 0. An indicator that no spare section drives joins the high state; see
+ * `withIndicator`.
  */
 export function outputSource(circuit: Circuit, state: OutputState): TheveninSource {
   const { comparator, supplyVolts, load } = circuit;
@@ -35,7 +36,7 @@ export function outputSource(circuit: Circuit, state: OutputState): TheveninSour
   const stage = { volts: comparator.highVolts ?? supplyVolts, ohms: comparator.highOhms };
   const openDrain = comparator.output === 'open-drain' && pullUp !== null;
   const driven = openDrain ? pullUp : inParallel(stage, pullUp);
-  return load ? withIndicator(driven, load) : driven;
+  return load && load.buffered !== true ? withIndicator(driven, load) : driven;
 }
 
 /** Two sources on one node. A source without resistance holds the node alone. */

@@ -13,7 +13,10 @@ export interface PreparedSingle {
   timingFactor: number;
   capacitorFactor: number;
   leakageSiemens: number;
+  /** Input bias and the capacitor's leakage current. */
   drainAmps: number;
+  /** Input bias alone. */
+  inputAmps: number;
   highOpenVolts: number;
   highOhms: number;
   highFeedback: number;
@@ -34,6 +37,11 @@ export interface PreparedSingle {
  */
 export function prepareSingle(circuit: Circuit): PreparedSingle {
   checkCircuit(circuit);
+  return prepareChecked(circuit);
+}
+
+/** As `prepareSingle` for a circuit whose numbers are known to be possible: thirty times quicker. */
+export function prepareChecked(circuit: Circuit): PreparedSingle {
   const { timing, capacitor, comparator } = circuit;
   if (timing.kind !== 'single') throw new RangeError('Only a single timing resistor is prepared.');
   if (capacitor.biasHalvingVolts !== null || capacitor.biasCurve) {
@@ -49,6 +57,7 @@ export function prepareSingle(circuit: Circuit): PreparedSingle {
     capacitorFactor: factors.capacitor,
     leakageSiemens: capacitor.leakageOhms === null ? 0 : 1 / capacitor.leakageOhms,
     drainAmps: comparator.invertingBiasAmps + capacitor.leakageAmps,
+    inputAmps: comparator.invertingBiasAmps,
     highOpenVolts: 0,
     highOhms: 0,
     highFeedback: 0,
@@ -127,11 +136,45 @@ export function splitAt(
   farads: number,
   into: Split,
 ): void {
-  const p = prepared;
+  const { timingFactor, capacitorFactor, leakageSiemens, drainAmps } = prepared;
+  split(
+    prepared,
+    timingOhms * timingFactor,
+    farads * capacitorFactor,
+    leakageSiemens,
+    drainAmps,
+    into,
+  );
+}
+
+/**
+ * The settled period in seconds of a prepared circuit with another capacitor: `timingOhms` and
+ * `farads` as they are at the circuit's temperature, the capacitor's own leakage as a conductance
+ * and as a current. What the prepared circuit says of its own capacitor is not used. NaN as in
+ * `periodAt`. Allocates nothing.
+ */
+export function periodWith(
+  prepared: PreparedSingle,
+  timingOhms: number,
+  farads: number,
+  leakageSiemens: number,
+  leakageAmps: number,
+): number {
+  const drain = prepared.inputAmps + leakageAmps;
+  split(prepared, timingOhms, farads, leakageSiemens, drain, scratch);
+  return scratch.highSeconds + scratch.lowSeconds;
+}
+
+function split(
+  p: PreparedSingle,
+  ohms: number,
+  capacitance: number,
+  leakageSiemens: number,
+  drainAmps: number,
+  into: Split,
+): void {
   into.highSeconds = NaN;
   into.lowSeconds = NaN;
-  const ohms = timingOhms * p.timingFactor;
-  const capacitance = farads * p.capacitorFactor;
   if (!(ohms > 0 && capacitance > 0)) return;
   const highBranch = ohms + p.highOhms;
   const lowBranch = ohms + p.lowOhms;
@@ -142,10 +185,10 @@ export function splitAt(
     (p.lowBiasVolts + (p.lowFeedback * p.lowOpenVolts * ohms) / lowBranch) /
     (1 - (p.lowFeedback * p.lowOhms) / lowBranch);
   if (!(highTrip > 0 && highTrip > lowTrip)) return;
-  const highDrain = 1 / (1 / highBranch + p.leakageSiemens);
-  const lowDrain = 1 / (1 / lowBranch + p.leakageSiemens);
-  const highEnd = highDrain * (p.highOpenVolts / highBranch - p.drainAmps);
-  const lowEnd = lowDrain * (p.lowOpenVolts / lowBranch - p.drainAmps);
+  const highDrain = 1 / (1 / highBranch + leakageSiemens);
+  const lowDrain = 1 / (1 / lowBranch + leakageSiemens);
+  const highEnd = highDrain * (p.highOpenVolts / highBranch - drainAmps);
+  const lowEnd = lowDrain * (p.lowOpenVolts / lowBranch - drainAmps);
   if (!(highEnd > highTrip && lowEnd < lowTrip)) return;
   const highTau = highDrain * capacitance;
   const lowTau = lowDrain * capacitance;

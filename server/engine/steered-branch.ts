@@ -36,7 +36,7 @@ export function steeredAmps(
     const excess = amps * total + emissionVolts * Math.log1p(amps / saturationAmps) - drive;
     const change = excess / (total + emissionVolts / (amps + saturationAmps));
     const next = Math.max(amps - change, 0);
-    if (Math.abs(next - amps) <= 2e-16 * next) return next;
+    if (Math.abs(next - amps) <= 1e-15 * next) return next;
     amps = next;
   }
   return amps;
@@ -136,7 +136,7 @@ function closedSpan(total: number, slope: number, target: number): number {
   for (let step = 0; step < newtonSteps; step++) {
     const excess = total * span + slope * Math.expm1(span) - target;
     const next = span - excess / (total + slope * Math.exp(span));
-    if (Math.abs(next - span) <= 2e-16 * Math.abs(span)) return next;
+    if (Math.abs(next - span) <= 1e-15 * Math.abs(span)) return next;
     span = next;
   }
   return span;

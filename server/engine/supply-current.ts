@@ -45,7 +45,9 @@ export function supplyCurrent(
   const thresholdAmps = overCycle(parts.r1(high), parts.r1(low)) + overCycle(parts.r3(high), none);
   const timingAmps = overCycle((volts) => high.timingAmpsAt(volts), none);
   const pullUpAmps = overCycle(none, parts.pullUp(low));
-  const loadAmps = overCycle(parts.load(high), none);
+  const loadAmps = circuit.load?.buffered
+    ? cycle.duty * bufferedAmps(circuit)
+    : overCycle(parts.load(high), none);
   return {
     kind: 'supply-current',
     totalAmps: thresholdAmps + timingAmps + pullUpAmps + loadAmps + quiescentAmps,
@@ -61,6 +63,13 @@ export function supplyCurrent(
 export function averageSupplyAmps(circuit: Circuit, quiescentAmps: number = 0): number {
   const current = supplyCurrent(circuit, quiescentAmps);
   return current.kind === 'supply-current' ? current.totalAmps : NaN;
+}
+
+/** What a spare section of the same kind gives an indicator while high. */
+function bufferedAmps({ load, comparator, supplyVolts }: Circuit): number {
+  if (!load) return 0;
+  const left = (comparator.highVolts ?? supplyVolts) - load.volts;
+  return Math.max(0, left) / (load.ohms + comparator.highOhms);
 }
 
 type CurrentIn = (branch: StateBranch) => (volts: number) => number;

@@ -1,4 +1,4 @@
-import type { Caution, PackPart, PackPromise } from '../contracts/packs.ts';
+import type { Caution, PackPart, PackPromise, Topology } from '../contracts/packs.ts';
 import type { PulseStripData } from '../contracts/drawing.ts';
 import type { ResolvedBrief } from '../contracts/brief.ts';
 import type { Circuit } from '../engine/circuit.ts';
@@ -8,7 +8,7 @@ import type { Database } from './connection.ts';
 export interface FrozenPack {
   identifier: string;
   token: string;
-  topology: 'equal-thresholds' | 'shifted-thresholds';
+  topology: Topology;
   sentence: string;
   brief: ResolvedBrief;
   parts: PackPart[];

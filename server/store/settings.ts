@@ -7,6 +7,10 @@ export interface ShopSettings {
   homeCountry: string;
   /** Net fee per kit, in minor units: bag, build sheet, picking. */
   kitFeeMinor: number;
+  /** Net fee per kit for each care level, in minor units. */
+  careFeesMinor: Record<'as-stocked' | 'lot-checked' | 'bench-tuned' | 'trimmer-fitted', number>;
+  /** Uncertainty of the bench's capacitance meter, as a fraction of the reading. */
+  meterUncertainty: number;
   carriers: string[];
 }
 

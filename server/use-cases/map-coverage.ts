@@ -45,7 +45,7 @@ function halfBandAt(book: PackBook, frequencyHz: number): number | null {
     load: { kind: 'logic' },
     band: askedBand,
   });
-  const inHand = resolveBrief(brief, book.catalogue);
+  const inHand = resolveBrief(brief, book.catalogue, book.settings);
   if (inHand.kind === 'impossible') return null;
   const pack = steadiestOnShelves(book, inHand);
   if (!pack || pack.distance > 0.01) return null;

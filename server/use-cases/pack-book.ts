@@ -1,25 +1,23 @@
 import type { Pack } from '../contracts/packs.ts';
 import { resolveBrief, type BriefInHand } from '../domain/brief.ts';
-import { isKind, partsOf, type CataloguePart, type PartOf } from '../domain/catalogue.ts';
+import type { CataloguePart } from '../domain/catalogue.ts';
 import { cautionsFor } from '../domain/cautions.ts';
 import { money } from '../domain/money.ts';
 import { writePackContent, readPackContent } from './pack-token.ts';
+import { candidateOf } from '../domain/pack-candidate.ts';
 import { demandOfChoice, type PackChoice } from '../domain/pack-choice.ts';
 import { inBillOrder, toPackPart } from '../domain/pack-parts.ts';
 import { kitPrice, type KitPrice, type PriceRule } from '../domain/price.ts';
 import { promiseOf } from '../domain/promise.ts';
-import { toStockedCapacitor, toStockedComparator, toStockedResistor } from '../domain/shelf.ts';
+import { packNotes, whyTopology } from '../domain/pack-notes.ts';
 import { makeableKits } from '../domain/stock.ts';
 import { analyseCycle } from '../engine/cycle.ts';
 import { pulseStrip } from '../engine/pulse-strip.ts';
-import { aimFrame } from '../engine/search/candidates.ts';
-import { demandOf } from '../engine/search/demand.ts';
 import { promise, type RankedPack } from '../engine/search/find-packs.ts';
-import type { Frame } from '../engine/search/frame.ts';
-import { periodAt } from '../engine/prepared-single.ts';
-import type { ParsedBrief } from '../contracts/brief.ts';
+import type { CareLevel, ParsedBrief } from '../contracts/brief.ts';
 import { homeTerms, type ShopSettings } from '../store/settings.ts';
 import type { Deps, Signer } from '../ports.ts';
+import { searchShelf } from './search-shelf.ts';
 
 /** Everything that packs are made and priced from, as it stands at one moment. */
 export interface PackBook {
@@ -35,7 +33,8 @@ export async function openPackBook(deps: Pick<Deps, 'db' | 'stockView'>): Promis
     deps.stockView.current(),
     homeTerms(deps.db),
   ]);
-  const rule = { kitFeeMinor: settings.kitFeeMinor, taxBasisPoints };
+  const { kitFeeMinor, careFeesMinor } = settings;
+  const rule = { kitFeeMinor, careFeesMinor, taxBasisPoints };
   return { catalogue, byId: indexOf(catalogue), settings, rule };
 }
 
@@ -73,7 +72,7 @@ export function assess(
   const parts = inBillOrder(
     demand.map(({ role, partId }) => toPackPart(role, book.byId.get(partId)!)),
   );
-  const price = priceOf(book, choice);
+  const price = priceOf(book, choice, parsed.careLevel);
   const kits = parsed.quantity;
   const cycle = analyseCycle(ranked.circuit);
   if (cycle.kind !== 'oscillates')
@@ -81,8 +80,11 @@ export function assess(
   const pack: Pack = {
     token: signer.seal(writePackContent({ choice, brief: parsed })),
     topology: ranked.topology,
+    why: whyTopology(ranked, inHand.search),
+    careLevel: parsed.careLevel,
     join: choice.join,
-    timingOhms: ranked.timingOhms,
+    timingOhms: ranked.timing.kind === 'steered' ? null : ranked.timing.ohms,
+    buffered: ranked.frame.head.buffered,
     parts,
     promise: promiseOf(ranked, inHand.brief),
     price: { unit: money(price.grossMinor), total: money(price.grossMinor * kits) },
@@ -96,6 +98,7 @@ export function assess(
       hasPolarised: parts.some((part) => part.dielectric === 'electrolytic'),
     }),
     strip: pulseStrip(ranked.circuit, cycle),
+    notes: packNotes(ranked, inHand.search),
     wins: ranked.wins,
   };
   return { pack, choice, inHand, ranked, price };
@@ -109,16 +112,22 @@ function darkBelow({ led, battery }: BriefInHand): number | null {
 }
 
 const priceGroups: readonly (readonly [string, readonly string[]])[] = [
-  ['Resistors', ['resistor']],
+  ['Resistors', ['resistor', 'trimmer']],
   ['Capacitors', ['capacitor']],
   ['Comparator', ['comparator']],
+  ['Diodes', ['diode']],
   ['LED', ['led']],
   ['Board', ['board']],
   ['Holder and cells', ['holder', 'battery']],
 ];
 
 /** The price of one kit of a choice, in the lines the pack page shows. */
-export function priceOf(book: PackBook, choice: PackChoice, rule: PriceRule = book.rule): KitPrice {
+export function priceOf(
+  book: PackBook,
+  choice: PackChoice,
+  careLevel: CareLevel,
+  rule: PriceRule = book.rule,
+): KitPrice {
   const parts = demandOfChoice(choice).map(({ partId }) => book.byId.get(partId)!);
   const lines = priceGroups
     .map(([label, kinds]) => ({
@@ -128,7 +137,7 @@ export function priceOf(book: PackBook, choice: PackChoice, rule: PriceRule = bo
         .reduce((sum, part) => sum + part.priceMinor, 0),
     }))
     .filter((line) => line.netMinor > 0);
-  return kitPrice(lines, rule);
+  return kitPrice(lines, rule, careLevel);
 }
 
 export type OpenedToken =
@@ -142,7 +151,7 @@ export function openToken(book: PackBook, signer: Signer, token: string): Opened
   const content = text === null ? null : readPackContent(text);
   if (content === null) return { kind: 'unknown' };
   const { choice, brief: parsed } = content;
-  const inHand = resolveBrief(parsed, book.catalogue);
+  const inHand = resolveBrief(parsed, book.catalogue, book.settings);
   if (inHand.kind === 'impossible') return { kind: 'gone', reason: inHand.errors[0]!.message };
   const missing = Object.entries(choice.parts).find(([, id]) => !book.byId.has(id));
   if (missing) {
@@ -151,64 +160,9 @@ export function openToken(book: PackBook, signer: Signer, token: string): Opened
       reason: `The shop no longer keeps the part for ${missing[0]}; ask for a new pack.`,
     };
   }
-  const ranked = rankedFromChoice(book, choice, inHand);
-  if (ranked === null)
+  const candidate = candidateOf(choice, book.byId, inHand.search);
+  if (candidate === null)
     return { kind: 'gone', reason: 'This pack no longer works; ask for a new one.' };
+  const ranked = promise(candidate, inHand.search, searchShelf(book, inHand.brief));
   return { kind: 'opened', parsed, assessed: assess(book, signer, parsed, inHand, ranked, choice) };
-}
-
-function rankedFromChoice(
-  book: PackBook,
-  { parts, join }: PackChoice,
-  { search }: BriefInHand,
-): RankedPack | null {
-  const resistor = (id: number | undefined) => {
-    const part = id === undefined ? undefined : book.byId.get(id);
-    return part && isKind(part, 'resistor') ? toStockedResistor(part) : null;
-  };
-  const comparator = partById(book, 'comparator', parts.U1);
-  const capacitor = partById(book, 'capacitor', parts.C1);
-  const [r1, r2, r3] = [resistor(parts.R1), resistor(parts.R2), resistor(parts.R3)];
-  const first = resistor(parts.R4 ?? parts.R4A);
-  const second = resistor(parts.R4B);
-  if (!comparator || !capacitor || !r1 || !r2 || !r3 || !first) return null;
-  const pullUp = resistor(parts.RP);
-  const ledResistor = resistor(parts.RL);
-  const frame: Frame = {
-    comparator: toStockedComparator(comparator),
-    thresholds: { r1, r2, r3 },
-    pullUp,
-    ledResistor,
-    capacitor: toStockedCapacitor(capacitor),
-    demand: demandOf([r1, r2, r3, pullUp, ledResistor]),
-    minTimingOhms: 0,
-    priceMinor: 0,
-  };
-  const timingOhms =
-    second === null
-      ? first.ohms
-      : join === 'parallel'
-        ? (first.ohms * second.ohms) / (first.ohms + second.ohms)
-        : first.ohms + second.ohms;
-  const period = periodAt(aimFrame(frame, search).prepared, timingOhms);
-  if (!(period > 0)) return null;
-  const candidate = {
-    frame,
-    timingOhms,
-    first,
-    second,
-    join,
-    frequencyHz: 1 / period,
-    distance: Math.abs(Math.log(period * search.targetHz)),
-    priceMinor: 0,
-  };
-  return promise(candidate, search);
-}
-
-function partById<Kind extends 'comparator' | 'capacitor'>(
-  book: PackBook,
-  kind: Kind,
-  id: number | undefined,
-): PartOf<Kind> | null {
-  return partsOf(book.catalogue, kind).find((part) => part.id === id) ?? null;
 }

@@ -49,7 +49,8 @@ export function priceLines(
   taxBasisPoints: number,
 ): PricedBasket {
   const priced = lines.map((line) => {
-    const { grossMinor } = priceOf(book, line.assessed.choice, { ...book.rule, taxBasisPoints });
+    const { choice, pack } = line.assessed;
+    const { grossMinor } = priceOf(book, choice, pack.careLevel, { ...book.rule, taxBasisPoints });
     const lineGrossMinor = grossMinor * line.line.quantity;
     return {
       ...line,

@@ -8,18 +8,16 @@ import {
   missingAccessory,
   type Accessories,
 } from '../domain/pack-choice.ts';
-import { shelfOf } from '../domain/shelf.ts';
-import { formTimingTables, restock, type TimingTables } from '../engine/search/composites.ts';
 import {
   findPacks,
   findSteadiestPack,
   type FoundPacks,
   type RankedPack,
 } from '../engine/search/find-packs.ts';
-import type { Shelf } from '../engine/search/shelf.ts';
 import type { Deps } from '../ports.ts';
 import { assess, openPackBook, type PackBook } from './pack-book.ts';
 import { Refusal } from './refusal.ts';
+import { searchShelf, withBoards } from './search-shelf.ts';
 
 const nothing: FoundPacks = { packs: [], considered: 0 };
 
@@ -33,7 +31,7 @@ export async function solveBrief(
 ): Promise<SolveResponse> {
   const started = performance.now();
   const book = await openPackBook(deps);
-  const inHand = resolveBrief(request, book.catalogue);
+  const inHand = resolveBrief(request, book.catalogue, book.settings);
   if (inHand.kind === 'impossible') {
     throw new Refusal('impossible-brief', inHand.errors[0]!.message, inHand.errors);
   }
@@ -58,24 +56,16 @@ function searchShelves(
   accessories: Accessories,
   request: Pick<SolveRequest, 'rank' | 'limit'>,
 ): FoundPacks {
-  const shelf = shelfFor(book, inHand, accessories);
-  if (shelf === null) return nothing;
-  return findPacks(shelf, inHand.search, request.rank, request.limit, timingTables(shelf));
+  if (missingAccessory(inHand, accessories) !== null) return nothing;
+  const shelf = withBoards(searchShelf(book, inHand.brief), accessories);
+  return findPacks(shelf, inHand.search, request.rank, request.limit);
 }
 
-/** The steadiest pack for a brief in hand, or null: what the coverage map asks for. */
+/** The steadiest pack for a brief in hand, or null: what the coverage map and the advice ask for. */
 export function steadiestOnShelves(book: PackBook, inHand: BriefInHand): RankedPack | null {
-  const shelf = shelfFor(book, inHand, chooseAccessories(book.catalogue, inHand));
-  return shelf && findSteadiestPack(shelf, inHand.search, timingTables(shelf));
-}
-
-/** The shelf a brief may take from; null when something every kit needs is missing. */
-function shelfFor(book: PackBook, inHand: BriefInHand, accessories: Accessories): Shelf | null {
-  if (inHand.brief.careLevel !== 'as-stocked') return null;
+  const accessories = chooseAccessories(book.catalogue, inHand);
   if (missingAccessory(inHand, accessories) !== null) return null;
-  return shelfOf(book.catalogue, inHand.brief.mounting, (comparator) =>
-    accessories.boardFor(comparator.facts.sections),
-  );
+  return findSteadiestPack(withBoards(searchShelf(book, inHand.brief), accessories), inHand.search);
 }
 
 /** Forms the timing tables of both mountings ahead of the first brief. */
@@ -95,29 +85,8 @@ function advice(
 ): Advice[] {
   const missing = missingAccessory(inHand, accessories);
   const retry = (change: Partial<BriefInHand['brief']>) => {
-    const other = resolveBrief({ ...request, ...change }, book.catalogue);
-    if (other.kind === 'impossible') return null;
-    return (
-      searchShelves(book, other, chooseAccessories(book.catalogue, other), {
-        rank: 'closest',
-        limit: 1,
-      }).packs[0] ?? null
-    );
+    const other = resolveBrief({ ...request, ...change }, book.catalogue, book.settings);
+    return other.kind === 'impossible' ? null : steadiestOnShelves(book, other);
   };
   return adviseOn(inHand.brief, found, missing, retry);
-}
-
-const tablesKept = 4;
-const kept = new Map<string, TimingTables>();
-
-/** Timing tables depend on which resistors the catalogue lists, not on how many are left: keep a few. */
-function timingTables(shelf: Shelf): TimingTables {
-  const key = shelf.resistors.map((part) => `${part.id}:${part.ohms}:${part.tolerance}`).join();
-  let tables = kept.get(key);
-  if (!tables) {
-    tables = formTimingTables(shelf.resistors);
-    if (kept.size >= tablesKept) kept.delete(kept.keys().next().value!);
-    kept.set(key, tables);
-  }
-  return restock(tables, shelf.resistors);
 }

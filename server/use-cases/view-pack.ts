@@ -1,13 +1,16 @@
 import { createHash } from 'node:crypto';
 import type { PackPage } from '../contracts/packs.ts';
 import { money } from '../domain/money.ts';
-import { causesSentence, spreadCauses } from '../domain/spread-causes.ts';
+import { causeLines, causesSentence } from '../domain/spread-causes.ts';
+import { supplyCauses } from '../domain/supply-causes.ts';
 import { drawSchematic } from '../domain/schematic.ts';
 import { analyseCycle } from '../engine/cycle.ts';
+import { spreadCauses } from '../engine/search/kit-causes.ts';
 import { sampleWaveform } from '../engine/waveform.ts';
 import type { Deps } from '../ports.ts';
 import { openPackBook, openToken } from './pack-book.ts';
 import { Refusal } from './refusal.ts';
+import { searchShelf } from './search-shelf.ts';
 
 /** A short name for a pack that nobody ordered yet, always the same for the same token. */
 function packIdentifier(token: string): string {
@@ -33,7 +36,7 @@ export async function viewPack(
     pointsPerSegment: 40,
     fromStart: true,
   });
-  const causes = spreadCauses(ranked, inHand.search);
+  const causes = spreadCauses(ranked, inHand.search, searchShelf(book, inHand.brief));
   return {
     brief: inHand.brief,
     pack,
@@ -51,8 +54,13 @@ export async function viewPack(
       firstHighSeconds: cycle.firstHighSeconds,
       periodSeconds: cycle.periodSeconds,
     },
-    causes,
+    causes: causeLines(causes, pack.careLevel, pack.topology === 'steered'),
     causesText: causesSentence(causes),
+    supply: supplyCauses(
+      ranked.circuit,
+      ranked.frame.head.comparator.quiescentAmps,
+      inHand.battery,
+    ),
     priceLines: price.lines.map(({ label, grossMinor }) => ({ label, amount: money(grossMinor) })),
     identifier: packIdentifier(token),
     maker: {

@@ -1,9 +1,8 @@
-import type { Composites } from './composites.ts';
 import type { StockedResistor } from './shelf.ts';
 
 /**
  * What a pack already takes of a few resistors before R4 is chosen: the three thresholds, a pull-up,
- * an LED resistor. At most five entries, so a plain list is searched faster than a map.
+ * an LED resistor, the pair of idle sections. At most six entries, so a plain list is searched faster than a map.
  */
 export interface ResistorDemand {
   ids: number[];
@@ -29,22 +28,14 @@ function taken(demand: ResistorDemand, id: number): number {
   return at < 0 ? 0 : demand.counts[at]!;
 }
 
-/** True when the shelf holds composite `index` as well as the rest of the pack, `quantity` times. */
-export function compositeMakeable(
-  composites: Composites,
-  index: number,
+/** True when the shelf holds `count` more of a part beside what is taken, `quantity` times. */
+export function holdsMore(
+  part: StockedResistor,
+  count: number,
   demand: ResistorDemand,
   quantity: number,
 ): boolean {
-  const first = composites.resistors[composites.first[index]!]!;
-  const secondAt = composites.second[index]!;
-  if (secondAt < 0) return first.available >= quantity * (1 + taken(demand, first.id));
-  const second = composites.resistors[secondAt]!;
-  if (second.id === first.id) return first.available >= quantity * (2 + taken(demand, first.id));
-  return (
-    first.available >= quantity * (1 + taken(demand, first.id)) &&
-    second.available >= quantity * (1 + taken(demand, second.id))
-  );
+  return part.available >= quantity * (count + taken(demand, part.id));
 }
 
 /** True when the shelf holds the pack's fixed resistors alone, `quantity` times. */

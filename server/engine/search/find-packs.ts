@@ -1,25 +1,30 @@
-import {
-  aimFrame,
-  byCloseness,
-  byPriceThenIds,
-  nearestCandidates,
-  type AimedFrame,
-  type Candidate,
-} from './candidates.ts';
-import { formTimingTables, type TimingTables } from './composites.ts';
-import { frameCircuit, framesFor, type Frame } from './frame.ts';
-import { guaranteedBand, worseEnd, type GuaranteedBand } from './guaranteed-band.ts';
-import { holdsBand, holdsBandAtBest, kitYield, type KitYield } from './kit-yield.ts';
-import type { SearchBrief, Shelf } from './shelf.ts';
 import type { Circuit } from '../circuit.ts';
+import { byCloseness, byValue, isSamePack, type Candidate } from './candidate.ts';
+import { aimFrames, closestByCapacitor } from './closest.ts';
+import { findBestValue, holdsBand, valueYield } from './best-value.ts';
+import { guaranteedBand, worseEnd, type GuaranteedBand } from './guaranteed-band.ts';
+import { headCircuit, headsFor } from './heads.ts';
+import { insulationSiemens } from './aim.ts';
+import { kitYield, type KitYield } from './kit-yield.ts';
+import type { PreparedShelf } from './prepared-shelf.ts';
+import { capacitorSuits } from './rules.ts';
+import type { SearchBrief } from './shelf.ts';
+import { findSteadiest, steadier, steadyOf, type Steady } from './steadiest.ts';
+import { steeredCircuit, steeredPacks, steeredValues } from './steered.ts';
+import { isEqualDuty } from './threshold-sets.ts';
+import { listOffers } from './timing-choice.ts';
+import { trimmedPack } from './trimmed.ts';
+import { tunedPacks } from './tuned.ts';
 
 export type Rank = 'closest' | 'best-value' | 'steadiest';
+export type Topology = 'equal-thresholds' | 'shifted-thresholds' | 'steered';
 
 /** A candidate with its promise. */
 export interface RankedPack extends Candidate, KitYield {
   circuit: Circuit;
   guaranteed: GuaranteedBand;
-  topology: 'equal-thresholds' | 'shifted-thresholds';
+  topology: Topology;
+  /** The ranks for which this pack is the first of all. */
   wins: Rank[];
 }
 
@@ -30,245 +35,218 @@ export interface FoundPacks {
   considered: number;
 }
 
-/** A pack is best value only when at least this share of kits holds the band. */
-export const valueYield = 0.99;
-/** Below the wanted yield, since a pack a little off the target can be in the band a little more often. */
-const hopelessYield = 0.98;
-const shortlistLength = 48;
-const framesShortlisted = 120;
+interface Pool {
+  /** The closest of every capacitor, and all steered, tuned or trimmed packs, nearest first. */
+  closest: Candidate[];
+  bestValue: Candidate | null;
+  steadiest: Steady | null;
+  considered: number;
+}
 
 /**
- * Finds packs for a brief on a shelf, ranked. *Closest* is exact over the whole space: no stocked
- * combination that the rules allow is nearer to the target by |ln(f/target)|. *Best value* is the
- * lowest price among shortlisted packs of which at least 99 % hold the band; *steadiest* has the
- * guaranteed band whose worse end is nearest to the target. Ties are broken by price, part count and
- * ids. The further packs differ from one another in capacitor or comparator.
- * `tables` must have been formed from the shelf's resistors; formed anew when left out. Empty when no frame of the shelf can run the brief.
+ * Finds packs for a brief on a shelf, ranked. *Closest* has the least |ln(f/target)| of every
+ * combination that the shelf holds and the rules allow; *best value* is the cheapest of which at
+ * least 99 % of kits hold the band; *steadiest* has the guaranteed band whose worse end is nearest to
+ * the target. Ties are broken by price, part count and ids. The packs after the winners differ from
+ * one another in their capacitor and go by the asked rank. Empty when nothing on the shelf can run
+ * the brief.
  */
 export function findPacks(
-  shelf: Shelf,
+  shelf: PreparedShelf,
   brief: SearchBrief,
   rank: Rank,
   limit: number,
-  tables: TimingTables = formTimingTables(shelf.resistors),
 ): FoundPacks {
-  const frames = framesFor(shelf, brief);
-  const aimed = frames.map((frame) => aimFrame(frame, brief));
-  const closest = aimed
-    .flatMap((frame) => nearestCandidates(frame, tables.all, brief, 1))
-    .sort(byCloseness);
-  const considered = frames.length * tables.all.ohms.length;
+  const { closest, bestValue, steadiest, considered } = searchPool(shelf, brief);
   if (closest.length === 0) return { packs: [], considered };
-  const steadiest = findSteadiest(aimed, tables, brief);
   const winners: Record<Rank, Candidate | null> = {
     closest: closest[0]!,
-    'best-value': betterValue(findBestValue(aimed, tables, brief), steadiest, brief),
-    steadiest,
+    'best-value': bestValue,
+    steadiest: steadiest?.candidate ?? null,
   };
-  const packs = arrange(winners, rank, closest, limit).map((candidate) =>
-    promise(candidate, brief),
-  );
+  const packs = arrange(winners, rank, closest, limit, brief, shelf);
   for (const pack of packs) {
     pack.wins = (Object.keys(winners) as Rank[]).filter((name) => isSamePack(winners[name], pack));
   }
   return { packs, considered };
 }
 
-/** The steadiest pack alone, with its promise; null when no frame of the shelf can run the brief. */
-export function findSteadiestPack(
-  shelf: Shelf,
-  brief: SearchBrief,
-  tables: TimingTables = formTimingTables(shelf.resistors),
-): RankedPack | null {
-  const aimed = framesFor(shelf, brief).map((frame) => aimFrame(frame, brief));
-  const steadiest = findSteadiest(aimed, tables, brief);
-  return steadiest === null ? null : { ...promise(steadiest, brief), wins: ['steadiest'] };
+/** The steadiest pack alone, with its promise; null when nothing on the shelf can run the brief. */
+export function findSteadiestPack(shelf: PreparedShelf, brief: SearchBrief): RankedPack | null {
+  const { steadiest } = searchPool(shelf, brief);
+  return steadiest && { ...promise(steadiest.candidate, brief, shelf), wins: ['steadiest'] };
 }
 
-/** The winner of the asked rank first, then the other winners, then varied close packs. */
+function searchPool(shelf: PreparedShelf, brief: SearchBrief): Pool {
+  const offers = listOffers(shelf.values, brief.quantity);
+  const capacitors = shelf.shelf.capacitors.filter((part) => capacitorSuits(part, brief));
+  const stock = { table: shelf.table, offers, quantity: brief.quantity };
+  const aimed = aimFrames(headsFor(shelf, brief), capacitors, stock, brief);
+  const combinations = aimed.length * shelf.table.ohms.length;
+  if (brief.care === 'trimmer-fitted' || brief.care === 'bench-tuned') {
+    const fitted =
+      brief.care === 'bench-tuned'
+        ? tunedPacks(aimed, brief, shelf)
+        : aimed.flatMap((frame) => trimmedPack(frame, brief, shelf) ?? []);
+    return poolOf(fitted, null, null, combinations, brief, shelf);
+  }
+  const steered = steeredPacks(shelf, capacitors, offers, brief);
+  return poolOf(
+    [...closestByCapacitor(aimed, brief), ...steered].sort(byCloseness),
+    findBestValue(aimed, brief, shelf),
+    findSteadiest(aimed, brief, shelf),
+    combinations + steered.length,
+    brief,
+    shelf,
+  );
+}
+
+/** Picks the winners over a list and what was found beside it. */
+function poolOf(
+  listed: readonly Candidate[],
+  bestValue: Candidate | null,
+  steadiest: Steady | null,
+  considered: number,
+  brief: SearchBrief,
+  shelf: PreparedShelf,
+): Pool {
+  const others = listed.filter(
+    (candidate) => candidate.timing.kind !== 'single' || brief.care === 'bench-tuned',
+  );
+  return {
+    closest: [...listed].sort(byCloseness),
+    bestValue: cheapestThatHolds(others, bestValue, brief, shelf),
+    steadiest: steadiestOf(others, steadiest, brief, shelf),
+    considered,
+  };
+}
+
+/** The cheapest of a list that holds the band and is cheaper than the best so far. */
+function cheapestThatHolds(
+  list: readonly Candidate[],
+  before: Candidate | null,
+  brief: SearchBrief,
+  shelf: PreparedShelf,
+): Candidate | null {
+  for (const candidate of [...list].sort(byValue)) {
+    if (before !== null && byValue(candidate, before) >= 0) return before;
+    if (candidate.distance > -Math.log1p(-brief.band)) continue;
+    if (holdsBand(candidate, brief, shelf)) return candidate;
+  }
+  return before;
+}
+
+function steadiestOf(
+  list: readonly Candidate[],
+  before: Steady | null,
+  brief: SearchBrief,
+  shelf: PreparedShelf,
+): Steady | null {
+  const queue = list
+    .map((candidate) => ({ candidate, bound: leastEnd(candidate, brief) }))
+    .sort((a, b) => a.bound - b.bound);
+  let best = before;
+  for (const { candidate, bound } of queue) {
+    if (best !== null && bound > best.end) break;
+    best = steadier(best, steadyOf(candidate, brief, shelf));
+  }
+  return best;
+}
+
+/** Less than the worse end of a candidate: what its capacitor alone leaves. */
+function leastEnd({ frame, timing, distance }: Candidate, brief: SearchBrief): number {
+  const { capacitor, head } = frame;
+  if (timing.kind === 'trimmed') return 0.85 * capacitor.temperatureSpread;
+  if (brief.care === 'bench-tuned') {
+    return 0.85 * (brief.meterUncertainty + capacitor.temperatureSpread);
+  }
+  const half = capacitor.tolerance + capacitor.temperatureSpread + head.thresholds.r3.tolerance;
+  return Math.tanh(0.8 * half) + Math.max(0, -Math.expm1(-distance) - half);
+}
+
+/** The winner of the asked rank first, then the other winners, then varied packs by the asked rank. */
 function arrange(
   winners: Record<Rank, Candidate | null>,
   rank: Rank,
   closest: readonly Candidate[],
   limit: number,
-): Candidate[] {
-  const order: Rank[] = [rank, 'best-value', 'closest', 'steadiest'];
+  brief: SearchBrief,
+  shelf: PreparedShelf,
+): RankedPack[] {
   const chosen: Candidate[] = [];
   const add = (candidate: Candidate | null) => {
-    if (
-      candidate &&
-      chosen.length < limit &&
-      !chosen.some((other) => isSamePack(other, candidate))
-    ) {
-      chosen.push(candidate);
-    }
+    if (candidate && !chosen.some((other) => isSamePack(other, candidate))) chosen.push(candidate);
   };
-  order.forEach((name) => add(winners[name]));
+  ([rank, 'best-value', 'closest', 'steadiest'] as Rank[]).forEach((name) => add(winners[name]));
+  const wanted = Math.max(0, limit - chosen.length);
   const seen = new Set(chosen.map((candidate) => candidate.frame.capacitor.id));
-  for (const candidate of closest) {
-    if (chosen.length >= limit) break;
-    if (seen.has(candidate.frame.capacitor.id)) continue;
-    seen.add(candidate.frame.capacitor.id);
-    add(candidate);
-  }
-  for (const candidate of closest) add(candidate);
-  return chosen;
+  const varied = closest.filter(({ frame }) => {
+    const fresh = !seen.has(frame.capacitor.id);
+    seen.add(frame.capacitor.id);
+    return fresh;
+  });
+  const others = varied.slice(0, Math.max(wanted, variedLooked));
+  const first = chosen.slice(0, limit).map((candidate) => promise(candidate, brief, shelf));
+  const rest = others
+    .map((candidate) => promise(candidate, brief, shelf))
+    .sort(orderFor(rank, brief))
+    .slice(0, wanted);
+  return [...first, ...rest];
 }
 
-/** True when two candidates are made of the same parts joined the same way. */
-export function isSamePack(a: Candidate | null, b: Candidate): boolean {
-  return a !== null && byPriceThenIds(a, b) === 0;
+/** How many packs beside the winners are looked at before the asked rank picks among them. */
+const variedLooked = 16;
+
+function orderFor(rank: Rank, brief: SearchBrief): (a: RankedPack, b: RankedPack) => number {
+  if (rank === 'closest') return byCloseness;
+  const end = (pack: RankedPack) => worseEnd(pack.guaranteed, brief.targetHz);
+  if (rank === 'steadiest') return (a, b) => end(a) - end(b) || byCloseness(a, b);
+  const holds = (pack: RankedPack) => Number(pack.yieldWithinBand >= valueYield);
+  return (a, b) =>
+    holds(b) - holds(a) ||
+    (holds(a) === 1 ? byValue(a, b) : b.yieldWithinBand - a.yieldWithinBand || byValue(a, b));
 }
 
-/**
- * Adds the promise to a candidate: its nominal circuit, guaranteed band and yield.
- */
-export function promise(candidate: Candidate, brief: SearchBrief): RankedPack {
-  const guaranteed = guaranteedBand(candidate, brief);
-  const { r1, r2, r3 } = candidate.frame.thresholds;
+/** Adds the promise to a candidate: its nominal circuit, guaranteed band and yield. */
+export function promise(
+  candidate: Candidate,
+  brief: SearchBrief,
+  shelf: PreparedShelf,
+): RankedPack {
+  const guaranteed = guaranteedBand(candidate, brief, shelf);
   return {
     ...candidate,
-    ...kitYield(candidate, brief, guaranteed),
-    circuit: frameCircuit(candidate.frame, brief, candidate.timingOhms),
+    ...kitYield(candidate, brief, shelf, guaranteed),
+    circuit: candidateCircuit(candidate, brief),
     guaranteed,
-    topology: r1.id === r2.id && r2.id === r3.id ? 'equal-thresholds' : 'shifted-thresholds',
+    topology: topologyOf(candidate, brief),
     wins: [],
   };
 }
 
-/**
- * The cheapest pack that holds the band often enough; the nearer one among equals in price. Frames go
- * by price, so the walk ends once even the cheapest resistor would make the next one dearer.
- */
-function findBestValue(
-  aimed: readonly AimedFrame[],
-  tables: TimingTables,
-  brief: SearchBrief,
-): Candidate | null {
-  const cheapest = Math.min(...tables.all.resistors.map((part) => part.priceMinor));
-  const byPrice = [...aimed].sort((a, b) => a.frame.priceMinor - b.frame.priceMinor);
-  const hopeless = createHopeless(brief);
-  let best: Candidate | null = null;
-  for (const frame of byPrice) {
-    if (best !== null && frame.frame.priceMinor + cheapest > best.priceMinor) break;
-    if (hopeless(frame.frame)) continue;
-    const pool = [
-      ...nearestCandidates(frame, tables.singles, brief, 4),
-      ...[tables.all, tables.good, tables.precise].flatMap((table) =>
-        nearestCandidates(frame, table, brief, 2),
-      ),
-    ].sort(byValue);
-    for (const candidate of pool) {
-      if (best !== null && byValue(candidate, best) >= 0) break;
-      if (candidate.distance <= Math.log1p(brief.band) && holdsBand(candidate, brief, valueYield)) {
-        best = candidate;
-        break;
-      }
-    }
+/** The nominal circuit of a candidate at 25 °C and the nominal supply. */
+export function candidateCircuit({ frame, timing }: Candidate, brief: SearchBrief): Circuit {
+  if (timing.kind === 'steered') {
+    return steeredCircuit(frame, timing.diode, steeredValues(timing, frame), brief);
   }
-  return best;
-}
-
-/** The steadiest pack is best value where it costs less, or where nothing else holds the band. */
-function betterValue(
-  best: Candidate | null,
-  steadiest: Candidate | null,
-  brief: SearchBrief,
-): Candidate | null {
-  if (steadiest === null || (best !== null && byValue(best, steadiest) <= 0)) return best;
-  const { yieldWithinBand } = kitYield(steadiest, brief, guaranteedBand(steadiest, brief));
-  return yieldWithinBand >= valueYield ? steadiest : best;
-}
-
-function byValue(a: Candidate, b: Candidate): number {
-  return a.priceMinor - b.priceMinor || byCloseness(a, b);
-}
-
-/**
- * Tells frames whose capacitor and thresholds alone spread too far: a perfect timing resistor that hit
- * the target exactly would not hold the band. Remembered by tolerances, which few frames differ in.
- */
-function createHopeless(brief: SearchBrief): (frame: Frame) => boolean {
-  const known = new Map<string, boolean>();
-  return (frame) => {
-    const { capacitor, thresholds } = frame;
-    const { r1, r2, r3 } = thresholds;
-    const key = [
-      capacitor.tolerance,
-      capacitor.temperatureCoefficientPerKelvin,
-      ...[r1, r2, r3].map((part) => part.tolerance),
-      r1.ohms / r3.ohms,
-      r2.ohms / r3.ohms,
-    ].join();
-    let answer = known.get(key);
-    if (answer === undefined) {
-      answer = !holdsBandAtBest(perfectCandidate(frame, brief), brief, hopelessYield);
-      known.set(key, answer);
-    }
-    return answer;
-  };
-}
-
-function perfectCandidate(frame: Frame, brief: SearchBrief): Candidate {
-  const coefficient = -frame.capacitor.temperatureCoefficientPerKelvin;
+  const { head, capacitor } = frame;
+  const circuit = headCircuit(head, brief);
+  const siemens = insulationSiemens(capacitor);
   return {
-    frame,
-    timingOhms: 1,
-    first: {
-      ...frame.thresholds.r3,
-      ohms: 1,
-      tolerance: 0,
-      temperatureCoefficientPerKelvin: coefficient,
+    ...circuit,
+    timing: { kind: 'single', ohms: timing.ohms },
+    capacitor: {
+      ...circuit.capacitor,
+      farads: capacitor.farads,
+      leakageOhms: siemens > 0 ? 1 / siemens : null,
+      leakageAmps: capacitor.leakageAmps,
     },
-    second: null,
-    join: null,
-    frequencyHz: brief.targetHz,
-    distance: 0,
-    priceMinor: 0,
   };
 }
 
-/** Tolerances of a frame's own parts, a quick bound by which frames are shortlisted. */
-function frameTolerance({ capacitor, thresholds: { r1, r2, r3 } }: Frame): number {
-  return (
-    capacitor.tolerance +
-    capacitor.temperatureSpread +
-    0.36 * (r1.tolerance + r2.tolerance) +
-    0.72 * r3.tolerance
-  );
-}
-
-/** The same for a whole candidate, its distance from the target included. */
-function passiveTolerance(candidate: Candidate): number {
-  const timing = Math.max(candidate.first.tolerance, candidate.second?.tolerance ?? 0);
-  return candidate.distance + timing + frameTolerance(candidate.frame);
-}
-
-function findSteadiest(
-  aimed: readonly AimedFrame[],
-  tables: TimingTables,
-  brief: SearchBrief,
-): Candidate | null {
-  const reaching = aimed.filter((frame) => frame.reaches);
-  const tightest = (reaching.length > 0 ? reaching : [...aimed])
-    .sort((a, b) => frameTolerance(a.frame) - frameTolerance(b.frame))
-    .slice(0, framesShortlisted);
-  const pool = tightest
-    .flatMap((frame) =>
-      [tables.precise, tables.good, tables.all].flatMap((table) =>
-        nearestCandidates(frame, table, brief, 1),
-      ),
-    )
-    .sort((a, b) => passiveTolerance(a) - passiveTolerance(b) || byPriceThenIds(a, b))
-    .slice(0, shortlistLength);
-  let best: Candidate | null = null;
-  let bestEnd = Number.POSITIVE_INFINITY;
-  for (const candidate of pool) {
-    const end = worseEnd(guaranteedBand(candidate, brief), brief.targetHz);
-    if (end < bestEnd - 1e-12) {
-      best = candidate;
-      bestEnd = end;
-    }
-  }
-  return best;
+function topologyOf({ timing, frame }: Candidate, brief: SearchBrief): Topology {
+  if (timing.kind === 'steered') return 'steered';
+  const { r1, r2, r3 } = frame.head.thresholds;
+  const equal = r1.id === r2.id && r2.id === r3.id;
+  return equal && isEqualDuty(brief.duty) ? 'equal-thresholds' : 'shifted-thresholds';
 }

@@ -11,9 +11,11 @@ export const limits = {
   /** Timing and threshold resistors stay this many times above the output's own resistance or pull-up. */
   minOverOutput: 20,
   maxTimingOhms: 1e7,
-  /** Breadboard rows add about 2–5 pF: half a percent of this. */
-  minTimingFarads: 1e-9,
+  /** Stray capacitance, up to 5 pF, would swamp less than this. */
+  minTimingFarads: 1e-10,
   strayFarads: 5e-12,
+  /** A resistor is run at no more than this share of its rated power. */
+  powerShare: 0.5,
   /** Delays may take this part of a period before another comparator must do the work. */
   maxDelayShare: 0.1,
   /**
@@ -30,14 +32,25 @@ export const limits = {
   electrolyticBand: 0.2,
   /** A capacitor is run at no more than this share of its rated voltage. */
   ratedVoltsShare: 0.8,
-  minDuty: 0.2,
-  maxDuty: 0.8,
+  minDuty: 0.05,
+  maxDuty: 0.95,
   /** A duty this near one half needs no shifted thresholds. */
   equalDutyTolerance: 0.005,
   /** Shifted thresholds may miss the asked duty by this much. */
   dutyTolerance: 0.01,
+  /** Steered timing is looked at from this far beside one half; nearer, shifted thresholds do better. */
+  steeredDutyDistance: 0.1,
+  /** A diode's saturation current lies within this factor of the catalogue's; common practice, no source. */
+  saturationFactor: 2,
   /** Input capacitance at the reference node, farads; from memory, typical of small comparators. */
   inputFarads: 1e-11,
+  /** Inputs of idle sections are held apart through resistors between these (facts on unused sections). */
+  minIdleOhms: 1e3,
+  maxIdleOhms: 1e4,
+  /** A maker sets a trimmer to within this share of its track; common practice, no source. */
+  trimmerSetting: 0.005,
+  /** With more distinct values than this on the shelf, only those of E24 and E192 pair up. */
+  maxPairedValues: 2000,
 } as const;
 
 /** True when a comparator can run this brief: supply, speed and output current. */
@@ -67,6 +80,11 @@ export function bearsLoad(
   const pull = 1 / r1.ohms + 1 / r3.ohms;
   const upper = pull / (pull + 1 / r2.ohms);
   return brief.load.amps * part.highOhms <= limits.maxLoadDrop * (1 - upper) * brief.supplyVolts;
+}
+
+/** True when a comparator has a section to spare that can drive the LED. */
+export function buffersLoad(part: StockedComparator, brief: SearchBrief): boolean {
+  return brief.load !== null && part.sections >= 2;
 }
 
 /** True when a capacitor may set the time for this brief. Class-2 ceramics never do. */
@@ -103,10 +121,28 @@ export function idealPullUpOhms(brief: SearchBrief): number {
   return brief.supplyVolts / 5e-4;
 }
 
-/** Lowest timing resistance that keeps the duty near the asked one against output resistance and pull-up. */
-export function lowestTimingOhms(part: StockedComparator, pullUpOhms: number | null): number {
+/**
+ * Lowest timing resistance, in ohms: it keeps the duty near the asked one against output resistance
+ * and pull-up, and even with the whole supply across it takes half the power that the shelf's
+ * smallest resistor is rated for.
+ */
+export function lowestTimingOhms(
+  part: StockedComparator,
+  pullUpOhms: number | null,
+  brief: SearchBrief,
+  smallestWatts: number,
+): number {
   const output = Math.max(part.highOhms, part.lowOhms, pullUpOhms ?? 0);
-  return Math.max(limits.minTimingOhms, limits.minOverOutput * output);
+  return Math.max(
+    limits.minTimingOhms,
+    limits.minOverOutput * output,
+    brief.maxSupplyVolts ** 2 / (limits.powerShare * smallestWatts),
+  );
+}
+
+/** True when a resistor across up to `volts` stays under its share of rated power. */
+export function bearsPower(part: StockedResistor, volts: number): boolean {
+  return volts ** 2 <= limits.powerShare * part.ratedWatts * part.ohms;
 }
 
 /** Ideal series resistor of the LED, in ohms; not positive when the supply is too low for the LED. */

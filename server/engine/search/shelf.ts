@@ -6,6 +6,8 @@ export interface Shelf {
   resistors: readonly StockedResistor[];
   capacitors: readonly StockedCapacitor[];
   comparators: readonly StockedComparator[];
+  diodes: readonly StockedDiode[];
+  trimmers: readonly StockedTrimmer[];
 }
 
 interface Stocked {
@@ -18,12 +20,33 @@ interface Stocked {
 export interface StockedResistor extends Stocked {
   ohms: number;
   tolerance: number;
+  /** Signed; every piece of the part is taken to drift by it. */
+  temperatureCoefficientPerKelvin: number;
+  ratedWatts: number;
+}
+
+/** A trimming resistor used as a rheostat; `ohms` is its whole track. */
+export interface StockedTrimmer extends Stocked {
+  ohms: number;
+  tolerance: number;
   temperatureCoefficientPerKelvin: number;
 }
 
+/** A small-signal diode; two of one part steer the charge and discharge paths. */
+export interface StockedDiode extends Stocked {
+  saturationAmps: number;
+  emissionCoefficient: number;
+  energyGapElectronVolts: number;
+  saturationTemperatureExponent: number;
+}
+
 export interface StockedCapacitor extends Stocked {
+  /** Middle of what a piece may measure: the printed value, or the lots' mean where that is used. */
   farads: number;
+  /** A piece lies within ± this fraction of `farads`: the printed tolerance, or the lots' window. */
   tolerance: number;
+  /** Standard deviation as a fraction where lots are measured; null: any value as likely as another. */
+  deviation: number | null;
   dielectric: 'C0G' | 'X7R' | 'film-pp' | 'film-pet' | 'electrolytic';
   ratedVolts: number;
   temperatureCoefficientPerKelvin: number;
@@ -67,7 +90,16 @@ export interface SearchBrief {
   maxCelsius: number;
   quantity: number;
   load: SearchLoad | null;
+  care: CareLevel;
+  /** Uncertainty of the bench's capacitance meter, as a fraction of the reading. */
+  meterUncertainty: number;
 }
+
+/**
+ * How the shop treats a pack. Lot-checked differs from as-stocked by the capacitors on the shelf
+ * alone, whose value and tolerance are then the lots'.
+ */
+export type CareLevel = 'as-stocked' | 'lot-checked' | 'bench-tuned' | 'trimmer-fitted';
 
 /** An LED on the output: forward voltages, and the current it is asked to carry. */
 export interface SearchLoad {

@@ -1,0 +1,173 @@
+import { byValue, type Candidate } from './candidate.ts';
+import { formCandidate, type AimedFrame } from './closest.ts';
+import { densityOfSum, distributionWith, integrals, type Integrals } from './density.ts';
+import { guaranteedBand } from './guaranteed-band.ts';
+import { frameEffects, shiftRange } from './kit-effects.ts';
+import { frameSpread, kitYield, shareWithin, timingSpread, type FrameSpread } from './kit-yield.ts';
+import type { PreparedShelf } from './prepared-shelf.ts';
+import { firstNotBelow } from './resistor-values.ts';
+import type { SearchBrief } from './shelf.ts';
+import { chosenParts, visitChoices } from './timing-choice.ts';
+import { mixedKinds, type TimingKind } from './timing-kinds.ts';
+
+/** A pack is best value only when at least this share of kits holds the band. */
+export const valueYield = 0.99;
+/** Quick bounds are this near to the stated yield. */
+const yieldSlack = 0.002;
+
+/**
+ * The cheapest candidate of which at least 99 % of kits hold the band, the nearer one among equals in
+ * price, over every frame and every timing resistance that the shelf holds. Frames go by price, so
+ * the walk ends once even the cheapest resistor would make the next one dearer. Null when no pack
+ * holds the band.
+ */
+export function findBestValue(
+  aimed: readonly AimedFrame[],
+  brief: SearchBrief,
+  shelf: PreparedShelf,
+): Candidate | null {
+  const cheapest = shelf.shelf.resistors.reduce(
+    (least, part) => Math.min(least, part.priceMinor),
+    Number.POSITIVE_INFINITY,
+  );
+  const kinds = mixedKinds(aimed[0]?.stock.offers ?? []);
+  const hopeless = rememberHopeless(brief);
+  const queue = aimed
+    .filter((frame) => frame.distance <= -Math.log1p(-brief.band))
+    .sort((a, b) => a.priceMinor - b.priceMinor);
+  let best: Candidate | null = null;
+  for (const frame of queue) {
+    if (best !== null && frame.priceMinor + cheapest > best.priceMinor) break;
+    if (hopeless(frame)) continue;
+    const spread = frameSpread(frame, frame.idealOhms, brief);
+    if (mostOfKinds(spread, kinds, brief) < valueYield - yieldSlack) continue;
+    best = cheapestOfFrame(frame, spread, brief, shelf, best);
+  }
+  return best;
+}
+
+/**
+ * Tells frames whose capacitor and thresholds alone spread too far: with a perfect timing resistor
+ * on the target they would not hold the band. Remembered by what decides it.
+ */
+function rememberHopeless(brief: SearchBrief): (frame: AimedFrame) => boolean {
+  const known = new Map<string, boolean>();
+  return (frame) => {
+    const { capacitor, head } = frame;
+    const { r1, r2, r3 } = head.thresholds;
+    const key = [
+      ...[capacitor, r1, r2, r3].map((part) => part.tolerance),
+      capacitor.deviation,
+      capacitor.temperatureSpread,
+      r1.ohms / r3.ohms,
+      r2.ohms / r3.ohms,
+    ].join();
+    let answer = known.get(key);
+    if (answer === undefined) {
+      const effects = frameEffects(frame, frame.idealOhms, brief)
+        .filter(({ cause }) => cause === 'capacitor' || cause === 'thresholds')
+        .map(({ effect }) => effect);
+      const most = mostWithin(integrals(densityOfSum(effects)), bandWidth(brief), 0);
+      answer = most < valueYield - yieldSlack;
+      known.set(key, answer);
+    }
+    return answer;
+  };
+}
+
+/** Width of the asked band in ln of the rate. */
+function bandWidth({ band }: SearchBrief): number {
+  return Math.log((1 + band) / (1 - band));
+}
+
+/** The most that a timing resistor of any kind and any value could keep in the band. */
+function mostOfKinds(
+  { of, sensitivity, shifts }: FrameSpread,
+  kinds: readonly TimingKind[],
+  brief: SearchBrief,
+): number {
+  let best = 0;
+  for (const { tolerance, coefficientPerKelvin } of kinds) {
+    const { up, down } = shiftRange(shifts, coefficientPerKelvin, sensitivity);
+    const width = bandWidth(brief) - (up - down);
+    if (width > 0) best = Math.max(best, mostWithin(of, width, -sensitivity * tolerance * mixing));
+  }
+  return best;
+}
+
+/** Two like resistors together spread less than one; at best as one of this share of their tolerance. */
+const mixing = 0.5;
+const windowStep = 32;
+
+/** The most that a window of a width can hold, wherever it lies, with one more uniform cause of ±`half`. */
+function mostWithin(of: Integrals, width: number, half: number): number {
+  let best = 0;
+  for (let k = 0; k < of.once.length; k += windowStep) {
+    const to = of.start + k * of.step;
+    const share = distributionWith(of, to, half, 0) - distributionWith(of, to - width, half, 0);
+    if (share > best) best = share;
+  }
+  return best;
+}
+
+function cheapestOfFrame(
+  frame: AimedFrame,
+  spread: FrameSpread,
+  brief: SearchBrief,
+  shelf: PreparedShelf,
+  before: Candidate | null,
+): Candidate | null {
+  let best = before;
+  const { stock, head, idealOhms } = frame;
+  const { table } = stock;
+  const from = idealOhms * (1 - brief.band) * 0.98;
+  const to = (idealOhms / (1 - brief.band)) * 1.02;
+  const leastPrices = cheapestOffers(frame);
+  for (
+    let k = firstNotBelow(table.ohms, Math.max(from, head.minTimingOhms));
+    k < table.ohms.length && table.ohms[k]! <= to;
+    k += 1
+  ) {
+    const secondAt = table.second[k]!;
+    const least = leastPrices[table.first[k]!]! + (secondAt < 0 ? 0 : leastPrices[secondAt]!);
+    if (frame.priceMinor + least > (best?.priceMinor ?? Number.MAX_VALUE)) continue;
+    const offset = spread.sensitivity * Math.log(table.ohms[k]! / idealOhms);
+    visitChoices(stock, k, (first, second) => {
+      const price = frame.priceMinor + first.priceMinor + (second?.priceMinor ?? 0);
+      if (best !== null && price > best.priceMinor) return;
+      if (best !== null && price === best.priceMinor && Math.abs(offset) > 1.2 * best.distance)
+        return;
+      const timing = chosenParts(table, k, { first, second });
+      const estimate = shareWithin(spread, timingSpread(timing, offset), brief);
+      if (estimate < valueYield - yieldSlack) return;
+      const candidate = formCandidate(frame, timing, brief);
+      if (candidate === null || (best !== null && byValue(candidate, best) >= 0)) return;
+      const actual = Math.log(candidate.frequencyHz / brief.targetHz);
+      if (
+        shareWithin(spread, timingSpread(timing, actual), brief) >= valueYield ||
+        (estimate < valueYield && holdsBand(candidate, brief, shelf))
+      ) {
+        best = candidate;
+      }
+    });
+  }
+  return best;
+}
+
+const knownPrices = new WeakMap<object, Float64Array>();
+
+/** The least price of each value's offers; very much for none. */
+function cheapestOffers({ stock: { offers } }: AimedFrame): Float64Array {
+  let prices = knownPrices.get(offers);
+  if (!prices) {
+    prices = Float64Array.from(offers, (parts) => parts[0]?.priceMinor ?? Number.MAX_VALUE);
+    knownPrices.set(offers, prices);
+  }
+  return prices;
+}
+
+/** Whether at least 99 % of a candidate's kits hold the band, as its promise says. */
+export function holdsBand(candidate: Candidate, brief: SearchBrief, shelf: PreparedShelf): boolean {
+  const guaranteed = guaranteedBand(candidate, brief, shelf);
+  return kitYield(candidate, brief, shelf, guaranteed).yieldWithinBand >= valueYield;
+}

@@ -1,0 +1,158 @@
+import { periodWith, type PreparedSingle } from '../prepared-single.ts';
+import { insulationSiemens } from './aim.ts';
+import { cornerReducer, type Head, type HeadCorner } from './heads.ts';
+import { limits } from './rules.ts';
+import type { SearchBrief, StockedCapacitor } from './shelf.ts';
+
+export type Corner = 'slow' | 'fast';
+
+const referenceCelsius = 25;
+
+/** A resistor's factor at a temperature, by its signed coefficient; 1 at 25 °C. */
+export function drift(coefficientPerKelvin: number, celsius: number): number {
+  return 1 + coefficientPerKelvin * (celsius - referenceCelsius);
+}
+
+/** ln of `drift` by its series, which is within 1e-9 of it up to 1000 ppm/K over 100 K and quicker. */
+export function logDrift(coefficientPerKelvin: number, celsius: number): number {
+  const x = coefficientPerKelvin * (celsius - referenceCelsius);
+  return x * (1 - x * (1 / 2 - x * (1 / 3 - x * (1 / 4 - x * (1 / 5 - x * (1 / 6 - x / 7))))));
+}
+
+/**
+ * The temperatures at which the rate can be extreme: both ends of the ambient range, and 25 °C when
+ * it lies between, where drifts that cancel have their turning point.
+ */
+export function extremeCelsius({ minCelsius, maxCelsius }: SearchBrief): number[] {
+  const middle = Math.min(maxCelsius, Math.max(minCelsius, referenceCelsius));
+  return [...new Set([minCelsius, middle, maxCelsius])];
+}
+
+/** What moves a part's value. */
+export interface Spreading {
+  tolerance: number;
+  temperatureCoefficientPerKelvin: number;
+}
+
+/** Value of a stocked part at a corner: its tolerance holds at 25 °C, and it drifts from there. */
+export function atCorner(
+  value: number,
+  { tolerance, temperatureCoefficientPerKelvin }: Spreading,
+  sign: number,
+  celsius: number,
+): number {
+  return value * (1 + sign * tolerance) * drift(temperatureCoefficientPerKelvin, celsius);
+}
+
+/**
+ * Capacitance in farads at a corner and a temperature: tolerance, drift, what the dielectric may
+ * change beyond it, and at the slow corner up to 5 pF of stray capacitance.
+ */
+export function capacitanceAt(part: StockedCapacitor, corner: Corner, celsius: number): number {
+  const sign = corner === 'slow' ? 1 : -1;
+  const own = atCorner(part.farads, part, sign, celsius) * (1 + sign * part.temperatureSpread);
+  return corner === 'slow' ? own + limits.strayFarads : own;
+}
+
+/**
+ * All corners of a head that do not depend on timing resistor and capacitor, reduced once: by corner,
+ * then by temperature as in `extremeCelsius`.
+ */
+export interface HeadCorners {
+  celsius: readonly number[];
+  slow: readonly (readonly PreparedSingle[])[];
+  fast: readonly (readonly PreparedSingle[])[];
+}
+
+const known = new WeakMap<Head, HeadCorners>();
+
+/**
+ * The corners of a head: supply from empty to fresh, output resistance from half to twice the
+ * typical, delay from half the typical to the maximum, bias and offset from none to the maximum with
+ * either sign, LED voltage. The rate is monotone in R1–R3 (model section 6), so those stand at one
+ * corner each: fastest at R1−, R2−, R3+. It is not monotone in offset and bias, so each corner holds
+ * the undisturbed middle and all four signs (model section 8.5). Kept with the head.
+ */
+export function headCorners(head: Head, brief: SearchBrief): HeadCorners {
+  let corners = known.get(head);
+  if (!corners) {
+    const celsius = extremeCelsius(brief);
+    const reduce = cornerReducer(head, brief);
+    const combinations = comparatorCorners(head, brief);
+    const at = (corner: Corner) =>
+      celsius.map((each) => {
+        const passive = passiveCorner(head, corner, each);
+        return combinations.map((one) => reduce(Object.assign(passive, one)));
+      });
+    corners = { celsius, slow: at('slow'), fast: at('fast') };
+    known.set(head, corners);
+  }
+  return corners;
+}
+
+const disturbances = [
+  [0, 0],
+  [1, 1],
+  [1, -1],
+  [-1, 1],
+  [-1, -1],
+] as const;
+
+/** What a corner sets apart from offset, bias, supply, output and LED. */
+export function passiveCorner(head: Head, corner: Corner, celsius: number): HeadCorner {
+  const { comparator: part, thresholds } = head;
+  const { r1, r2, r3 } = thresholds;
+  const sign = corner === 'slow' ? 1 : -1;
+  const slow = corner === 'slow';
+  return {
+    r1Ohms: atCorner(r1.ohms, r1, sign, celsius),
+    r2Ohms: atCorner(r2.ohms, r2, sign, celsius),
+    r3Ohms: atCorner(r3.ohms, r3, -sign, celsius),
+    delayLowHighSeconds: slow ? part.maxDelaySeconds : part.delayLowHighSeconds / 2,
+    delayHighLowSeconds: slow ? part.maxDelaySeconds : part.delayHighLowSeconds / 2,
+  };
+}
+
+/** Every combination of the figures that are not monotone or that pull both ways. */
+export function comparatorCorners(head: Head, brief: SearchBrief): HeadCorner[] {
+  const { maxOffsetVolts, maxInputBiasAmps } = head.comparator;
+  const lit = brief.load !== null && !head.buffered ? brief.load : null;
+  const forward = lit ? [...new Set([lit.minForwardVolts, lit.maxForwardVolts])] : [undefined];
+  const supplies = [...new Set([brief.minSupplyVolts, brief.maxSupplyVolts])];
+  return supplies.flatMap((supplyVolts) =>
+    forward.flatMap((forwardVolts) =>
+      [0.5, 2].flatMap((outputFactor) =>
+        disturbances.map(([offset, bias]): HeadCorner => ({
+          supplyVolts,
+          outputFactor,
+          offsetVolts: offset * maxOffsetVolts,
+          biasAmps: bias * maxInputBiasAmps,
+          ...(forwardVolts === undefined ? {} : { forwardVolts }),
+        })),
+      ),
+    ),
+  );
+}
+
+/**
+ * Slowest or fastest rate in hertz over the corners of a head at the temperature of place `t`, with
+ * timing resistance and capacitance as they are there. 0 at the slow end when a corner does not
+ * oscillate.
+ */
+export function extremeRate(
+  corners: HeadCorners,
+  corner: Corner,
+  t: number,
+  timingOhms: number,
+  farads: number,
+  capacitor: StockedCapacitor,
+): number {
+  const leakage = insulationSiemens(capacitor);
+  let extreme = corner === 'slow' ? Number.POSITIVE_INFINITY : 0;
+  for (const prepared of corners[corner][t]!) {
+    const period = periodWith(prepared, timingOhms, farads, leakage, capacitor.leakageAmps);
+    const hertz = period > 0 ? 1 / period : 0;
+    extreme = corner === 'slow' ? Math.min(extreme, hertz) : Math.max(extreme, hertz);
+  }
+  return extreme;
+}

@@ -1,0 +1,237 @@
+import { byPriceThenIds, type Candidate } from './candidate.ts';
+import { formCandidate, type AimedFrame } from './closest.ts';
+import { guaranteedBand, worseEnd } from './guaranteed-band.ts';
+import { capacitanceAt, extremeRate, headCorners, logDrift } from './head-corners.ts';
+import { timingSensitivity } from './kit-effects.ts';
+import type { PreparedShelf } from './prepared-shelf.ts';
+import { firstNotBelow } from './resistor-values.ts';
+import type { SearchBrief, StockedResistor } from './shelf.ts';
+import { mixedKinds, type TimingKind } from './timing-kinds.ts';
+import { chosenParts, visitChoices, type SingleTimingParts } from './timing-choice.ts';
+
+/** A candidate with the worse end of its guaranteed band, as a fraction of the target. */
+export interface Steady {
+  candidate: Candidate;
+  end: number;
+}
+
+const sameEnd = 1e-12;
+
+/** The better of two by the worse end, equals by price and ids. */
+export function steadier(a: Steady | null, b: Steady | null): Steady | null {
+  if (a === null || b === null) return a ?? b;
+  if (Math.abs(a.end - b.end) > sameEnd) return a.end < b.end ? a : b;
+  return byPriceThenIds(a.candidate, b.candidate) <= 0 ? a : b;
+}
+
+/**
+ * The candidate whose guaranteed band has the least worse end, over every frame and every timing
+ * resistance that the shelf holds; null when no frame reaches the target. Frames go by a lower bound
+ * of what they can reach, and within a frame the walk outwards from the middle ends where even a
+ * perfect resistor would be too far off, so nothing that could win is left out.
+ */
+export function findSteadiest(
+  aimed: readonly AimedFrame[],
+  brief: SearchBrief,
+  shelf: PreparedShelf,
+): Steady | null {
+  const kinds = mixedKinds(aimed[0]?.stock.offers ?? []);
+  const tolerance = kinds.reduce((least, kind) => Math.min(least, kind.tolerance), 1);
+  const queue = aimed
+    .filter((frame) => frame.reaches && frame.distance < Number.POSITIVE_INFINITY)
+    .map((frame) => ({ frame, bound: quickBound(frame, tolerance) }))
+    .sort((a, b) => a.bound - b.bound);
+  let best: Steady | null = null;
+  for (const { frame, bound } of queue) {
+    if (best !== null && bound > best.end) break;
+    best = steadiestOfFrame(frame, brief, shelf, kinds, best);
+  }
+  return best;
+}
+
+/**
+ * The period goes with at least this power of R, C and the thresholds' ratio: delays take a tenth of
+ * it at most, and the rest is left for leakage and output resistance.
+ */
+const leastPower = 0.85;
+
+/**
+ * Less than any pack of the frame can reach, from tolerances alone: a band of ratio q about the target
+ * has a worse end of (q − 1)/(q + 1) at least.
+ */
+function quickBound({ capacitor, head }: AimedFrame, timingTolerance: number): number {
+  const { r1, r2, r3 } = head.thresholds;
+  const [x1, x2] = [r1.ohms / (r1.ohms + r3.ohms), r2.ohms / (r2.ohms + r3.ohms)];
+  const log = Math.log1p(r1.ohms / r3.ohms) + Math.log1p(r2.ohms / r3.ohms);
+  const thresholds =
+    (x1 * (r1.tolerance + r3.tolerance) + x2 * (r2.tolerance + r3.tolerance)) / log;
+  const half =
+    capacitor.tolerance + capacitor.temperatureSpread + timingTolerance + leastPower * thresholds;
+  return Math.tanh(leastPower * half);
+}
+
+/** How far the corners of a frame reach with a perfect timing resistor of the ideal value. */
+interface Reach {
+  celsius: readonly number[];
+  /** ln of slowest and fastest rate over the target, by temperature. */
+  slow: number[];
+  fast: number[];
+  /** −d ln f / d ln R4. */
+  power: number;
+}
+
+function reachOf(frame: AimedFrame, brief: SearchBrief): Reach {
+  const { head, capacitor, idealOhms } = frame;
+  const corners = headCorners(head, brief);
+  const logs = (corner: 'slow' | 'fast') =>
+    corners.celsius.map((celsius, t) => {
+      const farads = capacitanceAt(capacitor, corner, celsius);
+      return Math.log(
+        extremeRate(corners, corner, t, idealOhms, farads, capacitor) / brief.targetHz,
+      );
+    });
+  const power = -timingSensitivity(frame, idealOhms);
+  return { celsius: corners.celsius, slow: logs('slow'), fast: logs('fast'), power };
+}
+
+/** Estimates are this near to the band by the full model, in ln of the rate. */
+const estimateSlack = 2e-4;
+
+function steadiestOfFrame(
+  frame: AimedFrame,
+  brief: SearchBrief,
+  shelf: PreparedShelf,
+  kinds: readonly TimingKind[],
+  before: Steady | null,
+): Steady | null {
+  let best = before;
+  const reach = reachOf(frame, brief);
+  if (best !== null && leastEnd(reach, kinds) - estimateSlack > best.end) return best;
+  const { table } = frame.stock;
+  const start = firstNotBelow(table.ohms, frame.idealOhms * Math.exp(middleOf(reach)));
+  const windowNow = () => windowFor(reach, kinds, (best?.end ?? 1) + estimateSlack);
+  let [from, to] = windowNow();
+  for (const step of [-1, 1]) {
+    for (let k = step < 0 ? start - 1 : start; k >= 0 && k < table.ohms.length; k += step) {
+      if (table.ohms[k]! < frame.head.minTimingOhms) break;
+      const away = Math.log(table.ohms[k]! / frame.idealOhms);
+      if (step < 0 ? away < from : away > to) break;
+      visitChoices(frame.stock, k, (first, second) => {
+        const end = estimatedEnd(frame, reach, k, first, second, away);
+        if (best !== null && end - estimateSlack > best.end) return;
+        const found = assess(frame, chosenParts(table, k, { first, second }), brief, shelf);
+        const better = steadier(best, found);
+        if (better === best) return;
+        best = better;
+        [from, to] = windowNow();
+      });
+    }
+  }
+  return best;
+}
+
+/** Where the resistance should lie, in ln from the ideal one, for both ends to be equally far. */
+function middleOf({ slow, fast }: Reach): number {
+  return (Math.max(...fast) + Math.min(...slow)) / 2;
+}
+
+/**
+ * Worse end when the resistance is `away` (ln) from the ideal one, spreads by `tolerance` and drifts
+ * by `coefficientPerKelvin`.
+ */
+function endAt(
+  { slow, fast, celsius, power }: Reach,
+  away: number,
+  tolerance: number,
+  coefficientPerKelvin: number,
+): number {
+  let [low, high] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
+  for (let t = 0; t < celsius.length; t += 1) {
+    const drifted = power * logDrift(coefficientPerKelvin, celsius[t]!);
+    low = Math.min(low, slow[t]! - drifted);
+    high = Math.max(high, fast[t]! - drifted);
+  }
+  return worseOf(low, high, power, away, tolerance);
+}
+
+function worseOf(low: number, high: number, power: number, away: number, tolerance: number) {
+  return Math.max(
+    Math.expm1(high - power * (away + Math.log1p(-tolerance))),
+    -Math.expm1(low - power * (away + Math.log1p(tolerance))),
+  );
+}
+
+/** ln of the extreme rates with a resistor of a kind at the ideal value. */
+function endsOf({ slow, fast, celsius, power }: Reach, kind: TimingKind): [number, number] {
+  let [low, high] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
+  for (let t = 0; t < celsius.length; t += 1) {
+    const drifted = power * logDrift(kind.coefficientPerKelvin, celsius[t]!);
+    low = Math.min(low, slow[t]! - drifted);
+    high = Math.max(high, fast[t]! - drifted);
+  }
+  return [low - power * Math.log1p(kind.tolerance), high - power * Math.log1p(-kind.tolerance)];
+}
+
+/** The least worse end that a resistor of any of the kinds and of any value could reach. */
+function leastEnd(reach: Reach, kinds: readonly TimingKind[]): number {
+  return kinds.reduce((least, kind) => {
+    const [low, high] = endsOf(reach, kind);
+    return Math.min(least, Math.tanh((high - low) / 2));
+  }, 1);
+}
+
+/**
+ * How far from the ideal resistance (ln, downwards and upwards) a resistor of some kind can be for a
+ * worse end under `end`.
+ */
+function windowFor(reach: Reach, kinds: readonly TimingKind[], end: number): [number, number] {
+  let [from, to] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
+  for (const kind of kinds) {
+    const [low, high] = endsOf(reach, kind);
+    const least = (high - Math.log1p(end)) / reach.power;
+    const most = (low - (end < 1 ? Math.log1p(-end) : -50)) / reach.power;
+    if (least > most) continue;
+    from = Math.min(from, least);
+    to = Math.max(to, most);
+  }
+  return [from, to];
+}
+
+function estimatedEnd(
+  frame: AimedFrame,
+  reach: Reach,
+  k: number,
+  first: StockedResistor,
+  second: StockedResistor | null,
+  away: number,
+): number {
+  if (second === null) {
+    return endAt(reach, away, first.tolerance, first.temperatureCoefficientPerKelvin);
+  }
+  const ohms = frame.stock.table.ohms[k]!;
+  const parallel = frame.stock.table.parallel[k] === 1;
+  const a = parallel ? ohms / first.ohms : first.ohms / ohms;
+  const b = 1 - a;
+  return endAt(
+    reach,
+    away,
+    a * first.tolerance + b * second.tolerance,
+    a * first.temperatureCoefficientPerKelvin + b * second.temperatureCoefficientPerKelvin,
+  );
+}
+
+function assess(
+  frame: AimedFrame,
+  timing: SingleTimingParts,
+  brief: SearchBrief,
+  shelf: PreparedShelf,
+): Steady | null {
+  const candidate = formCandidate(frame, timing, brief);
+  return candidate === null ? null : steadyOf(candidate, brief, shelf);
+}
+
+/** A candidate with its worse end. */
+export function steadyOf(candidate: Candidate, brief: SearchBrief, shelf: PreparedShelf): Steady {
+  const end = worseEnd(guaranteedBand(candidate, brief, shelf), brief.targetHz);
+  return { candidate, end };
+}

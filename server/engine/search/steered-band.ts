@@ -1,0 +1,153 @@
+import type { Candidate, SteeredTimingParts } from './candidate.ts';
+import type { UniformEffect } from './density.ts';
+import type { GuaranteedBand } from './guaranteed-band.ts';
+import {
+  atCorner,
+  capacitanceAt,
+  comparatorCorners,
+  drift,
+  extremeCelsius,
+  passiveCorner,
+  type Corner,
+} from './head-corners.ts';
+import type { HeadCorner } from './heads.ts';
+import type { ConditionShift, KitEffect } from './kit-effects.ts';
+import { limits } from './rules.ts';
+import type { SearchBrief, StockedResistor } from './shelf.ts';
+import { steeredCycle, steeredValues, type SteeredValues } from './steered.ts';
+
+type SteeredCandidate = Candidate<SteeredTimingParts>;
+
+/**
+ * The guaranteed band of a steered pack by the full model. As for a single timing resistor, with the
+ * diodes' saturation current between half and twice the catalogue's; more output resistance and less
+ * saturation current slow every kit, so both stand at the corner's own end.
+ */
+export function steeredBand(candidate: SteeredCandidate, brief: SearchBrief): GuaranteedBand {
+  const { frame, timing } = candidate;
+  const band = { minHz: Number.POSITIVE_INFINITY, maxHz: 0 };
+  for (const corner of ['slow', 'fast'] as Corner[]) {
+    const slow = corner === 'slow';
+    const sign = slow ? 1 : -1;
+    const outputFactor = slow ? 2 : 0.5;
+    const kits = comparatorCorners(frame.head, brief).filter(
+      (each) => each.outputFactor === outputFactor,
+    );
+    for (const celsius of extremeCelsius(brief)) {
+      const values: SteeredValues = {
+        chargeOhms: atCorner(timing.charge.ohms, timing.charge, sign, celsius),
+        dischargeOhms: atCorner(timing.discharge.ohms, timing.discharge, sign, celsius),
+        farads: capacitanceAt(frame.capacitor, corner, celsius),
+        celsius,
+        saturationAmps: timing.diode.saturationAmps * limits.saturationFactor ** -sign,
+        drained: true,
+      };
+      const passive = passiveCorner(frame.head, corner, celsius);
+      for (const kit of kits) {
+        const all = { ...passive, ...kit };
+        const hertz = steeredCycle(frame, timing.diode, values, brief, all)?.frequencyHz ?? 0;
+        if (slow) band.minHz = Math.min(band.minHz, hertz);
+        else band.maxHz = Math.max(band.maxHz, hertz);
+      }
+    }
+  }
+  return band;
+}
+
+/** A circuit that does not oscillate at an end counts as this much slow. */
+const stopped = -50;
+
+/** What makes the kits of a steered pack differ, as `frameEffects` and `timingEffects` together. */
+export function steeredEffects(candidate: SteeredCandidate, brief: SearchBrief): KitEffect[] {
+  const { frame, timing, frequencyHz } = candidate;
+  const nominal = steeredValues(timing, frame);
+  const { comparator: part, thresholds } = frame.head;
+  const logAt = (values: Partial<SteeredValues>, corner: HeadCorner = {}) => {
+    const cycle = steeredCycle(frame, timing.diode, { ...nominal, ...values }, brief, corner);
+    return cycle === null ? stopped : Math.log(cycle.frequencyHz / frequencyHz);
+  };
+  const along = (at: (u: number) => number): UniformEffect => ({
+    kind: 'uniform',
+    low: at(-1),
+    middle: at(0),
+    high: at(1),
+  });
+  const within = (value: number, tolerance: number) => (u: number) => value * (1 + u * tolerance);
+  const threshold = (name: 'r1Ohms' | 'r2Ohms' | 'r3Ohms', { ohms, tolerance }: StockedResistor) =>
+    along((u) => logAt({}, { [name]: within(ohms, tolerance)(u) }));
+  const timed = (name: 'chargeOhms' | 'dischargeOhms', { ohms, tolerance }: StockedResistor) =>
+    along((u) => logAt({ [name]: within(ohms, tolerance)(u) }));
+  const { capacitor } = frame;
+  const capacity = (tolerance: number) =>
+    along((u) => logAt({ farads: within(capacitor.farads, tolerance)(u) }));
+  const delay = (typical: number, u: number) =>
+    ((1 - u) / 2) * (typical / 2) + ((1 + u) / 2) * part.maxDelaySeconds;
+  const effects: [KitEffect['cause'], UniformEffect][] = [
+    ['thresholds', threshold('r1Ohms', thresholds.r1)],
+    ['thresholds', threshold('r2Ohms', thresholds.r2)],
+    ['thresholds', threshold('r3Ohms', thresholds.r3)],
+    ['timing', timed('chargeOhms', timing.charge)],
+    ['timing', timed('dischargeOhms', timing.discharge)],
+    ['capacitor', capacity(capacitor.tolerance)],
+    ['capacitor', capacity(capacitor.temperatureSpread)],
+    [
+      'capacitor',
+      along((u) => logAt({ farads: capacitor.farads + (limits.strayFarads * (1 + u)) / 2 })),
+    ],
+    [
+      'timing',
+      along((u) =>
+        logAt({ saturationAmps: nominal.saturationAmps * limits.saturationFactor ** u }),
+      ),
+    ],
+    ['comparator', along((u) => logAt({}, { offsetVolts: u * part.maxOffsetVolts }))],
+    ['comparator', along((u) => logAt({}, { biasAmps: u * part.maxInputBiasAmps }))],
+    ['comparator', along((u) => logAt({}, { outputFactor: 1.25 + 0.75 * u }))],
+    [
+      'comparator',
+      along((u) =>
+        logAt(
+          {},
+          {
+            delayLowHighSeconds: delay(part.delayLowHighSeconds, u),
+            delayHighLowSeconds: delay(part.delayHighLowSeconds, u),
+          },
+        ),
+      ),
+    ],
+  ];
+  return effects.map(([cause, effect]) => ({ cause, effect }));
+}
+
+/** As `conditionShifts`, with the drift of the steering resistors and the diodes in it. */
+export function steeredShifts(candidate: SteeredCandidate, brief: SearchBrief): ConditionShift[] {
+  const { frame, timing, frequencyHz } = candidate;
+  const { r1, r2, r3 } = frame.head.thresholds;
+  const { capacitor } = frame;
+  const warm = (part: StockedResistor, celsius: number) =>
+    part.ohms * drift(part.temperatureCoefficientPerKelvin, celsius);
+  const supplies = [...new Set([brief.minSupplyVolts, brief.maxSupplyVolts])];
+  return extremeCelsius(brief).flatMap((celsius) =>
+    supplies.map((supplyVolts) => {
+      const values = {
+        ...steeredValues(timing, frame),
+        chargeOhms: warm(timing.charge, celsius),
+        dischargeOhms: warm(timing.discharge, celsius),
+        farads: capacitor.farads * drift(capacitor.temperatureCoefficientPerKelvin, celsius),
+        celsius,
+      };
+      const cycle = steeredCycle(frame, timing.diode, values, brief, {
+        supplyVolts,
+        r1Ohms: warm(r1, celsius),
+        r2Ohms: warm(r2, celsius),
+        r3Ohms: warm(r3, celsius),
+      });
+      return {
+        volts: supplyVolts,
+        celsius,
+        shift:
+          cycle === null ? Number.NEGATIVE_INFINITY : Math.log(cycle.frequencyHz / frequencyHz),
+      };
+    }),
+  );
+}

@@ -1,0 +1,212 @@
+import type { Circuit } from '../circuit.ts';
+import { analyseCycle, type Cycle } from '../cycle.ts';
+import { insulationSiemens, type Frame } from './aim.ts';
+import type { Candidate, SteeredTimingParts } from './candidate.ts';
+import { demandOf, holdsMore } from './demand.ts';
+import { headCircuit, headsFor, type Head, type HeadCorner } from './heads.ts';
+import type { PreparedShelf } from './prepared-shelf.ts';
+import { firstNotBelow } from './resistor-values.ts';
+import { limits } from './rules.ts';
+import type { SearchBrief, StockedCapacitor, StockedDiode, StockedResistor } from './shelf.ts';
+import type { Offers } from './timing-choice.ts';
+
+/** What a steered circuit has besides its head; ohms and farads as they are at `celsius`. */
+export interface SteeredValues {
+  chargeOhms: number;
+  dischargeOhms: number;
+  farads: number;
+  celsius: number;
+  saturationAmps: number;
+  /** False to leave bias and leakage out, which makes the cycle a closed form. */
+  drained: boolean;
+}
+
+/** The nominal values of a steered pack. */
+export function steeredValues(
+  { charge, discharge, diode }: SteeredTimingParts,
+  { capacitor }: Frame,
+): SteeredValues {
+  return {
+    chargeOhms: charge.ohms,
+    dischargeOhms: discharge.ohms,
+    farads: capacitor.farads,
+    celsius: 25,
+    saturationAmps: diode.saturationAmps,
+    drained: true,
+  };
+}
+
+/** The circuit of a steered pack, nominal or at a corner of its head. */
+export function steeredCircuit(
+  { head, capacitor }: Frame,
+  diode: StockedDiode,
+  values: SteeredValues,
+  brief: SearchBrief,
+  corner: HeadCorner = {},
+): Circuit {
+  const base = headCircuit(head, brief, values.drained ? corner : { ...corner, biasAmps: 0 });
+  const siemens = values.drained ? insulationSiemens(capacitor) : 0;
+  return {
+    ...base,
+    celsius: values.celsius,
+    timing: {
+      kind: 'steered',
+      chargeOhms: values.chargeOhms,
+      dischargeOhms: values.dischargeOhms,
+      diode: {
+        saturationAmps: values.saturationAmps,
+        emissionCoefficient: diode.emissionCoefficient,
+        energyGapElectronVolts: diode.energyGapElectronVolts,
+        saturationTemperatureExponent: diode.saturationTemperatureExponent,
+      },
+    },
+    capacitor: {
+      ...base.capacitor,
+      farads: values.farads,
+      leakageOhms: siemens > 0 ? 1 / siemens : null,
+      leakageAmps: values.drained ? capacitor.leakageAmps : 0,
+    },
+  };
+}
+
+/** Steering resistors stay between these, where diode leakage and output resistance hardly matter. */
+const steeredOhms = { least: 2e3, most: 1e6 };
+const aimSteps = 8;
+
+/**
+ * The steered packs that the rules allow: equal thresholds of the SKU nearest to the ideal, one for
+ * each comparator, capacitor and diode. RC is the stocked resistor nearest by ratio to what the asked
+ * high time needs, RD to what the asked low time needs, both without bias and leakage and between
+ * 2 kΩ and 1 MΩ. Rates are those of the full model; packs whose duty misses the asked one by more
+ * than the duty tolerance are left out.
+ */
+export function steeredPacks(
+  shelf: PreparedShelf,
+  capacitors: readonly StockedCapacitor[],
+  offers: Offers,
+  brief: SearchBrief,
+): Candidate<SteeredTimingParts>[] {
+  if (Math.abs(brief.duty - 0.5) < limits.steeredDutyDistance) return [];
+  const diodes = shelf.shelf.diodes.filter((part) => part.available >= 2 * brief.quantity);
+  if (diodes.length === 0) return [];
+  return firstSets(headsFor(shelf, { ...brief, duty: 0.5 })).flatMap((head) =>
+    capacitors.flatMap((capacitor) =>
+      diodes.flatMap((diode) => {
+        const pack = steeredPack({ head, capacitor }, diode, shelf, offers, brief);
+        return pack === null ? [] : [pack];
+      }),
+    ),
+  );
+}
+
+/** Of each comparator's heads only the first, whose threshold resistors are nearest to the ideal. */
+function firstSets(heads: readonly Head[]): Head[] {
+  return heads.filter((head, k) => heads[k - 1]?.comparator.id !== head.comparator.id);
+}
+
+function steeredPack(
+  frame: Frame,
+  diode: StockedDiode,
+  shelf: PreparedShelf,
+  offers: Offers,
+  brief: SearchBrief,
+): Candidate<SteeredTimingParts> | null {
+  const ideal = idealOhms(frame, diode, brief);
+  if (ideal === null) return null;
+  const charge = nearestOffer(shelf, offers, frame.head, ideal.chargeOhms, brief.quantity, null);
+  if (charge === null) return null;
+  const discharge = nearestOffer(
+    shelf,
+    offers,
+    frame.head,
+    ideal.dischargeOhms,
+    brief.quantity,
+    charge,
+  );
+  if (discharge === null) return null;
+  const timing: SteeredTimingParts = { kind: 'steered', charge, discharge, diode };
+  const cycle = steeredCycle(frame, diode, steeredValues(timing, frame), brief);
+  if (cycle === null || Math.abs(cycle.duty - brief.duty) > limits.dutyTolerance) return null;
+  return {
+    frame,
+    timing,
+    frequencyHz: cycle.frequencyHz,
+    distance: Math.abs(Math.log(cycle.frequencyHz / brief.targetHz)),
+    priceMinor:
+      frame.head.priceMinor +
+      frame.capacitor.priceMinor +
+      charge.priceMinor +
+      discharge.priceMinor +
+      2 * diode.priceMinor,
+  };
+}
+
+/** The cycle of a steered circuit, or null when it does not oscillate. */
+export function steeredCycle(
+  frame: Frame,
+  diode: StockedDiode,
+  values: SteeredValues,
+  brief: SearchBrief,
+  corner: HeadCorner = {},
+): Cycle | null {
+  const cycle = analyseCycle(steeredCircuit(frame, diode, values, brief, corner));
+  return cycle.kind === 'oscillates' ? cycle : null;
+}
+
+/** Steering resistances in ohms for the asked high and low time; null outside the rules' range. */
+function idealOhms(
+  frame: Frame,
+  diode: StockedDiode,
+  brief: SearchBrief,
+): { chargeOhms: number; dischargeOhms: number } | null {
+  const high = brief.duty / brief.targetHz;
+  const low = (1 - brief.duty) / brief.targetHz;
+  // Equal thresholds take ln 2 of a time constant for each half.
+  let chargeOhms = high / (Math.LN2 * frame.capacitor.farads);
+  let dischargeOhms = low / (Math.LN2 * frame.capacitor.farads);
+  const outside = (ohms: number, slack: number) =>
+    ohms < steeredOhms.least / slack || ohms > steeredOhms.most * slack;
+  if (outside(chargeOhms, 4) || outside(dischargeOhms, 4)) return null;
+  const values = {
+    farads: frame.capacitor.farads,
+    celsius: 25,
+    saturationAmps: diode.saturationAmps,
+    drained: false,
+  };
+  for (let step = 0; step < aimSteps; step += 1) {
+    const cycle = steeredCycle(frame, diode, { ...values, chargeOhms, dischargeOhms }, brief);
+    if (cycle === null) return null;
+    const [up, down] = [high / cycle.highSeconds, low / cycle.lowSeconds];
+    chargeOhms *= up;
+    dischargeOhms *= down;
+    if (Math.abs(up - 1) + Math.abs(down - 1) < 1e-5) break;
+  }
+  if (outside(chargeOhms, 1) || outside(dischargeOhms, 1)) return null;
+  return { chargeOhms, dischargeOhms };
+}
+
+/** The stocked part nearest by ratio; among equals the cheaper, then the lower id. */
+function nearestOffer(
+  { values }: PreparedShelf,
+  offers: Offers,
+  head: Head,
+  ohms: number,
+  quantity: number,
+  beside: StockedResistor | null,
+): StockedResistor | null {
+  const demand = beside === null ? head.demand : withOne(head, beside);
+  const start = firstNotBelow(values.ohms, ohms);
+  const usable = (k: number) => offers[k]?.find((part) => holdsMore(part, 1, demand, quantity));
+  let below = start - 1;
+  while (below >= 0 && !usable(below)) below -= 1;
+  let above = start;
+  while (above < values.ohms.length && !usable(above)) above += 1;
+  const [a, b] = [usable(below), usable(above)];
+  if (!a || !b) return a ?? b ?? null;
+  return ohms / a.ohms <= b.ohms / ohms ? a : b;
+}
+
+function withOne({ thresholds, pullUp, ledResistor, idle }: Head, part: StockedResistor) {
+  const { r1, r2, r3 } = thresholds;
+  return demandOf([r1, r2, r3, pullUp, ledResistor, idle, idle, part]);
+}
