@@ -675,6 +675,7 @@ function trimmers(): DemoPart[] {
         ohms,
         tolerance: m === 0 ? 0.1 : 0.2,
         temperature_coefficient_per_kelvin: 100 * perMillion,
+        rated_watts: m === 0 ? 0.5 : 0.25,
       },
       bin: `U-${String(1 + k + 11 * m).padStart(2, '0')}`,
       count: 70 + ((k * 13 + 31 * m) % 40),
