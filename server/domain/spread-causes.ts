@@ -13,6 +13,7 @@ const labels: Record<SpreadCause, [role: string, label: string, sentence: string
   capacitor: ['C1', 'Capacitor C1', 'The capacitor makes'],
   timing: ['R4', 'Timing resistor R4', 'The timing resistor makes'],
   thresholds: ['R1', 'Thresholds R1–R3', 'The threshold resistors make'],
+  stray: ['C1', 'Stray capacitance', 'Stray capacitance makes'],
   comparator: ['U1', 'Comparator', 'The comparator makes'],
   load: ['LED', 'LED on the output', 'The LED makes'],
   temperature: ['°C', 'Temperature', 'Temperature makes'],

@@ -73,9 +73,10 @@ export function warmCircuit(circuit: Circuit): WarmCircuit | null {
 }
 
 /**
+ * n·V_t in volts and I_s in amperes of a diode at a temperature:
  * I_s(T) = I_s exp[(T/Tref − 1) Eg/(n V_t) + (Xti/n) ln(T/Tref)], the usual junction law.
  */
-function warmDiode(diode: DiodeModel, celsius: number, referenceCelsius: number): WarmDiode {
+export function warmDiode(diode: DiodeModel, celsius: number, referenceCelsius: number): WarmDiode {
   const kelvins = celsius + kelvinAtZeroCelsius;
   const ratio = kelvins / (referenceCelsius + kelvinAtZeroCelsius);
   const n = diode.emissionCoefficient;

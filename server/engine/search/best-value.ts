@@ -1,3 +1,4 @@
+import type { Frame } from './aim.ts';
 import { byValue, type Candidate } from './candidate.ts';
 import { formCandidate, type AimedFrame } from './closest.ts';
 import { densityOfSum, distributionWith, integrals, type Integrals } from './density.ts';
@@ -50,7 +51,9 @@ export function findBestValue(
  * Tells frames whose capacitor and thresholds alone spread too far: with a perfect timing resistor
  * on the target they would not hold the band. Remembered by what decides it.
  */
-function rememberHopeless(brief: SearchBrief): (frame: AimedFrame) => boolean {
+export function rememberHopeless(
+  brief: SearchBrief,
+): (frame: Frame & { idealOhms: number }) => boolean {
   const known = new Map<string, boolean>();
   return (frame) => {
     const { capacitor, head } = frame;

@@ -6,7 +6,6 @@ import type { SearchBrief, StockedCapacitor } from './shelf.ts';
 import {
   cheapestChoice,
   isMakeable,
-  type Offers,
   type SingleTimingParts,
   type TimingStock,
 } from './timing-choice.ts';
@@ -56,19 +55,6 @@ function aimOne(frame: Frame, stock: TimingStock, brief: SearchBrief): AimedFram
   };
   findNeighbours(aimed, brief);
   return aimed;
-}
-
-/** The same frame with other offers of resistors. */
-export function withOffers(aimed: AimedFrame, offers: Offers, brief: SearchBrief): AimedFrame {
-  const other: AimedFrame = {
-    ...aimed,
-    stock: { ...aimed.stock, offers },
-    below: -1,
-    above: -1,
-    distance: Number.POSITIVE_INFINITY,
-  };
-  findNeighbours(other, brief);
-  return other;
 }
 
 /**

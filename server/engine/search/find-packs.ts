@@ -1,19 +1,21 @@
 import type { Circuit } from '../circuit.ts';
 import { byCloseness, byValue, isSamePack, type Candidate } from './candidate.ts';
-import { aimFrames, closestByCapacitor } from './closest.ts';
-import { findBestValue, holdsBand, valueYield } from './best-value.ts';
+import { aimFrames, closestByCapacitor, type AimedFrame } from './closest.ts';
+import { findBestValue, holdsBand, rememberHopeless, valueYield } from './best-value.ts';
 import { guaranteedBand, worseEnd, type GuaranteedBand } from './guaranteed-band.ts';
 import { headCircuit, headsFor } from './heads.ts';
 import { insulationSiemens } from './aim.ts';
+import { conditionShifts, shiftRange, timingCoefficient } from './kit-effects.ts';
 import { kitYield, type KitYield } from './kit-yield.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
 import { capacitorSuits } from './rules.ts';
 import type { SearchBrief } from './shelf.ts';
-import { findSteadiest, steadier, steadyOf, type Steady } from './steadiest.ts';
-import { steeredCircuit, steeredPacks, steeredValues } from './steered.ts';
+import { findSteadiest, quickBound, steadier, steadyOf, type Steady } from './steadiest.ts';
+import { steeredCircuit, steeredPacks, steeredValues, supplyReach } from './steered.ts';
 import { isEqualDuty } from './threshold-sets.ts';
 import { listOffers } from './timing-choice.ts';
-import { trimmedPack } from './trimmed.ts';
+import { settingError, trimmedPack } from './trimmed.ts';
+import { tunedClassOf } from './tuned-grid.ts';
 import { tunedPacks } from './tuned.ts';
 
 export type Rank = 'closest' | 'best-value' | 'steadiest';
@@ -73,26 +75,47 @@ export function findPacks(
 
 /** The steadiest pack alone, with its promise; null when nothing on the shelf can run the brief. */
 export function findSteadiestPack(shelf: PreparedShelf, brief: SearchBrief): RankedPack | null {
-  const { steadiest } = searchPool(shelf, brief);
+  const { aimed, capacitors, offers } = aimShelf(shelf, brief);
+  const fitted = fittedPacks(aimed, brief, shelf);
+  const steadiest =
+    fitted === null
+      ? steadiestOf(
+          steeredPacks(shelf, capacitors, offers, brief),
+          findSteadiest(aimed, brief, shelf),
+          brief,
+          shelf,
+        )
+      : steadiestOf(fitted, null, brief, shelf);
   return steadiest && { ...promise(steadiest.candidate, brief, shelf), wins: ['steadiest'] };
 }
 
-function searchPool(shelf: PreparedShelf, brief: SearchBrief): Pool {
+/** Every frame of the shelf, aimed at the target. */
+function aimShelf(shelf: PreparedShelf, brief: SearchBrief) {
   const offers = listOffers(shelf.values, brief.quantity);
   const capacitors = shelf.shelf.capacitors.filter((part) => capacitorSuits(part, brief));
   const stock = { table: shelf.table, offers, quantity: brief.quantity };
-  const aimed = aimFrames(headsFor(shelf, brief), capacitors, stock, brief);
+  return { aimed: aimFrames(headsFor(shelf, brief), capacitors, stock, brief), capacitors, offers };
+}
+
+/** The packs of care levels that fit the timing to each kit; null for those that do not. */
+function fittedPacks(
+  aimed: readonly AimedFrame[],
+  brief: SearchBrief,
+  shelf: PreparedShelf,
+): Candidate[] | null {
+  if (brief.care === 'bench-tuned') return tunedPacks(aimed, brief, shelf);
+  if (brief.care !== 'trimmer-fitted') return null;
+  return aimed.flatMap((frame) => (frame.reaches ? (trimmedPack(frame, brief, shelf) ?? []) : []));
+}
+
+function searchPool(shelf: PreparedShelf, brief: SearchBrief): Pool {
+  const { aimed, capacitors, offers } = aimShelf(shelf, brief);
   const combinations = aimed.length * shelf.table.ohms.length;
-  if (brief.care === 'trimmer-fitted' || brief.care === 'bench-tuned') {
-    const fitted =
-      brief.care === 'bench-tuned'
-        ? tunedPacks(aimed, brief, shelf)
-        : aimed.flatMap((frame) => trimmedPack(frame, brief, shelf) ?? []);
-    return poolOf(fitted, null, null, combinations, brief, shelf);
-  }
+  const fitted = fittedPacks(aimed, brief, shelf);
+  if (fitted !== null) return poolOf(fitted, null, null, combinations, brief, shelf);
   const steered = steeredPacks(shelf, capacitors, offers, brief);
   return poolOf(
-    [...closestByCapacitor(aimed, brief), ...steered].sort(byCloseness),
+    [...closestByCapacitor(aimed, brief), ...steered],
     findBestValue(aimed, brief, shelf),
     findSteadiest(aimed, brief, shelf),
     combinations + steered.length,
@@ -128,9 +151,12 @@ function cheapestThatHolds(
   brief: SearchBrief,
   shelf: PreparedShelf,
 ): Candidate | null {
+  const hopeless = rememberHopeless(brief);
   for (const candidate of [...list].sort(byValue)) {
     if (before !== null && byValue(candidate, before) >= 0) return before;
     if (candidate.distance > -Math.log1p(-brief.band)) continue;
+    const { frame, timing } = candidate;
+    if (timing.kind === 'single' && hopeless({ ...frame, idealOhms: timing.ohms })) continue;
     if (holdsBand(candidate, brief, shelf)) return candidate;
   }
   return before;
@@ -153,15 +179,25 @@ function steadiestOf(
   return best;
 }
 
-/** Less than the worse end of a candidate: what its capacitor alone leaves. */
-function leastEnd({ frame, timing, distance }: Candidate, brief: SearchBrief): number {
-  const { capacitor, head } = frame;
-  if (timing.kind === 'trimmed') return 0.85 * capacitor.temperatureSpread;
-  if (brief.care === 'bench-tuned') {
-    return 0.85 * (brief.meterUncertainty + capacitor.temperatureSpread);
+/** Less than the worse end of a candidate: its tolerances, and nearly all of its drift. */
+function leastEnd({ frame, timing }: Candidate, brief: SearchBrief): number {
+  const { capacitor } = frame;
+  if (timing.kind === 'steered') {
+    const least = Math.min(timing.charge.tolerance, timing.discharge.tolerance);
+    return quickBound(frame, least) + Math.tanh(0.9 * supplyReach(frame, timing, brief));
   }
-  const half = capacitor.tolerance + capacitor.temperatureSpread + head.thresholds.r3.tolerance;
-  return Math.tanh(0.8 * half) + Math.max(0, -Math.expm1(-distance) - half);
+  const plain = conditionShifts(frame, timing.ohms, brief);
+  const coefficient =
+    timing.kind === 'single'
+      ? timingCoefficient(timing)
+      : timing.fixed.temperatureCoefficientPerKelvin;
+  const { up, down } = shiftRange(plain, coefficient, -1);
+  const drift = timing.kind === 'single' ? Math.tanh((0.9 * (up - down)) / 2) : 0;
+  if (timing.kind === 'trimmed') {
+    return 0.85 * (capacitor.temperatureSpread + settingError(timing.ohms, timing.trimmer));
+  }
+  const measured = { ...frame, capacitor: { ...capacitor, tolerance: brief.meterUncertainty } };
+  return drift + quickBound(measured, Math.min(tunedClassOf(timing), timing.first.tolerance));
 }
 
 /** The winner of the asked rank first, then the other winners, then varied packs by the asked rank. */

@@ -7,7 +7,7 @@ import { limits } from './rules.ts';
 import type { SearchBrief, StockedCapacitor, StockedResistor } from './shelf.ts';
 import type { SingleTimingParts } from './timing-choice.ts';
 
-export type Cause = 'thresholds' | 'timing' | 'capacitor' | 'comparator' | 'load';
+export type Cause = 'thresholds' | 'timing' | 'capacitor' | 'stray' | 'comparator' | 'load';
 
 /** One cause of a kit's deviation in ln of its rate. */
 export interface KitEffect {
@@ -118,10 +118,7 @@ export function frameEffects(frame: Frame, ohms: number, brief: SearchBrief): Ki
           },
         ]
       : []),
-    {
-      cause: 'capacitor',
-      effect: { kind: 'uniform', low: 0, middle: stray / 2, high: stray },
-    },
+    { cause: 'stray', effect: { kind: 'uniform', low: 0, middle: stray / 2, high: stray } },
   ];
 }
 

@@ -1,3 +1,4 @@
+import type { Frame } from './aim.ts';
 import { byPriceThenIds, type Candidate } from './candidate.ts';
 import { formCandidate, type AimedFrame } from './closest.ts';
 import { guaranteedBand, worseEnd } from './guaranteed-band.ts';
@@ -59,7 +60,7 @@ const leastPower = 0.85;
  * Less than any pack of the frame can reach, from tolerances alone: a band of ratio q about the target
  * has a worse end of (q − 1)/(q + 1) at least.
  */
-function quickBound({ capacitor, head }: AimedFrame, timingTolerance: number): number {
+export function quickBound({ capacitor, head }: Frame, timingTolerance: number): number {
   const { r1, r2, r3 } = head.thresholds;
   const [x1, x2] = [r1.ohms / (r1.ohms + r3.ohms), r2.ohms / (r2.ohms + r3.ohms)];
   const log = Math.log1p(r1.ohms / r3.ohms) + Math.log1p(r2.ohms / r3.ohms);

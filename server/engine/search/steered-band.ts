@@ -10,7 +10,7 @@ import {
   passiveCorner,
   type Corner,
 } from './head-corners.ts';
-import type { HeadCorner } from './heads.ts';
+import type { Head, HeadCorner } from './heads.ts';
 import type { ConditionShift, KitEffect } from './kit-effects.ts';
 import { limits } from './rules.ts';
 import type { SearchBrief, StockedResistor } from './shelf.ts';
@@ -19,9 +19,11 @@ import { steeredCycle, steeredValues, type SteeredValues } from './steered.ts';
 type SteeredCandidate = Candidate<SteeredTimingParts>;
 
 /**
- * The guaranteed band of a steered pack by the full model. As for a single timing resistor, with the
- * diodes' saturation current between half and twice the catalogue's; more output resistance and less
- * saturation current slow every kit, so both stand at the corner's own end.
+ * The guaranteed band of a steered pack. As for a single timing resistor, with the diodes' saturation
+ * current between half and twice the catalogue's; more output resistance and less saturation current
+ * slow every kit, so both stand at the corner's own end. Corners are worked out without bias and
+ * leakage, in closed form; what those do to the nominal kit, at the most bias of either sign, is put
+ * on top.
  */
 export function steeredBand(candidate: SteeredCandidate, brief: SearchBrief): GuaranteedBand {
   const { frame, timing } = candidate;
@@ -29,10 +31,6 @@ export function steeredBand(candidate: SteeredCandidate, brief: SearchBrief): Gu
   for (const corner of ['slow', 'fast'] as Corner[]) {
     const slow = corner === 'slow';
     const sign = slow ? 1 : -1;
-    const outputFactor = slow ? 2 : 0.5;
-    const kits = comparatorCorners(frame.head, brief).filter(
-      (each) => each.outputFactor === outputFactor,
-    );
     for (const celsius of extremeCelsius(brief)) {
       const values: SteeredValues = {
         chargeOhms: atCorner(timing.charge.ohms, timing.charge, sign, celsius),
@@ -40,10 +38,10 @@ export function steeredBand(candidate: SteeredCandidate, brief: SearchBrief): Gu
         farads: capacitanceAt(frame.capacitor, corner, celsius),
         celsius,
         saturationAmps: timing.diode.saturationAmps * limits.saturationFactor ** -sign,
-        drained: true,
+        drained: false,
       };
       const passive = passiveCorner(frame.head, corner, celsius);
-      for (const kit of kits) {
+      for (const kit of cornerKits(frame.head, brief, slow ? 2 : 0.5)) {
         const all = { ...passive, ...kit };
         const hertz = steeredCycle(frame, timing.diode, values, brief, all)?.frequencyHz ?? 0;
         if (slow) band.minHz = Math.min(band.minHz, hertz);
@@ -51,7 +49,35 @@ export function steeredBand(candidate: SteeredCandidate, brief: SearchBrief): Gu
       }
     }
   }
-  return band;
+  const { least, most } = drainFactors(candidate, brief);
+  return { minHz: band.minHz * least, maxHz: band.maxHz * most };
+}
+
+/** The comparator's corners of one output resistance; without bias both its signs are the same. */
+function cornerKits(head: Head, brief: SearchBrief, outputFactor: number): HeadCorner[] {
+  const kits = comparatorCorners(head, brief).filter((kit) => kit.outputFactor === outputFactor);
+  const seen = new Set<string>();
+  return kits.filter(({ supplyVolts, offsetVolts, forwardVolts }) => {
+    const key = `${supplyVolts} ${offsetVolts} ${forwardVolts}`;
+    const isNew = !seen.has(key);
+    seen.add(key);
+    return isNew;
+  });
+}
+
+/** What bias and leakage multiply the nominal rate by, at the least and the most. */
+function drainFactors(
+  { frame, timing }: SteeredCandidate,
+  brief: SearchBrief,
+): { least: number; most: number } {
+  const values = steeredValues(timing, frame);
+  const dry = steeredCycle(frame, timing.diode, { ...values, drained: false }, brief);
+  const factors = [-1, 1].map((sign) => {
+    const biasAmps = sign * frame.head.comparator.maxInputBiasAmps;
+    const wet = steeredCycle(frame, timing.diode, values, brief, { biasAmps });
+    return (wet?.frequencyHz ?? 0) / (dry?.frequencyHz ?? 1);
+  });
+  return { least: Math.min(1, ...factors), most: Math.max(1, ...factors) };
 }
 
 /** A circuit that does not oscillate at an end counts as this much slow. */
@@ -59,12 +85,13 @@ const stopped = -50;
 
 /** What makes the kits of a steered pack differ, as `frameEffects` and `timingEffects` together. */
 export function steeredEffects(candidate: SteeredCandidate, brief: SearchBrief): KitEffect[] {
-  const { frame, timing, frequencyHz } = candidate;
-  const nominal = steeredValues(timing, frame);
+  const { frame, timing } = candidate;
+  const nominal = { ...steeredValues(timing, frame), drained: false };
   const { comparator: part, thresholds } = frame.head;
+  const dryHz = steeredCycle(frame, timing.diode, nominal, brief)?.frequencyHz ?? NaN;
   const logAt = (values: Partial<SteeredValues>, corner: HeadCorner = {}) => {
     const cycle = steeredCycle(frame, timing.diode, { ...nominal, ...values }, brief, corner);
-    return cycle === null ? stopped : Math.log(cycle.frequencyHz / frequencyHz);
+    return cycle === null ? stopped : Math.log(cycle.frequencyHz / dryHz);
   };
   const along = (at: (u: number) => number): UniformEffect => ({
     kind: 'uniform',
@@ -91,7 +118,7 @@ export function steeredEffects(candidate: SteeredCandidate, brief: SearchBrief):
     ['capacitor', capacity(capacitor.tolerance)],
     ['capacitor', capacity(capacitor.temperatureSpread)],
     [
-      'capacitor',
+      'stray',
       along((u) => logAt({ farads: capacitor.farads + (limits.strayFarads * (1 + u)) / 2 })),
     ],
     [
@@ -101,7 +128,7 @@ export function steeredEffects(candidate: SteeredCandidate, brief: SearchBrief):
       ),
     ],
     ['comparator', along((u) => logAt({}, { offsetVolts: u * part.maxOffsetVolts }))],
-    ['comparator', along((u) => logAt({}, { biasAmps: u * part.maxInputBiasAmps }))],
+    ['comparator', along((u) => biased(candidate, u * part.maxInputBiasAmps, brief))],
     ['comparator', along((u) => logAt({}, { outputFactor: 1.25 + 0.75 * u }))],
     [
       'comparator',
@@ -119,9 +146,22 @@ export function steeredEffects(candidate: SteeredCandidate, brief: SearchBrief):
   return effects.map(([cause, effect]) => ({ cause, effect }));
 }
 
+/** ln of the rate with another input bias over that with the typical one. */
+function biased(
+  { frame, timing, frequencyHz }: SteeredCandidate,
+  biasAmps: number,
+  brief: SearchBrief,
+) {
+  const values = steeredValues(timing, frame);
+  const cycle = steeredCycle(frame, timing.diode, values, brief, { biasAmps });
+  return cycle === null ? stopped : Math.log(cycle.frequencyHz / frequencyHz);
+}
+
 /** As `conditionShifts`, with the drift of the steering resistors and the diodes in it. */
 export function steeredShifts(candidate: SteeredCandidate, brief: SearchBrief): ConditionShift[] {
-  const { frame, timing, frequencyHz } = candidate;
+  const { frame, timing } = candidate;
+  const nominal = { ...steeredValues(timing, frame), drained: false };
+  const dryHz = steeredCycle(frame, timing.diode, nominal, brief)?.frequencyHz ?? NaN;
   const { r1, r2, r3 } = frame.head.thresholds;
   const { capacitor } = frame;
   const warm = (part: StockedResistor, celsius: number) =>
@@ -130,7 +170,7 @@ export function steeredShifts(candidate: SteeredCandidate, brief: SearchBrief): 
   return extremeCelsius(brief).flatMap((celsius) =>
     supplies.map((supplyVolts) => {
       const values = {
-        ...steeredValues(timing, frame),
+        ...nominal,
         chargeOhms: warm(timing.charge, celsius),
         dischargeOhms: warm(timing.discharge, celsius),
         farads: capacitor.farads * drift(capacitor.temperatureCoefficientPerKelvin, celsius),
@@ -145,8 +185,7 @@ export function steeredShifts(candidate: SteeredCandidate, brief: SearchBrief): 
       return {
         volts: supplyVolts,
         celsius,
-        shift:
-          cycle === null ? Number.NEGATIVE_INFINITY : Math.log(cycle.frequencyHz / frequencyHz),
+        shift: cycle === null ? Number.NEGATIVE_INFINITY : Math.log(cycle.frequencyHz / dryHz),
       };
     }),
   );

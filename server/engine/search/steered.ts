@@ -1,5 +1,6 @@
 import type { Circuit } from '../circuit.ts';
 import { analyseCycle, type Cycle } from '../cycle.ts';
+import { warmDiode } from '../warm-circuit.ts';
 import { insulationSiemens, type Frame } from './aim.ts';
 import type { Candidate, SteeredTimingParts } from './candidate.ts';
 import { demandOf, holdsMore } from './demand.ts';
@@ -71,14 +72,15 @@ export function steeredCircuit(
 
 /** Steering resistors stay between these, where diode leakage and output resistance hardly matter. */
 const steeredOhms = { least: 2e3, most: 1e6 };
-const aimSteps = 8;
+const aimSteps = 6;
 
 /**
  * The steered packs that the rules allow: equal thresholds of the SKU nearest to the ideal, one for
  * each comparator, capacitor and diode. RC is the stocked resistor nearest by ratio to what the asked
- * high time needs, RD to what the asked low time needs, both without bias and leakage and between
- * 2 kΩ and 1 MΩ. Rates are those of the full model; packs whose duty misses the asked one by more
- * than the duty tolerance are left out.
+ * high time needs, RD to what the asked low time needs, both without bias and leakage, between 2 kΩ
+ * and 1 MΩ and above the head's own limit. Rates are those of the full model. Left out are packs whose
+ * duty misses the asked one by more than the duty tolerance, and those whose reversed diode could
+ * leak too much when hot (`leaksLittle`).
  */
 export function steeredPacks(
   shelf: PreparedShelf,
@@ -90,13 +92,30 @@ export function steeredPacks(
   const diodes = shelf.shelf.diodes.filter((part) => part.available >= 2 * brief.quantity);
   if (diodes.length === 0) return [];
   return firstSets(headsFor(shelf, { ...brief, duty: 0.5 })).flatMap((head) =>
-    capacitors.flatMap((capacitor) =>
-      diodes.flatMap((diode) => {
+    diodes.flatMap((diode) =>
+      capacitors.flatMap((capacitor) => {
         const pack = steeredPack({ head, capacitor }, diode, shelf, offers, brief);
         return pack === null ? [] : [pack];
       }),
     ),
   );
+}
+
+/** The reversed diode may take this share of the least drive across the other resistor. */
+const leakageShare = 0.02;
+
+/**
+ * True when the reversed diode, at the hottest and leakiest, would drop at most a fiftieth of the
+ * drive across its own resistor. The model takes its current as the saturation current throughout,
+ * which holds only then.
+ */
+function leaksLittle(
+  { charge, discharge, diode }: SteeredTimingParts,
+  brief: SearchBrief,
+): boolean {
+  const hottest = warmDiode(diode, Math.max(brief.maxCelsius, 25), 25).saturationAmps;
+  const drop = limits.saturationFactor * hottest * Math.max(charge.ohms, discharge.ohms);
+  return drop <= (leakageShare * brief.minSupplyVolts) / 3;
 }
 
 /** Of each comparator's heads only the first, whose threshold resistors are nearest to the ideal. */
@@ -125,6 +144,7 @@ function steeredPack(
   );
   if (discharge === null) return null;
   const timing: SteeredTimingParts = { kind: 'steered', charge, discharge, diode };
+  if (!leaksLittle(timing, brief)) return null;
   const cycle = steeredCycle(frame, diode, steeredValues(timing, frame), brief);
   if (cycle === null || Math.abs(cycle.duty - brief.duty) > limits.dutyTolerance) return null;
   return {
@@ -161,11 +181,12 @@ function idealOhms(
 ): { chargeOhms: number; dischargeOhms: number } | null {
   const high = brief.duty / brief.targetHz;
   const low = (1 - brief.duty) / brief.targetHz;
-  // Equal thresholds take ln 2 of a time constant for each half.
+  // Equal thresholds take ln 2 of a time constant for each half; a diode's drop makes it longer.
   let chargeOhms = high / (Math.LN2 * frame.capacitor.farads);
   let dischargeOhms = low / (Math.LN2 * frame.capacitor.farads);
+  const least = Math.max(steeredOhms.least, frame.head.minTimingOhms);
   const outside = (ohms: number, slack: number) =>
-    ohms < steeredOhms.least / slack || ohms > steeredOhms.most * slack;
+    ohms < least / slack || ohms > steeredOhms.most * slack;
   if (outside(chargeOhms, 4) || outside(dischargeOhms, 4)) return null;
   const values = {
     farads: frame.capacitor.farads,
@@ -179,7 +200,7 @@ function idealOhms(
     const [up, down] = [high / cycle.highSeconds, low / cycle.lowSeconds];
     chargeOhms *= up;
     dischargeOhms *= down;
-    if (Math.abs(up - 1) + Math.abs(down - 1) < 1e-5) break;
+    if (Math.abs(up - 1) + Math.abs(down - 1) < 1e-3) break;
   }
   if (outside(chargeOhms, 1) || outside(dischargeOhms, 1)) return null;
   return { chargeOhms, dischargeOhms };
@@ -209,4 +230,13 @@ function nearestOffer(
 function withOne({ thresholds, pullUp, ledResistor, idle }: Head, part: StockedResistor) {
   const { r1, r2, r3 } = thresholds;
   return demandOf([r1, r2, r3, pullUp, ledResistor, idle, idle, part]);
+}
+
+/** Half of what the supply's ends alone move ln of a steered pack's rate apart, without bias and leakage. */
+export function supplyReach(frame: Frame, timing: SteeredTimingParts, brief: SearchBrief): number {
+  const values = { ...steeredValues(timing, frame), drained: false };
+  const logAt = (supplyVolts: number) =>
+    Math.log(steeredCycle(frame, timing.diode, values, brief, { supplyVolts })?.frequencyHz ?? NaN);
+  const reach = Math.abs(logAt(brief.maxSupplyVolts) - logAt(brief.minSupplyVolts)) / 2;
+  return Number.isNaN(reach) ? 0 : reach;
 }

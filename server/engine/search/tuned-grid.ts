@@ -1,6 +1,8 @@
 import { aimFrame, type Frame } from './aim.ts';
+import type { ResistorDemand } from './demand.ts';
+import type { Head } from './heads.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
-import { firstNotBelow } from './resistor-values.ts';
+import { firstNotBelow, type ResistorValues } from './resistor-values.ts';
 import { limits } from './rules.ts';
 import type { SearchBrief, StockedResistor } from './shelf.ts';
 import { isMakeable, listOffers, type Offers, type SingleTimingParts } from './timing-choice.ts';
@@ -30,41 +32,111 @@ export function tunedClassOf({ first, second }: SingleTimingParts): number {
   return tunedClasses.find((limit) => worst <= limit * (1 + 1e-9)) ?? 1;
 }
 
-interface ClassStock {
+/** Every resistance of a class that the shelf can make beside a head, with what its gaps amount to. */
+interface ClassGrid {
   offers: Offers;
   tolerance: number;
   coefficientsPerKelvin: readonly number[];
+  /** Ascending; gap k lies between entries k and k + 1, in ln R. */
+  ohms: Float64Array;
+  /** Their places in the timing table. */
+  places: Int32Array;
+  /** Sum of the cubes of the gaps before entry k. */
+  cubesBefore: Float64Array;
+  /** Widest gap of each block of `blockLength`. */
+  widestOfBlock: Float64Array;
 }
 
-const knownStock = new WeakMap<PreparedShelf, Map<string, ClassStock>>();
+const blockLength = 64;
 
-/** The resistors of a class that the shelf holds `quantity` times. */
-export function classStock(shelf: PreparedShelf, limit: number, quantity: number): ClassStock {
-  const known = knownStock.get(shelf) ?? new Map<string, ClassStock>();
-  knownStock.set(shelf, known);
-  const key = `${limit} ${quantity}`;
-  let stock = known.get(key);
-  if (!stock) {
+const knownGrids = new WeakMap<ResistorValues, Map<string, ClassGrid>>();
+const knownOffers = new WeakMap<Offers, Map<number, Offers>>();
+
+/** The offers of a class of tolerance. */
+export function classOffers(shelf: PreparedShelf, limit: number, quantity: number): Offers {
+  const all = listOffers(shelf.values, quantity);
+  const known = knownOffers.get(all) ?? new Map<number, Offers>();
+  knownOffers.set(all, known);
+  let offers = known.get(limit);
+  if (!offers) {
     const suits = (part: StockedResistor) => part.tolerance <= limit * (1 + 1e-9);
-    const offers = listOffers(shelf.values, quantity).map((parts) => parts.filter(suits));
-    const all = offers.flat();
-    const coefficients = all.map((part) => part.temperatureCoefficientPerKelvin);
-    const least = coefficients.reduce((a, b) => Math.min(a, b), Number.POSITIVE_INFINITY);
-    const most = coefficients.reduce((a, b) => Math.max(a, b), Number.NEGATIVE_INFINITY);
-    stock = {
-      offers,
-      tolerance: all.reduce((worst, part) => Math.max(worst, part.tolerance), 0),
-      coefficientsPerKelvin: all.length === 0 ? [] : [...new Set([least, most])],
-    };
-    known.set(key, stock);
+    offers = all.map((parts) => (parts.every(suits) ? parts : parts.filter(suits)));
+    known.set(limit, offers);
   }
-  return stock;
+  return offers;
+}
+
+/** The grid of a class beside what a head takes, kept with the values as long as the stock stands. */
+function classGrid(
+  shelf: PreparedShelf,
+  limit: number,
+  { demand }: Head,
+  quantity: number,
+): ClassGrid {
+  const known = knownGrids.get(shelf.values) ?? new Map<string, ClassGrid>();
+  knownGrids.set(shelf.values, known);
+  const key = [limit, quantity, ...demand.ids, ...demand.counts].join();
+  let grid = known.get(key);
+  if (!grid) {
+    grid = formGrid(shelf, classOffers(shelf, limit, quantity), demand, quantity);
+    known.set(key, grid);
+  }
+  return grid;
+}
+
+function formGrid(
+  { table }: PreparedShelf,
+  offers: Offers,
+  demand: ResistorDemand,
+  quantity: number,
+): ClassGrid {
+  const stock = { table, offers, demand, quantity };
+  const makeable: number[] = [];
+  for (let k = 0; k < table.ohms.length; k += 1) if (isMakeable(stock, k)) makeable.push(k);
+  const places = Int32Array.from(makeable);
+  const ohms = Float64Array.from(makeable, (k) => table.ohms[k]!);
+  const cubesBefore = new Float64Array(ohms.length + 1);
+  const widestOfBlock = new Float64Array(Math.ceil(ohms.length / blockLength));
+  for (let k = 0; k + 1 < ohms.length; k += 1) {
+    const gap = gapAt(ohms, k);
+    cubesBefore[k + 1] = cubesBefore[k]! + gap ** 3;
+    const block = Math.floor(k / blockLength);
+    widestOfBlock[block] = Math.max(widestOfBlock[block]!, gap);
+  }
+  const all = offers.flat();
+  const coefficients = all.map((part) => part.temperatureCoefficientPerKelvin);
+  const least = coefficients.reduce((a, b) => Math.min(a, b), Number.POSITIVE_INFINITY);
+  const most = coefficients.reduce((a, b) => Math.max(a, b), Number.NEGATIVE_INFINITY);
+  return {
+    offers,
+    tolerance: all.reduce((worst, part) => Math.max(worst, part.tolerance), 0),
+    coefficientsPerKelvin: all.length === 0 ? [] : [...new Set([least, most])],
+    ohms,
+    places,
+    cubesBefore,
+    widestOfBlock,
+  };
+}
+
+function gapAt(ohms: Float64Array, k: number): number {
+  return Math.log(ohms[k + 1]! / ohms[k]!);
+}
+
+/** Widest of the gaps from place `from` up to before place `to`. */
+function widestGap({ ohms, widestOfBlock }: ClassGrid, from: number, to: number): number {
+  let widest = 0;
+  for (let k = from; k < to;) {
+    const wholeBlock = k % blockLength === 0 && k + blockLength <= to;
+    widest = Math.max(widest, wholeBlock ? widestOfBlock[k / blockLength]! : gapAt(ohms, k));
+    k += wholeBlock ? blockLength : 1;
+  }
+  return widest;
 }
 
 /**
- * The grid of a class for a frame: every resistance the shelf holds between what the capacitor would
- * need at either end of its tolerance and of the meter's uncertainty. Null when the shelf does not
- * reach over the whole of that range.
+ * What the grid of a class is for a frame: every resistance the shelf holds between what the capacitor
+ * would need at either end of its tolerance and of the meter's uncertainty. Null when the shelf does
+ * not reach over the whole of that range.
  */
 export function tunedGrid(
   frame: Frame,
@@ -72,46 +144,46 @@ export function tunedGrid(
   brief: SearchBrief,
   shelf: PreparedShelf,
 ): TunedGrid | null {
-  const stock = classStock(shelf, limit, brief.quantity);
-  const { table } = shelf;
-  const own = {
-    table,
-    offers: stock.offers,
-    demand: frame.head.demand,
-    quantity: brief.quantity,
-  };
-  const wide = (1 + frame.capacitor.tolerance) * (1 + brief.meterUncertainty) - 1;
+  const { capacitor, head } = frame;
+  const wide = (1 + capacitor.tolerance) * (1 + brief.meterUncertainty) - 1;
   const needed = (share: number) =>
     aimFrame(
-      {
-        ...frame,
-        capacitor: { ...frame.capacitor, farads: frame.capacitor.farads * (1 + share) },
-      },
+      { ...frame, capacitor: { ...capacitor, farads: capacitor.farads * (1 + share) } },
       brief,
     );
   const [least, most] = [needed(wide), needed(-wide)];
-  if (!least.reaches || !most.reaches || least.ohms < frame.head.minTimingOhms) return null;
-  const start = firstNotBelow(table.ohms, least.ohms);
-  let before = start - 1;
-  while (before >= 0 && !isMakeable(own, before)) before -= 1;
-  if (before < 0 || table.ohms[before]! < frame.head.minTimingOhms) return null;
-  let widest = 0;
-  let cubes = 0;
-  let last = table.ohms[before]!;
-  for (let k = start; last < most.ohms; k += 1) {
-    if (k >= table.ohms.length) return null;
-    if (!isMakeable(own, k)) continue;
-    const gap = Math.log(table.ohms[k]! / last);
-    widest = Math.max(widest, gap);
-    cubes += gap ** 3;
-    last = table.ohms[k]!;
-  }
-  const span = Math.log(last / table.ohms[before]!);
+  if (!least.reaches || !most.reaches) return null;
+  const grid = classGrid(shelf, limit, head, brief.quantity);
+  const { ohms, cubesBefore } = grid;
+  const from = firstNotBelow(ohms, least.ohms) - 1;
+  const to = firstNotBelow(ohms, most.ohms);
+  if (from < 0 || to >= ohms.length || ohms[from]! < head.minTimingOhms) return null;
+  const span = Math.log(ohms[to]! / ohms[from]!);
   return {
-    tolerance: stock.tolerance,
-    coefficientsPerKelvin: stock.coefficientsPerKelvin,
-    halfGap: widest / 2,
+    tolerance: grid.tolerance,
+    coefficientsPerKelvin: grid.coefficientsPerKelvin,
+    halfGap: widestGap(grid, from, to) / 2,
     // A point anywhere in a gap g is off its nearer end by g/√12 in the root mean square.
-    rmsGap: span > 0 ? Math.sqrt(cubes / span / 12) : 0,
+    rmsGap: span > 0 ? Math.sqrt((cubesBefore[to]! - cubesBefore[from]!) / span / 12) : 0,
   };
+}
+
+/**
+ * Places in the timing table of what the grid of a class holds next below and above a resistance,
+ * with all that share their ohms.
+ */
+export function gridAround(
+  head: Head,
+  ohms: number,
+  limit: number,
+  brief: SearchBrief,
+  shelf: PreparedShelf,
+): number[] {
+  const grid = classGrid(shelf, limit, head, brief.quantity);
+  const at = firstNotBelow(grid.ohms, ohms);
+  const found: number[] = [];
+  const same = (a: number, b: number) => Math.abs(grid.ohms[a]! / grid.ohms[b]! - 1) < 1e-12;
+  for (let k = at - 1; k >= 0 && same(k, at - 1); k -= 1) found.push(grid.places[k]!);
+  for (let k = at; k < grid.ohms.length && same(k, at); k += 1) found.push(grid.places[k]!);
+  return found.filter((place) => shelf.table.ohms[place]! >= head.minTimingOhms);
 }
