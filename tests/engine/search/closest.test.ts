@@ -2,45 +2,64 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { analyseCycle } from '../../../server/engine/cycle.ts';
 import { findPacks, type RankedPack } from '../../../server/engine/search/find-packs.ts';
-import type { SearchBrief, Shelf } from '../../../server/engine/search/shelf.ts';
-import { everyKit, isOnTheShelf, rateOf, type Recipe } from './exhaustive-search.ts';
-import { anyBrief, smallShelf } from './random-shelves.ts';
+import { prepareShelf } from '../../../server/engine/search/prepared-shelf.ts';
+import type { Shelf } from '../../../server/engine/search/shelf.ts';
+import { everyKit, isOnTheShelf, priceOf, rateOf } from './exhaustive-search.ts';
+import { recipeOf } from './engine-candidates.ts';
+import { anyCase, type Case } from './random-shelves.ts';
 
-function recipeOf(pack: RankedPack): Recipe {
-  const { comparator, thresholds, pullUp, ledResistor, capacitor } = pack.frame;
-  const { r1, r2, r3 } = thresholds;
-  const timing = { first: pack.first, second: pack.second, ohms: pack.timingOhms };
-  return { comparator, thresholds: [r1, r2, r3], pullUp, ledResistor, capacitor, timing };
-}
-
-function closestOf(shelf: Shelf, brief: SearchBrief): RankedPack | null {
-  return findPacks(shelf, brief, 'closest', 1).packs[0] ?? null;
+function closestOf({ shelf, brief }: Case): RankedPack | null {
+  return findPacks(prepareShelf(shelf), brief, 'closest', 1).packs[0] ?? null;
 }
 
 /** How often a run met what it is there for; a search that is never asked proves nothing. */
-const met = { kits: 0, none: 0, pairs: 0, tight: 0, shifted: 0, openDrain: 0, lit: 0 };
+const met = {
+  kits: 0,
+  none: 0,
+  single: 0,
+  pairs: 0,
+  tight: 0,
+  many: 0,
+  shifted: 0,
+  extremeDuty: 0,
+  steered: 0,
+  steeredBeaten: 0,
+  openDrain: 0,
+  lit: 0,
+  buffered: 0,
+  idle: 0,
+};
 
-function note(pack: RankedPack | null, brief: SearchBrief): void {
+function note(pack: RankedPack | null, { brief }: Case): void {
   if (pack === null) {
     met.none += 1;
     return;
   }
+  const { frame, timing } = pack;
   met.kits += 1;
-  if (pack.second) met.pairs += 1;
-  if (pack.frame.thresholds.r1.id === pack.first.id) met.tight += 1;
+  if (timing.kind === 'steered') met.steered += 1;
+  else if (timing.kind === 'single') {
+    if (timing.second) met.pairs += 1;
+    else met.single += 1;
+    if (frame.head.thresholds.r1.id === timing.first.id) met.tight += 1;
+  }
+  if (brief.quantity > 1) met.many += 1;
   if (pack.topology === 'shifted-thresholds') met.shifted += 1;
-  if (pack.frame.comparator.output === 'open-drain') met.openDrain += 1;
+  if (brief.duty < 0.2 || brief.duty > 0.8) met.extremeDuty += 1;
+  if (frame.head.comparator.output === 'open-drain') met.openDrain += 1;
   if (brief.load) met.lit += 1;
+  if (frame.head.buffered) met.buffered += 1;
+  if (frame.head.idle) met.idle += 1;
 }
 
 describe('findPacks', () => {
   describe('when asked for the closest pack on any small shelf', () => {
     it('finds exactly what an exhaustive search by the full model finds', () => {
       fc.assert(
-        fc.property(smallShelf, anyBrief, (shelf, brief) => {
-          const kits = everyKit(shelf, brief);
-          const pack = closestOf(shelf, brief);
-          note(pack, brief);
+        fc.property(anyCase, (one) => {
+          const kits = everyKit(one.shelf, one.brief);
+          const pack = closestOf(one);
+          note(pack, one);
           if (kits.length === 0) {
             expect(pack).toBeNull();
             return;
@@ -49,55 +68,61 @@ describe('findPacks', () => {
           expect(pack).not.toBeNull();
           expect(pack!.distance).toBeGreaterThan(best - 1e-11);
           expect(pack!.distance).toBeLessThan(best + 1e-11);
+          const steered = kits.some((kit) => kit.timing.kind === 'steered');
+          if (steered && pack!.timing.kind !== 'steered') met.steeredBeaten += 1;
         }),
-        { numRuns: 1000, seed: 20261201 },
+        { numRuns: 1600, seed: 20261201 },
       );
-      expect(met.kits).toBeGreaterThan(130);
-      expect(Math.min(met.none, met.pairs, met.tight, met.openDrain, met.lit)).toBeGreaterThan(8);
-      expect(met.shifted).toBeGreaterThan(0);
+      expect(met.kits).toBeGreaterThan(400);
+      for (const [what, count] of Object.entries(met)) expect(count, what).toBeGreaterThan(5);
     });
 
     it('offers only packs that lie on the shelf as often as asked, with the rate of the full model', () => {
+      let packs = 0;
       fc.assert(
-        fc.property(smallShelf, anyBrief, (shelf, brief) => {
-          for (const pack of findPacks(shelf, brief, 'closest', 8).packs) {
+        fc.property(anyCase, ({ shelf, brief }) => {
+          for (const pack of findPacks(prepareShelf(shelf), brief, 'closest', 8).packs) {
+            packs += 1;
             const recipe = recipeOf(pack);
             expect(isOnTheShelf(recipe, brief.quantity)).toBe(true);
+            expect(pack.priceMinor).toBe(priceOf(recipe));
             const rate = rateOf(recipe, brief)!;
             expect(pack.frequencyHz / rate).toBeCloseTo(1, 10);
             const cycle = analyseCycle(pack.circuit);
             expect(cycle.kind === 'oscillates' && cycle.frequencyHz / rate).toBeCloseTo(1, 10);
           }
         }),
-        { numRuns: 150, seed: 7 },
+        { numRuns: 300, seed: 7 },
       );
+      expect(packs).toBeGreaterThan(200);
     });
   });
 
   describe('when the shelf is listed in another order', () => {
     it('finds the same packs in the same order', () => {
-      const ids = (pack: RankedPack) =>
-        [
-          pack.frame.comparator.id,
-          pack.frame.capacitor.id,
-          pack.frame.thresholds.r3.id,
-          ...[pack.first.id, pack.second?.id ?? 0].sort((a, b) => a - b),
-          pack.join,
-        ].join();
+      const backwards = (shelf: Shelf): Shelf => ({
+        resistors: [...shelf.resistors].reverse(),
+        capacitors: [...shelf.capacitors].reverse(),
+        comparators: [...shelf.comparators].reverse(),
+        diodes: [...shelf.diodes].reverse(),
+        trimmers: [...shelf.trimmers].reverse(),
+      });
+      let packs = 0;
       fc.assert(
-        fc.property(smallShelf, anyBrief, (shelf, brief) => {
-          const backwards: Shelf = {
-            resistors: [...shelf.resistors].reverse(),
-            capacitors: [...shelf.capacitors].reverse(),
-            comparators: [...shelf.comparators].reverse(),
-          };
-          for (const rank of ['closest', 'best-value'] as const) {
-            const one = findPacks(shelf, brief, rank, 1).packs.map(ids);
-            expect(findPacks(backwards, brief, rank, 1).packs.map(ids)).toEqual(one);
+        fc.property(anyCase, ({ shelf, brief }) => {
+          for (const care of ['as-stocked', 'bench-tuned', 'trimmer-fitted'] as const) {
+            for (const rank of ['closest', 'best-value', 'steadiest'] as const) {
+              const found = (from: Shelf) =>
+                findPacks(prepareShelf(from), { ...brief, care }, rank, 4).packs;
+              const parts = (from: Shelf) => found(from).map(({ frame, timing }) => [frame, timing]);
+              expect(parts(backwards(shelf))).toEqual(parts(shelf));
+              packs += parts(shelf).length;
+            }
           }
         }),
-        { numRuns: 150, seed: 11 },
+        { numRuns: 60, seed: 11 },
       );
+      expect(packs).toBeGreaterThan(100);
     });
   });
 });
