@@ -11,7 +11,7 @@ const labelSize = 15;
 /** Mean advance of a letter as a share of its size, a little generous. */
 const advance = 0.6;
 
-function boxOf(item: DrawingItem, unit: number): Box {
+function boxOf(item: DrawingItem): Box {
   const around = (points: readonly (readonly [number, number])[], margin: number): Box => ({
     left: Math.min(...points.map(([x]) => x)) - margin,
     right: Math.max(...points.map(([x]) => x)) + margin,
@@ -22,11 +22,11 @@ function boxOf(item: DrawingItem, unit: number): Box {
     case 'wire':
       return around(item.points, 0);
     case 'dot':
-      return around([item.at], 4 * unit);
+      return around([item.at], 4);
     case 'ground':
-      return around([item.at], 17 * unit);
+      return around([item.at], 17);
     case 'part':
-      return around([item.from, item.to], 15 * unit);
+      return around([item.from, item.to], 15);
     case 'comparator': {
       const [x, y] = item.at;
       return around(
@@ -38,20 +38,19 @@ function boxOf(item: DrawingItem, unit: number): Box {
       );
     }
     case 'label': {
-      const width = item.text.length * labelSize * advance * unit;
+      const width = item.text.length * labelSize * advance;
       const [x, y] = item.at;
       const left = { start: x, middle: x - width / 2, end: x - width }[item.anchor];
-      return { left, right: left + width, top: y - labelSize * unit, bottom: y + 5 * unit };
+      return { left, right: left + width, top: y - labelSize, bottom: y + 5 };
     }
   }
 }
 
 /** The viewBox that holds all of a drawing, its lettering too, with a little paper around. */
 export function viewBoxOf(drawing: Drawing): string {
-  const unit = drawing.width / 640;
-  const boxes = drawing.items.map((item) => boxOf(item, unit));
+  const boxes = drawing.items.map((item) => boxOf(item));
   if (boxes.length === 0) return `0 0 ${drawing.width} ${drawing.height}`;
-  const paper = 10 * unit;
+  const paper = 10;
   const left = Math.min(...boxes.map((box) => box.left)) - paper;
   const top = Math.min(...boxes.map((box) => box.top)) - paper;
   const right = Math.max(...boxes.map((box) => box.right)) + paper;

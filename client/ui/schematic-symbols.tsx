@@ -1,11 +1,11 @@
+import type { PartSymbol as SymbolName } from '../../server/contracts/drawing.ts';
+
 type Point = readonly [number, number];
 
 interface SymbolProps {
-  symbol: 'resistor' | 'capacitor' | 'polarised-capacitor' | 'diode' | 'led';
+  symbol: SymbolName;
   from: Point;
   to: Point;
-  /** One drawing unit of line weight. */
-  unit: number;
 }
 
 function zigzag(start: number, length: number, half: number): string {
@@ -17,22 +17,22 @@ function zigzag(start: number, length: number, half: number): string {
   return `${teeth.join('')}L${start + length} 0`;
 }
 
-function resistorPath(length: number, unit: number): string {
-  const body = Math.min(length * 0.62, 46 * unit);
+function resistorPath(length: number): string {
+  const body = Math.min(length * 0.62, 46);
   const start = (length - body) / 2;
-  return `M0 0H${start}${zigzag(start, body, 7.5 * unit)}H${length}`;
+  return `M0 0H${start}${zigzag(start, body, 7.5)}H${length}`;
 }
 
-function capacitorPath(length: number, unit: number): string {
-  const gap = 4 * unit;
-  const plate = 14 * unit;
+function capacitorPath(length: number): string {
+  const gap = 4;
+  const plate = 14;
   const left = length / 2 - gap;
   const right = length / 2 + gap;
   return `M0 0H${left}M${left} ${-plate}V${plate}M${right} ${-plate}V${plate}M${right} 0H${length}`;
 }
 
-function Diode({ length, unit, lit }: { length: number; unit: number; lit: boolean }) {
-  const half = 10 * unit;
+function Diode({ length, lit }: { length: number; lit: boolean }) {
+  const half = 10;
   const left = length / 2 - half;
   const right = length / 2 + half;
   return (
@@ -41,33 +41,34 @@ function Diode({ length, unit, lit }: { length: number; unit: number; lit: boole
       <path d={`M${left} ${-half}V${half}L${right} 0Z`} className="fill-card" />
       {lit && (
         <path
-          d={`M${length / 2 - 2 * unit} ${-half - 3 * unit}l${9 * unit} ${-9 * unit}m${-5 * unit} 0h${5 * unit}v${5 * unit}M${length / 2 + 9 * unit} ${-half - 1 * unit}l${9 * unit} ${-9 * unit}m${-5 * unit} 0h${5 * unit}v${5 * unit}`}
-          strokeWidth={1.5 * unit}
+          d={`M${length / 2 - 2} ${-half - 3}l9 -9m-5 0h5v5M${length / 2 + 9} ${-half - 1}l9 -9m-5 0h5v5`}
+          strokeWidth={1.5}
         />
       )}
     </>
   );
 }
 
+/** The slant with its bar across that says: set once with a screwdriver. */
+function Adjustment({ middle }: { middle: number }) {
+  return <path d={`M${middle - 13} 15L${middle + 13} -15m-5 -4.4l10 8.8`} strokeWidth={1.75} />;
+}
+
 /** A two-ended symbol laid along the line from one end to the other. */
-export function PartSymbol({ symbol, from, to, unit }: SymbolProps) {
+export function PartSymbol({ symbol, from, to }: SymbolProps) {
   const length = Math.hypot(to[0] - from[0], to[1] - from[1]);
   const turn = (Math.atan2(to[1] - from[1], to[0] - from[0]) * 180) / Math.PI;
   return (
     <g transform={`translate(${from[0]} ${from[1]}) rotate(${turn})`}>
-      {symbol === 'resistor' && <path d={resistorPath(length, unit)} />}
+      {(symbol === 'resistor' || symbol === 'trimmer') && <path d={resistorPath(length)} />}
+      {symbol === 'trimmer' && <Adjustment middle={length / 2} />}
       {(symbol === 'capacitor' || symbol === 'polarised-capacitor') && (
-        <path d={capacitorPath(length, unit)} />
+        <path d={capacitorPath(length)} />
       )}
       {symbol === 'polarised-capacitor' && (
-        <path
-          d={`M${length / 2 - 13 * unit} ${9 * unit}h${6 * unit}m${-3 * unit} ${-3 * unit}v${6 * unit}`}
-          strokeWidth={1.5 * unit}
-        />
+        <path d={`M${length / 2 - 13} 9h6m-3 -3v6`} strokeWidth={1.5} />
       )}
-      {(symbol === 'diode' || symbol === 'led') && (
-        <Diode length={length} unit={unit} lit={symbol === 'led'} />
-      )}
+      {(symbol === 'diode' || symbol === 'led') && <Diode length={length} lit={symbol === 'led'} />}
     </g>
   );
 }
@@ -77,20 +78,19 @@ export function ComparatorSymbol(props: {
   width: number;
   height: number;
   invertingAbove: boolean;
-  unit: number;
 }) {
-  const { width, height, unit } = props;
-  const sign = 5 * unit;
+  const { width, height } = props;
+  const sign = 5;
   const upper = -height / 4;
   const lower = height / 4;
   const plusAt = props.invertingAbove ? lower : upper;
   const minusAt = props.invertingAbove ? upper : lower;
-  const x = 14 * unit;
+  const x = 14;
   return (
     <g transform={`translate(${props.at[0]} ${props.at[1]})`}>
       <path d={`M0 ${-height / 2}V${height / 2}L${width} 0Z`} className="fill-card" />
       <path
-        strokeWidth={1.75 * unit}
+        strokeWidth={1.75}
         d={`M${x - sign} ${plusAt}h${2 * sign}m${-sign} ${-sign}v${2 * sign}M${x - sign} ${minusAt}h${2 * sign}`}
       />
     </g>

@@ -19,7 +19,7 @@ function polyline(points: readonly Point[]): string {
   return points.map(([x, y], index) => `${index === 0 ? 'M' : 'L'}${x} ${y}`).join('');
 }
 
-function Item({ item, unit, lit }: { item: DrawingItem; unit: number; lit: boolean }) {
+function Item({ item, lit }: { item: DrawingItem; lit: boolean }) {
   switch (item.kind) {
     case 'wire':
       return <path d={polyline(item.points)} />;
@@ -28,36 +28,36 @@ function Item({ item, unit, lit }: { item: DrawingItem; unit: number; lit: boole
         <circle
           cx={item.at[0]}
           cy={item.at[1]}
-          r={4 * unit}
+          r={4}
           className={lit ? 'fill-spruce' : 'fill-ink'}
         />
       );
     case 'part':
-      return <PartSymbol symbol={item.symbol} from={item.from} to={item.to} unit={unit} />;
+      return <PartSymbol symbol={item.symbol} from={item.from} to={item.to} />;
     case 'comparator':
-      return <ComparatorSymbol {...item} unit={unit} />;
+      return <ComparatorSymbol {...item} />;
     case 'ground': {
       const [x, y] = item.at;
       return (
         <path
-          d={`M${x} ${y}v${6 * unit}M${x - 13 * unit} ${y + 6 * unit}h${26 * unit}M${x - 8 * unit} ${y + 11 * unit}h${16 * unit}M${x - 3.5 * unit} ${y + 16 * unit}h${7 * unit}`}
+          d={`M${x} ${y}v${6}M${x - 13} ${y + 6}h${26}M${x - 8} ${y + 11}h${16}M${x - 3.5} ${y + 16}h${7}`}
         />
       );
     }
     case 'label':
-      return <Label item={item} unit={unit} lit={lit} />;
+      return <Label item={item} lit={lit} />;
   }
 }
 
-function Label(props: { item: DrawingItem & { kind: 'label' }; unit: number; lit: boolean }) {
-  const { item, unit } = props;
+function Label(props: { item: DrawingItem & { kind: 'label' }; lit: boolean }) {
+  const { item } = props;
   return (
     <text
       x={item.at[0]}
       y={item.at[1]}
       textAnchor={item.anchor}
-      fontSize={15 * unit}
-      strokeWidth={5 * unit}
+      fontSize={15}
+      strokeWidth={5}
       paintOrder="stroke"
       className={clsx(
         'stroke-card',
@@ -71,13 +71,13 @@ function Label(props: { item: DrawingItem & { kind: 'label' }; unit: number; lit
 }
 
 /** The halo behind a lit part, and the wide invisible line that is easy to hit. */
-function Reach({ item, unit, lit }: { item: DrawingItem; unit: number; lit: boolean }) {
+function Reach({ item, lit }: { item: DrawingItem; lit: boolean }) {
   if (item.kind === 'comparator') {
     const [x, y] = item.at;
     return (
       <path
         d={`M${x} ${y - item.height / 2}V${y + item.height / 2}L${x + item.width} ${y}Z`}
-        strokeWidth={18 * unit}
+        strokeWidth={18}
         className={clsx('fill-transparent', lit ? 'stroke-wash' : 'stroke-transparent')}
       />
     );
@@ -86,7 +86,7 @@ function Reach({ item, unit, lit }: { item: DrawingItem; unit: number; lit: bool
   return (
     <path
       d={polyline([item.from, item.to])}
-      strokeWidth={30 * unit}
+      strokeWidth={30}
       strokeLinecap="round"
       className={lit ? 'stroke-wash' : 'stroke-transparent'}
     />
@@ -95,7 +95,6 @@ function Reach({ item, unit, lit }: { item: DrawingItem; unit: number; lit: bool
 
 /** The circuit as a line drawing; what is lit here is lit in the list beside it too. */
 export function Schematic({ drawing, lit, onLight, onPress, label }: SchematicProps) {
-  const unit = drawing.width / 640;
   return (
     <svg
       role="img"
@@ -103,7 +102,7 @@ export function Schematic({ drawing, lit, onLight, onPress, label }: SchematicPr
       viewBox={viewBoxOf(drawing)}
       className="block w-full"
       fill="none"
-      strokeWidth={2 * unit}
+      strokeWidth={2}
       strokeLinejoin="round"
       strokeLinecap="round"
     >
@@ -125,9 +124,9 @@ export function Schematic({ drawing, lit, onLight, onPress, label }: SchematicPr
                   onClick: () => onPress?.(role),
                 })}
           >
-            <Reach item={item} unit={unit} lit={isLit} />
-            <g strokeWidth={isLit ? 3 * unit : undefined}>
-              <Item item={item} unit={unit} lit={isLit} />
+            <Reach item={item} lit={isLit} />
+            <g strokeWidth={isLit ? 3 : undefined}>
+              <Item item={item} lit={isLit} />
             </g>
           </g>
         );

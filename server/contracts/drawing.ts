@@ -6,10 +6,10 @@ const pointSchema = z.tuple([z.number(), z.number()]);
 export const drawingItemSchema = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('wire'), points: z.array(pointSchema), role: z.string().optional() }),
   z.object({ kind: z.literal('dot'), at: pointSchema, role: z.string().optional() }),
-  /** A two-ended symbol drawn from one end to the other; `role` names the part. */
+  /** A two-ended symbol from one end to the other, diodes from anode to cathode; `role` names the part. */
   z.object({
     kind: z.literal('part'),
-    symbol: z.enum(['resistor', 'capacitor', 'polarised-capacitor', 'diode', 'led']),
+    symbol: z.enum(['resistor', 'trimmer', 'capacitor', 'polarised-capacitor', 'diode', 'led']),
     role: z.string(),
     from: pointSchema,
     to: pointSchema,
@@ -34,6 +34,7 @@ export const drawingItemSchema = z.discriminatedUnion('kind', [
   }),
 ]);
 export type DrawingItem = z.infer<typeof drawingItemSchema>;
+export type PartSymbol = Extract<DrawingItem, { kind: 'part' }>['symbol'];
 
 /** A schematic as data, drawn alike on the screen and on paper. */
 export const drawingSchema = z.object({

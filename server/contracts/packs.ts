@@ -55,7 +55,7 @@ export const packPartSchema = z.object({
   tolerance: z.number().optional(),
   dielectric: z.string().optional(),
   colour: z.string().optional(),
-  /** Comparators in the package; the board holds the idle ones' inputs apart. */
+  /** Comparators in the package; R5 and R6 hold the idle ones' inputs apart. */
   sections: z.int().optional(),
 });
 export type PackPart = z.infer<typeof packPartSchema>;

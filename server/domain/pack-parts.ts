@@ -15,10 +15,17 @@ const roleOrder: readonly PackRole[] = [
   'R4',
   'R4A',
   'R4B',
+  'RV',
+  'RC',
+  'DC',
+  'RD',
+  'DD',
   'C1',
   'RP',
   'LED',
   'RL',
+  'R5',
+  'R6',
   'C2',
   'PCB',
   'BH',
@@ -59,26 +66,34 @@ export function markingOf(part: CataloguePart): Marking {
         : (capacitorCode(farads, tolerance) ?? capacitorCode(farads));
     return { bands: null, code, text: code ?? formatFarads(farads) };
   }
+  if (isKind(part, 'trimmer')) {
+    const code = chipCode(part.facts.ohms, 2);
+    return { bands: null, code, text: code ?? formatOhms(part.facts.ohms) };
+  }
+  if (isKind(part, 'diode'))
+    return { bands: null, code: null, text: 'a band round one end marks the cathode' };
   if (isKind(part, 'comparator'))
     return { bands: null, code: part.facts.sku, text: part.facts.sku };
   return { bands: null, code: null, text: '' };
 }
 
 function valueOf(part: CataloguePart): string {
-  if (isKind(part, 'resistor')) return formatOhms(part.facts.ohms);
+  if (isKind(part, 'resistor') || isKind(part, 'trimmer')) return formatOhms(part.facts.ohms);
   if (isKind(part, 'capacitor')) return formatFarads(part.facts.farads);
-  if (isKind(part, 'comparator')) return part.facts.sku;
+  if (isKind(part, 'comparator') || isKind(part, 'diode')) return part.facts.sku;
   if (isKind(part, 'led')) return part.facts.colour;
   return '';
 }
 
-/** What a part is, in a few words: "887 kΩ ± 1 %", "560 nF ± 5 % film (PET)". */
+/** What a part is, in a few words: "887 kΩ ± 1 %", "560 nF ± 5 % film (PET)", "500 kΩ ± 10 % trimmer". */
 export function labelOf(part: CataloguePart): string {
   if (isKind(part, 'resistor')) return `${valueOf(part)} ${tolerancePercent(part.facts.tolerance)}`;
   if (isKind(part, 'capacitor')) {
     const { tolerance, dielectric } = part.facts;
     return `${valueOf(part)} ${tolerancePercent(tolerance)} ${dielectricWords[dielectric]}`;
   }
+  if (isKind(part, 'trimmer'))
+    return `${valueOf(part)} ${tolerancePercent(part.facts.tolerance)} trimmer`;
   return part.facts.name;
 }
 
@@ -94,7 +109,7 @@ export function toPackPart(role: PackRole, part: CataloguePart): PackPart {
     mounting: part.mounting,
     marking: markingOf(part),
   };
-  if (isKind(part, 'resistor')) {
+  if (isKind(part, 'resistor') || isKind(part, 'trimmer')) {
     shown.ohms = part.facts.ohms;
     shown.tolerance = part.facts.tolerance;
   } else if (isKind(part, 'capacitor')) {

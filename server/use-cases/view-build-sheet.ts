@@ -1,5 +1,6 @@
 import type { BuildSheet } from '../contracts/orders.ts';
-import { buildSteps, expectedReadings } from '../domain/build-sheet.ts';
+import { expectedReadings } from '../domain/build-readings.ts';
+import { buildSteps } from '../domain/build-steps.ts';
 import { drawSchematic } from '../domain/schematic.ts';
 import type { Deps } from '../ports.ts';
 import { linesOfOrders, type OrderLineRow } from '../store/orders.ts';
@@ -21,7 +22,10 @@ export async function viewBuildSheet(
 
 /** Everything a build sheet says, from the frozen pack. */
 export function buildSheetOf(ref: string, line: OrderLineRow): BuildSheet {
-  const { promise, parts, brief } = line;
+  const { promise, parts, brief, circuit } = line;
+  const { timing } = circuit;
+  const rate = `${promise.text.rate} ${promise.text.unit}`;
+  const buffered = circuit.load?.buffered === true;
   return {
     ref,
     lineId: line.id,
@@ -31,9 +35,21 @@ export function buildSheetOf(ref: string, line: OrderLineRow): BuildSheet {
     promise,
     strip: line.strip,
     parts,
-    drawing: drawSchematic({ parts, join: joinOf(line), supplyLabel: brief.supply.label }),
-    steps: buildSteps(parts),
-    readings: expectedReadings(line.circuit, `${promise.text.rate} ${promise.text.unit}`),
+    drawing: drawSchematic({
+      parts,
+      join: joinOf(line),
+      timingOhms: timing.kind === 'single' ? timing.ohms : null,
+      buffered,
+      supplyLabel: brief.supply.label,
+    }),
+    steps: buildSteps({
+      parts,
+      careLevel: brief.careLevel,
+      buffered,
+      frequencyHz: promise.frequencyHz,
+      rate,
+    }),
+    readings: expectedReadings(circuit, parts, rate),
     cautions: line.cautions,
   };
 }

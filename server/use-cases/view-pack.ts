@@ -28,7 +28,7 @@ export async function viewPack(
     throw new Refusal('not-found', 'This link leads to no pack. Ask for it again from the brief.');
   }
   if (opened.kind === 'gone') throw new Refusal('not-found', opened.reason);
-  const { pack, inHand, ranked, price, choice } = opened.assessed;
+  const { pack, inHand, ranked, price } = opened.assessed;
   const cycle = analyseCycle(ranked.circuit);
   if (cycle.kind !== 'oscillates') throw new Error(cycle.reason);
   const waveform = sampleWaveform(ranked.circuit, cycle, {
@@ -40,11 +40,7 @@ export async function viewPack(
   return {
     brief: inHand.brief,
     pack,
-    circuit: drawSchematic({
-      parts: pack.parts,
-      join: choice.join,
-      supplyLabel: inHand.brief.supply.label,
-    }),
+    circuit: drawSchematic({ ...pack, supplyLabel: inHand.brief.supply.label }),
     waveform: {
       output: waveform.output,
       capacitor: waveform.capacitor,

@@ -11,8 +11,7 @@ export function printBuildSheet(sheet: BuildSheet): Promise<Buffer> {
   const paper = openSheet(`Build sheet ${sheet.identifier}`);
   let y = printTag(paper, sheet);
   y = printParts(paper, sheet, y + 14);
-  y = heading(paper, 'Schematic', roomFor(paper, y + 16, 330));
-  y = drawSchematic(paper, sheet.drawing, area.left + 40, y, 410);
+  y = printSchematic(paper, sheet, y + 16);
   y = printSteps(paper, sheet, roomFor(paper, y + 8, 260));
   y = printReadings(paper, sheet, y + 16);
   printCautions(paper, sheet, y + 16);
@@ -97,6 +96,17 @@ function printParts(paper: Sheet, sheet: BuildSheet, from: number): number {
     y = Math.max(label, paper.y, y + 22) + 2;
   }
   return y;
+}
+
+/** A narrow drawing is set at the size of its lettering, a wide one as wide as the sheet. */
+const pointsPerUnit = 0.66;
+
+function printSchematic(paper: Sheet, sheet: BuildSheet, from: number): number {
+  const { drawing } = sheet;
+  const across = Math.min(width, drawing.width * pointsPerUnit);
+  const high = (drawing.height / drawing.width) * across;
+  const y = heading(paper, 'Schematic', roomFor(paper, from, high + 30));
+  return drawSchematic(paper, drawing, area.left + (width - across) / 2, y, across);
 }
 
 function printSteps(paper: Sheet, sheet: BuildSheet, from: number): number {

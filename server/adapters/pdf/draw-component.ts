@@ -26,6 +26,8 @@ export function drawComponent(sheet: Sheet, part: PackPart, x: number, y: number
   else if (part.kind === 'capacitor') drawBlock(sheet, part.marking.code ?? '', 54);
   else if (part.kind === 'comparator') drawChip(sheet, part.marking.code ?? '');
   else if (part.kind === 'led') drawLamp(sheet);
+  else if (part.kind === 'diode') drawDiode(sheet);
+  else if (part.kind === 'trimmer') drawTrimmer(sheet, part.marking.code ?? '');
   sheet.restore();
 }
 
@@ -59,4 +61,18 @@ function drawLamp(sheet: Sheet): void {
   sheet.path('M 34 4 L 50 4 A 7 7 0 0 1 50 18 L 34 18 Z').fillAndStroke('#ffffff', ink.text);
   sheet.rect(31, 2, 3, 18).fillAndStroke('#ffffff', ink.text);
   sheet.moveTo(31, 8).lineTo(6, 8).moveTo(31, 15).lineTo(14, 15).stroke();
+}
+
+/** The band stands at the cathode's end. */
+function drawDiode(sheet: Sheet): void {
+  sheet.moveTo(0, 11).lineTo(92, 11).stroke();
+  sheet.rect(28, 4, 36, 14).fillAndStroke('#ffffff', ink.text);
+  sheet.rect(55, 4, 4.5, 14).fillAndStroke(ink.text, ink.text);
+}
+
+function drawTrimmer(sheet: Sheet, code: string): void {
+  sheet.rect(22, 1, 20, 20).fillAndStroke('#ffffff', ink.text);
+  sheet.circle(32, 11, 6.5).stroke();
+  sheet.moveTo(27.5, 15.5).lineTo(36.5, 6.5).stroke();
+  write(sheet, code, 46, 5, { size: 9, weight: 600, width: 40 });
 }

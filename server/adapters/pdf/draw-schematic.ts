@@ -1,4 +1,4 @@
-import type { Drawing, DrawingItem } from '../../contracts/drawing.ts';
+import type { Drawing, DrawingItem, PartSymbol } from '../../contracts/drawing.ts';
 import { ink, write, type Sheet } from './paper.ts';
 
 type Point = [number, number];
@@ -90,6 +90,16 @@ function drawComparator(sheet: Sheet, item: Extract<DrawingItem, { kind: 'compar
   ]);
 }
 
+/** Half the length of a symbol's body; wires make up the rest. */
+const halfBody: Record<PartSymbol, number> = {
+  resistor: 22,
+  trimmer: 22,
+  capacitor: 4,
+  'polarised-capacitor': 4,
+  diode: 9,
+  led: 9,
+};
+
 /** Draws a two-ended part in a frame whose x axis runs from one end to the other. */
 function drawPart(sheet: Sheet, item: Extract<DrawingItem, { kind: 'part' }>): void {
   const [dx, dy] = [item.to[0] - item.from[0], item.to[1] - item.from[1]];
@@ -99,8 +109,7 @@ function drawPart(sheet: Sheet, item: Extract<DrawingItem, { kind: 'part' }>): v
     .translate(...item.from)
     .rotate((Math.atan2(dy, dx) * 180) / Math.PI);
   const middle = length / 2;
-  const body =
-    item.symbol === 'resistor' ? 22 : item.symbol === 'led' || item.symbol === 'diode' ? 9 : 4;
+  const body = halfBody[item.symbol];
   line(sheet, [
     [0, 0],
     [middle - body, 0],
@@ -109,8 +118,10 @@ function drawPart(sheet: Sheet, item: Extract<DrawingItem, { kind: 'part' }>): v
     [middle + body, 0],
     [length, 0],
   ]);
-  if (item.symbol === 'resistor') drawZigzag(sheet, middle - body, middle + body);
-  else if (item.symbol === 'led' || item.symbol === 'diode')
+  if (item.symbol === 'resistor' || item.symbol === 'trimmer') {
+    drawZigzag(sheet, middle - body, middle + body);
+    if (item.symbol === 'trimmer') drawAdjustment(sheet, middle);
+  } else if (item.symbol === 'led' || item.symbol === 'diode')
     drawDiode(sheet, middle, item.symbol === 'led');
   else drawPlates(sheet, middle, item.symbol === 'polarised-capacitor');
   sheet.restore();
@@ -122,6 +133,18 @@ function drawZigzag(sheet: Sheet, from: number, to: number): void {
   for (let k = 0; k < 6; k += 1) points.push([from + (2 * k + 1) * step, k % 2 === 0 ? -8 : 8]);
   points.push([to, 0]);
   line(sheet, points);
+}
+
+/** The slant with its bar across that says: set once with a screwdriver. */
+function drawAdjustment(sheet: Sheet, at: number): void {
+  line(sheet, [
+    [at - 13, 15],
+    [at + 13, -15],
+  ]);
+  line(sheet, [
+    [at + 8, -19.4],
+    [at + 18, -10.6],
+  ]);
 }
 
 function drawPlates(sheet: Sheet, at: number, polarised: boolean): void {
