@@ -3,7 +3,6 @@ import { byPriceThenIds, type Candidate } from './candidate.ts';
 import { formCandidate, type AimedFrame } from './closest.ts';
 import { guaranteedBand, worseEnd } from './guaranteed-band.ts';
 import { capacitanceAt, extremeRate, headCorners, logDrift } from './head-corners.ts';
-import { timingSensitivity } from './kit-effects.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
 import { firstNotBelow } from './resistor-values.ts';
 import type { SearchBrief, StockedResistor } from './shelf.ts';
@@ -27,8 +26,8 @@ export function steadier(a: Steady | null, b: Steady | null): Steady | null {
 
 /**
  * The candidate whose guaranteed band has the least worse end, over every frame and every timing
- * resistance that the shelf holds; null when no frame reaches the target. Frames go by a lower bound
- * of what they can reach, and within a frame the walk outwards from the middle ends where even a
+ * resistance that the shelf holds; null when it holds none. Frames go by a lower bound of what they
+ * can reach, and within a frame the walk outwards from the middle ends where even a
  * perfect resistor would be too far off, so nothing that could win is left out.
  */
 export function findSteadiest(
@@ -39,8 +38,12 @@ export function findSteadiest(
   const kinds = mixedKinds(aimed[0]?.stock.offers ?? []);
   const tolerance = kinds.reduce((least, kind) => Math.min(least, kind.tolerance), 1);
   const queue = aimed
-    .filter((frame) => frame.reaches && frame.distance < Number.POSITIVE_INFINITY)
-    .map((frame) => ({ frame, bound: quickBound(frame, tolerance) }))
+    .filter((frame) => frame.distance < Number.POSITIVE_INFINITY)
+    .map((frame) => ({
+      frame,
+      // A band has its nominal rate inside.
+      bound: Math.max(quickBound(frame, tolerance), -Math.expm1(-frame.distance)),
+    }))
     .sort((a, b) => a.bound - b.bound);
   let best: Steady | null = null;
   for (const { frame, bound } of queue) {
@@ -77,22 +80,32 @@ interface Reach {
   /** ln of slowest and fastest rate over the target, by temperature. */
   slow: number[];
   fast: number[];
-  /** −d ln f / d ln R4. */
-  power: number;
+  /** −d ln f / d ln R4 of the slowest and the fastest kit, towards more and less resistance. */
+  slowPower: number;
+  fastPower: number;
 }
+
+/** Step in R4 by which the powers are found: as wide as the widest tolerance. */
+const powerStep = 0.05;
 
 function reachOf(frame: AimedFrame, brief: SearchBrief): Reach {
   const { head, capacitor, idealOhms } = frame;
   const corners = headCorners(head, brief);
-  const logs = (corner: 'slow' | 'fast') =>
-    corners.celsius.map((celsius, t) => {
-      const farads = capacitanceAt(capacitor, corner, celsius);
-      return Math.log(
-        extremeRate(corners, corner, t, idealOhms, farads, capacitor) / brief.targetHz,
-      );
-    });
-  const power = -timingSensitivity(frame, idealOhms);
-  return { celsius: corners.celsius, slow: logs('slow'), fast: logs('fast'), power };
+  const logAt = (corner: 'slow' | 'fast', t: number, ohms: number) => {
+    const farads = capacitanceAt(capacitor, corner, corners.celsius[t]!);
+    return Math.log(extremeRate(corners, corner, t, ohms, farads, capacitor) / brief.targetHz);
+  };
+  const slow = corners.celsius.map((_, t) => logAt('slow', t, idealOhms));
+  const fast = corners.celsius.map((_, t) => logAt('fast', t, idealOhms));
+  const slower = logAt('slow', 0, idealOhms * (1 + powerStep));
+  const faster = logAt('fast', 0, idealOhms * (1 - powerStep));
+  return {
+    celsius: corners.celsius,
+    slow,
+    fast,
+    slowPower: (slow[0]! - slower) / Math.log1p(powerStep),
+    fastPower: (fast[0]! - faster) / Math.log1p(-powerStep),
+  };
 }
 
 /** Estimates are this near to the band by the full model, in ln of the rate. */
@@ -109,8 +122,10 @@ function steadiestOfFrame(
   const reach = reachOf(frame, brief);
   if (best !== null && leastEnd(reach, kinds) - estimateSlack > best.end) return best;
   const { table } = frame.stock;
-  const start = firstNotBelow(table.ohms, frame.idealOhms * Math.exp(middleOf(reach)));
-  const windowNow = () => windowFor(reach, kinds, (best?.end ?? 1) + estimateSlack);
+  const middle = frame.idealOhms * Math.exp(middleOf(reach));
+  const start = firstNotBelow(table.ohms, Math.max(middle, frame.head.minTimingOhms));
+  const windowNow = () =>
+    windowFor(reach, kinds, (best?.end ?? Number.POSITIVE_INFINITY) + estimateSlack);
   let [from, to] = windowNow();
   for (const step of [-1, 1]) {
     for (let k = step < 0 ? start - 1 : start; k >= 0 && k < table.ohms.length; k += step) {
@@ -136,41 +151,30 @@ function middleOf({ slow, fast }: Reach): number {
   return (Math.max(...fast) + Math.min(...slow)) / 2;
 }
 
-/**
- * Worse end when the resistance is `away` (ln) from the ideal one, spreads by `tolerance` and drifts
- * by `coefficientPerKelvin`.
- */
-function endAt(
-  { slow, fast, celsius, power }: Reach,
-  away: number,
-  tolerance: number,
-  coefficientPerKelvin: number,
-): number {
-  let [low, high] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
-  for (let t = 0; t < celsius.length; t += 1) {
-    const drifted = power * logDrift(coefficientPerKelvin, celsius[t]!);
-    low = Math.min(low, slow[t]! - drifted);
-    high = Math.max(high, fast[t]! - drifted);
-  }
-  return worseOf(low, high, power, away, tolerance);
-}
-
-function worseOf(low: number, high: number, power: number, away: number, tolerance: number) {
+/** Worse end with a resistor of a kind that is `away` (ln) from the ideal value. */
+function endAt(reach: Reach, away: number, kind: TimingKind): number {
+  const [low, high] = endsOf(reach, kind);
   return Math.max(
-    Math.expm1(high - power * (away + Math.log1p(-tolerance))),
-    -Math.expm1(low - power * (away + Math.log1p(tolerance))),
+    Math.expm1(high - reach.fastPower * away),
+    -Math.expm1(low - reach.slowPower * away),
   );
 }
 
 /** ln of the extreme rates with a resistor of a kind at the ideal value. */
-function endsOf({ slow, fast, celsius, power }: Reach, kind: TimingKind): [number, number] {
+function endsOf(
+  { slow, fast, celsius, slowPower, fastPower }: Reach,
+  kind: TimingKind,
+): [number, number] {
   let [low, high] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
   for (let t = 0; t < celsius.length; t += 1) {
-    const drifted = power * logDrift(kind.coefficientPerKelvin, celsius[t]!);
-    low = Math.min(low, slow[t]! - drifted);
-    high = Math.max(high, fast[t]! - drifted);
+    const drifted = logDrift(kind.coefficientPerKelvin, celsius[t]!);
+    low = Math.min(low, slow[t]! - slowPower * drifted);
+    high = Math.max(high, fast[t]! - fastPower * drifted);
   }
-  return [low - power * Math.log1p(kind.tolerance), high - power * Math.log1p(-kind.tolerance)];
+  return [
+    low - slowPower * Math.log1p(kind.tolerance),
+    high - fastPower * Math.log1p(-kind.tolerance),
+  ];
 }
 
 /** The least worse end that a resistor of any of the kinds and of any value could reach. */
@@ -189,8 +193,8 @@ function windowFor(reach: Reach, kinds: readonly TimingKind[], end: number): [nu
   let [from, to] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
   for (const kind of kinds) {
     const [low, high] = endsOf(reach, kind);
-    const least = (high - Math.log1p(end)) / reach.power;
-    const most = (low - (end < 1 ? Math.log1p(-end) : -50)) / reach.power;
+    const least = (high - Math.log1p(end)) / reach.fastPower;
+    const most = end < 1 ? (low - Math.log1p(-end)) / reach.slowPower : Number.POSITIVE_INFINITY;
     if (least > most) continue;
     from = Math.min(from, least);
     to = Math.max(to, most);
@@ -206,19 +210,23 @@ function estimatedEnd(
   second: StockedResistor | null,
   away: number,
 ): number {
-  if (second === null) {
-    return endAt(reach, away, first.tolerance, first.temperatureCoefficientPerKelvin);
-  }
+  if (second === null) return endAt(reach, away, kindOf(first));
   const ohms = frame.stock.table.ohms[k]!;
   const parallel = frame.stock.table.parallel[k] === 1;
   const a = parallel ? ohms / first.ohms : first.ohms / ohms;
-  const b = 1 - a;
-  return endAt(
-    reach,
-    away,
-    a * first.tolerance + b * second.tolerance,
-    a * first.temperatureCoefficientPerKelvin + b * second.temperatureCoefficientPerKelvin,
-  );
+  const [one, other] = [kindOf(first), kindOf(second)];
+  const mix = (x: number, y: number) => a * x + (1 - a) * y;
+  return endAt(reach, away, {
+    tolerance: mix(one.tolerance, other.tolerance),
+    coefficientPerKelvin: mix(one.coefficientPerKelvin, other.coefficientPerKelvin),
+  });
+}
+
+function kindOf(part: StockedResistor): TimingKind {
+  return {
+    tolerance: part.tolerance,
+    coefficientPerKelvin: part.temperatureCoefficientPerKelvin,
+  };
 }
 
 function assess(
