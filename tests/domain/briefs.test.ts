@@ -33,7 +33,7 @@ const catalogue = [
 ];
 
 function resolve(brief: BriefInput, parts = catalogue) {
-  return resolveBrief(briefSchema.parse(brief), parts);
+  return resolveBrief(briefSchema.parse(brief), parts, { meterUncertainty: 0.0025 });
 }
 
 function resolved(brief: BriefInput, parts = catalogue) {
@@ -183,14 +183,32 @@ describe('chooseAccessories', () => {
 });
 
 describe('shelfOf', () => {
-  it('leaves out comparators that no stocked board takes, and parts of the other mounting', () => {
-    const inHand = resolved(second);
-    const { boardFor } = chooseAccessories(catalogue, inHand);
-    const parts = [...catalogue, resistor(1e3, 0.01, { mounting: 'surface-mount' })];
-    const shelf = shelfOf(parts, 'through-hole', (part) => boardFor(part.facts.sections));
-    expect(shelf.comparators.map((part) => part.sections)).toEqual([1]);
-    expect(shelf.resistors).toHaveLength(1);
+  it('takes the parts of one mounting, sold-out resistors too', () => {
+    const gone = resistor(2e3, 0.01, { onHand: 0 });
+    const chip = resistor(1e3, 0.01, { mounting: 'surface-mount' });
+    const shelf = shelfOf([...catalogue, gone, chip], 'through-hole', null);
+    expect(shelf.comparators.map((part) => part.sections)).toEqual([1, 2]);
+    expect(shelf.resistors.map((part) => part.ohms)).toEqual([1e5, 2e3]);
     expect(shelf.capacitors).toHaveLength(2);
+  });
+
+  describe('when capacitors go by their lots', () => {
+    const lot = { id: 7, available: 5, measuredMean: null, measuredDeviation: null };
+    const measured = { ...lot, measuredMean: 1.02e-7, measuredDeviation: 4e-10, measuredCount: 20 };
+    const shelf = shelfOf(
+      [
+        capacitor(1e-7, 'film-pp', { lots: [measured] }),
+        capacitor(2.2e-7, 'film-pp', { lots: [measured, { ...lot, measuredCount: null }] }),
+      ],
+      'through-hole',
+      { meterUncertainty: 0.0025 },
+    );
+
+    it('takes only those of which every lot was measured, at what they measured', () => {
+      expect(shelf.capacitors).toHaveLength(1);
+      expect(shelf.capacitors[0]!.farads / 1.02e-7).toBeCloseTo(1, 2);
+      expect(shelf.capacitors[0]!.tolerance).toBeLessThan(0.05);
+    });
   });
 });
 

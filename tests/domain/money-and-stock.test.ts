@@ -1,5 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { careLevels } from '../../server/contracts/brief.ts';
 import { money, taxWithin, withTax } from '../../server/domain/money.ts';
 import { kitPrice, shareOut } from '../../server/domain/price.ts';
 import { shipBy } from '../../server/domain/ship-by.ts';
@@ -48,24 +49,45 @@ describe('money', () => {
 });
 
 describe('kitPrice', () => {
-  it('shows lines that add up to the price, whatever the parts and the tax', () => {
+  const careFeesMinor = {
+    'as-stocked': 0,
+    'lot-checked': 60,
+    'bench-tuned': 240,
+    'trimmer-fitted': 0,
+  };
+
+  it('shows lines that add up to the price, whatever the parts, the care and the tax', () => {
     const lines = fc.array(fc.record({ label: fc.constant('Part'), netMinor: cents }), {
       maxLength: 7,
     });
+    const care = fc.constantFrom(...careLevels);
     fc.assert(
-      fc.property(lines, cents, rate, (partLines, kitFeeMinor, taxBasisPoints) => {
-        const price = kitPrice(partLines, { kitFeeMinor, taxBasisPoints });
-        const net = partLines.reduce((sum, line) => sum + line.netMinor, kitFeeMinor);
+      fc.property(lines, cents, rate, care, (partLines, kitFeeMinor, taxBasisPoints, level) => {
+        const price = kitPrice(partLines, { kitFeeMinor, careFeesMinor, taxBasisPoints }, level);
+        const fee = careFeesMinor[level];
+        const own = [...partLines.map((one) => one.netMinor), kitFeeMinor];
+        if (fee > 0) own.push(fee);
+        const net = own.reduce((sum, each) => sum + each, 0);
         expect(price.netMinor).toBe(net);
         expect(price.grossMinor).toBe(withTax(net, taxBasisPoints));
         expect(price.lines.reduce((sum, line) => sum + line.grossMinor, 0)).toBe(price.grossMinor);
-        expect(price.lines).toHaveLength(partLines.length + 1);
+        expect(price.lines).toHaveLength(own.length);
         price.lines.forEach((line, k) => {
-          const own = [...partLines.map((one) => one.netMinor), kitFeeMinor][k]!;
-          expect(Math.abs(line.grossMinor - own * (1 + taxBasisPoints / 1e4))).toBeLessThan(1.5);
+          expect(Math.abs(line.grossMinor - own[k]! * (1 + taxBasisPoints / 1e4))).toBeLessThan(
+            1.5,
+          );
         });
       }),
     );
+  });
+
+  it('names what the care costs, and nothing where it costs nothing', () => {
+    const labels = (level: (typeof careLevels)[number]) =>
+      kitPrice([], { kitFeeMinor: 150, careFeesMinor, taxBasisPoints: 2300 }, level).lines.map(
+        ({ label }) => label,
+      );
+    expect(labels('bench-tuned')).toContain('Tuning on the bench');
+    expect(labels('as-stocked')).toHaveLength(1);
   });
 });
 

@@ -1,13 +1,6 @@
 import { describe, expect, it } from 'vitest';
-import { briefSchema, type BriefInput } from '../../server/contracts/brief.ts';
-import { drawingSchema } from '../../server/contracts/drawing.ts';
-import type { PackPart, PackRole } from '../../server/contracts/packs.ts';
 import { adviseOn } from '../../server/domain/advice.ts';
-import { resolveBrief, type BriefInHand } from '../../server/domain/brief.ts';
-import { buildSteps, expectedReadings } from '../../server/domain/build-sheet.ts';
-import type { CataloguePart } from '../../server/domain/catalogue.ts';
-import { choiceOf, chooseAccessories } from '../../server/domain/pack-choice.ts';
-import { inBillOrder, labelOf, markingOf, toPackPart } from '../../server/domain/pack-parts.ts';
+import { labelOf, markingOf } from '../../server/domain/pack-parts.ts';
 import {
   addressLines,
   confirmationMail,
@@ -15,72 +8,17 @@ import {
   shippedMail,
 } from '../../server/domain/order-mail.ts';
 import { promiseOf } from '../../server/domain/promise.ts';
-import { drawSchematic } from '../../server/domain/schematic.ts';
-import { shelfOf } from '../../server/domain/shelf.ts';
-import { causesSentence, spreadCauses } from '../../server/domain/spread-causes.ts';
-import { createCircuit } from '../../server/engine/circuit.ts';
-import { findPacks, type RankedPack } from '../../server/engine/search/find-packs.ts';
-import {
-  battery,
-  board,
-  capacitor,
-  comparator,
-  holder,
-  led,
-  part,
-  resistor,
-} from './sample-catalogue.ts';
-
-const e12 = [10, 12, 15, 18, 22, 27, 33, 39, 47, 56, 68, 82];
-const catalogue: CataloguePart[] = [
-  ...[100, 1e3, 1e4].flatMap((decade) => e12.map((value) => resistor(value * decade))),
-  resistor(1e6),
-  ...[1e-8, 1e-7, 8.2e-7, 1e-6].map((farads) => capacitor(farads)),
-  capacitor(4.7e-5, 'electrolytic'),
-  capacitor(1e-7, 'X7R'),
-  comparator(1),
-  board(1),
-  led('red', 1.9),
-  battery(),
-  holder(),
-];
-const byId = new Map(catalogue.map((one) => [one.id, one]));
-
-interface Found {
-  inHand: BriefInHand;
-  packs: RankedPack[];
-  parts: PackPart[];
-}
-
-function find(input: BriefInput): Found {
-  const inHand = resolveBrief(briefSchema.parse(input), catalogue);
-  if (inHand.kind === 'impossible') throw new Error(inHand.errors[0]!.message);
-  const accessories = chooseAccessories(catalogue, inHand);
-  const shelf = shelfOf(catalogue, inHand.brief.mounting, (one) =>
-    accessories.boardFor(one.facts.sections),
-  );
-  const { packs } = findPacks(shelf, inHand.search, 'closest', 6);
-  const { parts } = choiceOf(packs[0]!, inHand, accessories);
-  const entries = Object.entries(parts) as [PackRole, number][];
-  return {
-    inHand,
-    packs,
-    parts: inBillOrder(entries.map(([role, id]) => toPackPart(role, byId.get(id)!))),
-  };
-}
-
-const blinker = find({
-  target: { value: 90, unit: 'per_minute' },
-  supply: { battery: 'TW-CELL-AA-2' },
-  load: { kind: 'led', colour: 'red', amps: 0.001 },
-});
-const roles = (parts: PackPart[]) => parts.map(({ role }) => role);
+import { causesSentence } from '../../server/domain/spread-causes.ts';
+import type { RankedPack } from '../../server/engine/search/find-packs.ts';
+import { spreadCauses } from '../../server/engine/search/kit-causes.ts';
+import { blinker, find, rolesOf } from './found-packs.ts';
+import { board, capacitor, comparator, diode, resistor, trimmer } from './sample-catalogue.ts';
 
 describe('the parts of a pack', () => {
   it('are all that the kit needs, in the order of a bill of materials', () => {
-    const listed = roles(blinker.parts).filter((role) => !/^R4/.test(role));
+    const listed = rolesOf(blinker.parts).filter((role) => !/^R4/.test(role));
     expect(listed).toEqual(['U1', 'R1', 'R2', 'R3', 'C1', 'LED', 'RL', 'C2', 'PCB', 'BH', 'BAT']);
-    const timing = roles(blinker.parts)
+    const timing = rolesOf(blinker.parts)
       .filter((role) => /^R4/.test(role))
       .join();
     expect(['R4', 'R4A,R4B']).toContain(timing);
@@ -96,6 +34,8 @@ describe('the parts of a pack', () => {
     [capacitor(1e-7, 'X7R', { mounting: 'surface-mount' }), 'not marked; keep it in its bag'],
     [capacitor(4.7e-5, 'electrolytic'), '47\u202fµF 63\u202fV'],
     [comparator(1), 'TW-C1'],
+    [trimmer(5e5), '504'],
+    [diode(), 'a band round one end marks the cathode'],
     [board(1), ''],
   ])('are marked as one reads them (%#)', (one, text) => {
     expect(markingOf(one).text.replace(/\s*\/.*/, '')).toBe(text);
@@ -105,15 +45,8 @@ describe('the parts of a pack', () => {
     expect(labelOf(resistor(887e3, 0.001))).toBe('887\u202fkΩ ±\u00a00.1\u202f%');
     expect(labelOf(capacitor(5.6e-7))).toBe('560\u202fnF ±\u00a05\u202f% film (PET)');
     expect(labelOf(board(1))).toBe('Board');
-    const trimmer = part({
-      kind: 'trimmer',
-      sku: 'TW-T',
-      name: 'Trimmer',
-      ohms: 1e4,
-      tolerance: 0.2,
-      temperatureCoefficientPerKelvin: 1e-4,
-    });
-    expect(labelOf(trimmer)).toBe('Trimmer');
+    expect(labelOf(trimmer(5e5))).toBe('500\u202fkΩ ±\u00a010\u202f% trimmer');
+    expect(labelOf(diode())).toBe('Diode, silicon signal');
   });
 });
 
@@ -166,7 +99,7 @@ describe('the promise in words', () => {
 describe('the causes of the spread', () => {
   it('are sorted, add up to about half the guaranteed band, and name the first', () => {
     for (const pack of blinker.packs) {
-      const causes = spreadCauses(pack, blinker.inHand.search);
+      const causes = spreadCauses(pack, blinker.inHand.search, blinker.shelf);
       const fractions = causes.map(({ fraction }) => fraction);
       expect([...fractions].sort((a, b) => b - a)).toEqual(fractions);
       const half = Math.log(pack.guaranteed.maxHz / pack.guaranteed.minHz) / 2;
@@ -176,103 +109,6 @@ describe('the causes of the spread', () => {
       );
     }
     expect(causesSentence([])).toBe('Nothing spreads this pack.');
-  });
-});
-
-describe('the schematic', () => {
-  const wiresOf = (drawing: ReturnType<typeof drawSchematic>) =>
-    drawing.items
-      .filter((item) => item.kind === 'part')
-      .map((item) => item.role)
-      .sort();
-
-  it('draws every part of the circuit once, with its value, and says the same in words', () => {
-    const timing = blinker.packs[0]!.join;
-    const drawing = drawingSchema.parse(
-      drawSchematic({ parts: blinker.parts, join: timing, supplyLabel: 'two AA cells' }),
-    );
-    const electric = roles(blinker.parts).filter(
-      (role) => !['U1', 'PCB', 'BH', 'BAT'].includes(role),
-    );
-    expect(wiresOf(drawing)).toEqual([...electric].sort());
-    const labels = drawing.items.flatMap((item) => (item.kind === 'label' ? [item.text] : []));
-    for (const one of blinker.parts.filter(({ value, role }) => value && electric.includes(role))) {
-      expect(labels).toContain(one.value);
-    }
-    for (const role of electric)
-      expect(drawing.description.join(' ')).toMatch(new RegExp(`\\b${role}\\b`));
-    expect(drawing.items.some((item) => item.kind === 'comparator')).toBe(true);
-  });
-
-  it.each(['series', 'parallel'] as const)('joins R4A and R4B in %s', (join) => {
-    const parts = (['U1', 'R1', 'R2', 'R3', 'R4A', 'R4B', 'C1', 'RP'] as const).map((role) => ({
-      role,
-      value: role,
-      kind: 'resistor' as const,
-    }));
-    const drawing = drawSchematic({ parts, join, supplyLabel: '5 V' });
-    expect(wiresOf(drawing)).toEqual(['C1', 'R1', 'R2', 'R3', 'R4A', 'R4B', 'RP']);
-    const along = (role: string) =>
-      drawing.items.find((item) => item.kind === 'part' && item.role === role);
-    const [a, b] = [along('R4A'), along('R4B')] as {
-      from: [number, number];
-      to: [number, number];
-    }[];
-    if (join === 'series') expect(a!.from[1]).toBe(b!.from[1]);
-    else expect(a!.from[1]).not.toBe(b!.from[1]);
-    expect(drawing.description.join(' ')).toContain(
-      join === 'series' ? 'one after the other' : 'side by side',
-    );
-  });
-});
-
-describe('the build sheet', () => {
-  const titles = (parts: PackPart[]) => buildSteps(parts).map(({ title }) => title);
-
-  it('places every part once, power last', () => {
-    const steps = buildSteps(blinker.parts);
-    const placed = steps.flatMap((step) => step.roles).sort();
-    expect(placed).toEqual(
-      roles(blinker.parts)
-        .filter((role) => role !== 'PCB')
-        .sort(),
-    );
-    expect(steps.at(-1)!.text).toMatch(/Fit the cells last/);
-  });
-
-  it('warns of polarity where there is one, and of nothing that is not there', () => {
-    const polar = [...blinker.parts, toPackPart('C1', capacitor(4.7e-5, 'electrolytic'))];
-    expect(titles(polar)).toContain('Electrolytic capacitor');
-    const clock = find({ target: { value: 1, unit: 'kHz' }, load: { kind: 'logic' } });
-    expect(titles(clock.parts)).not.toContain('LED');
-    expect(buildSteps(clock.parts).at(-1)!.text).toMatch(/current limited/);
-    const chips = [toPackPart('R1', resistor(1e4, 0.01, { mounting: 'surface-mount' }))];
-    expect(buildSteps(chips)[1]!.text).toMatch(/tweezers/);
-  });
-
-  it('says what each point should read, in the way one measures it', () => {
-    const readings = expectedReadings(blinker.packs[0]!.circuit, '90.0 a minute');
-    expect(readings.map(({ point }) => point)).toEqual([
-      'Supply',
-      'Non-inverting input (R1, R2, R3 meet)',
-      'C1',
-      'Output',
-      'First beat after power-on',
-    ]);
-    expect(readings[0]!.expect).toBe('3\u202fV');
-    expect(readings[3]).toMatchObject({
-      expect: '90.0 a minute',
-      how: expect.stringMatching(/^Count beats/),
-    });
-    const stuck = createCircuit({
-      supplyVolts: 5,
-      r1Ohms: 1e5,
-      r2Ohms: 1e5,
-      r3Ohms: 1e5,
-      timing: { kind: 'single', ohms: 1e7 },
-      capacitor: { farads: 1e-7, leakageOhms: 1e6 },
-    });
-    expect(expectedReadings(stuck, '')).toHaveLength(1);
   });
 });
 
@@ -388,9 +224,9 @@ describe('adviseOn', () => {
   });
 
   it('turns to the nearest duty, the other mounting, or no LED, where that helps', () => {
-    expect(adviseOn({ ...brief, duty: 0.9 }, none, null, () => null)[0]).toMatchObject({
+    expect(adviseOn({ ...brief, duty: 0.97 }, none, null, () => null)[0]).toMatchObject({
       code: 'duty',
-      change: { duty: 0.8 },
+      change: { duty: 0.95 },
     });
     expect(codes(brief, none, null, (change) => (change.mounting ? near : null))).toContain(
       'mounting',
@@ -406,10 +242,31 @@ describe('adviseOn', () => {
     expect(codes(brief, none, 'Only 1 left.', () => null)).toEqual(['missing-part']);
   });
 
-  it('sells packs as stocked today', () => {
-    const advice = adviseOn({ ...brief, careLevel: 'bench-tuned' }, none, null, () => near);
-    expect(advice).toHaveLength(1);
-    expect(advice[0]!.change).toEqual({ careLevel: 'as-stocked' });
+  it('turns to as stocked where the shelves cannot give the care asked for', () => {
+    const [first] = adviseOn({ ...brief, careLevel: 'bench-tuned' }, none, null, () => near);
+    expect(first).toMatchObject({ code: 'care-level', change: { careLevel: 'as-stocked' } });
+    expect(first!.worseEnd).toBeGreaterThan(0);
+  });
+
+  it('offers the stronger care levels that narrow the band, with how far each does', () => {
+    const guaranteed = (half: number) => ({ minHz: 1.5 * (1 - half), maxHz: 1.5 * (1 + half) });
+    const steadiest: RankedPack = {
+      ...near,
+      wins: ['steadiest'],
+      guaranteed: guaranteed(0.06),
+      yieldWithinBand: 0.5,
+    };
+    const tight = { ...brief, targetHz: 1.5, band: 0.01, careLevel: 'lot-checked' as const };
+    const halves = { 'bench-tuned': 0.02, 'trimmer-fitted': 0.058 };
+    const advice = adviseOn(tight, { packs: [steadiest], considered: 1 }, null, ({ careLevel }) =>
+      careLevel === 'bench-tuned' || careLevel === 'trimmer-fitted'
+        ? { ...steadiest, guaranteed: guaranteed(halves[careLevel]) }
+        : null,
+    );
+    const care = advice.filter(({ code }) => code === 'care-level');
+    expect(care.map(({ change }) => change)).toEqual([{ careLevel: 'bench-tuned' }]);
+    expect(care[0]!.worseEnd).toBeCloseTo(0.02, 9);
+    expect(care[0]!.text).toMatch(/^Bench-tuned, every kit stays within ±\u00a02\u202f%/);
   });
 
   it('names the band that the steadiest pack holds, or how far the nearest rate is', () => {

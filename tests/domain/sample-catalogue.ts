@@ -126,3 +126,30 @@ export const battery = (change: Partial<CataloguePart> = {}) =>
 
 export const holder = (change: Partial<CataloguePart> = {}) =>
   part({ kind: 'holder', sku: 'TW-HOLD-AA-2', name: 'Holder', cellSize: 'AA', cells: 2 }, change);
+
+export const trimmer = (ohms: number, change: Partial<CataloguePart> = {}) =>
+  part(
+    {
+      kind: 'trimmer',
+      sku: `TW-V-${ohms}`,
+      name: `Trimmer ${ohms}`,
+      ohms,
+      tolerance: 0.1,
+      temperatureCoefficientPerKelvin: 1e-4,
+    },
+    change,
+  );
+
+export const diode = (change: Partial<CataloguePart> = {}) =>
+  part(
+    {
+      kind: 'diode',
+      sku: 'TW-D1',
+      name: 'Diode, silicon signal',
+      saturationAmps: 2.5e-9,
+      emissionCoefficient: 1.75,
+      energyGapElectronVolts: 1.11,
+      saturationTemperatureExponent: 3,
+    },
+    change,
+  );
