@@ -1,6 +1,7 @@
 import { clsx } from 'clsx';
 import type { Drawing, DrawingItem } from '../../server/contracts/drawing.ts';
 import { bindUnits } from '../lib/spaces.ts';
+import { useOverflow } from '../lib/use-overflow.ts';
 import { viewBoxOf } from './schematic-bounds.ts';
 import { ComparatorSymbol, PartSymbol } from './schematic-symbols.tsx';
 
@@ -93,44 +94,58 @@ function Reach({ item, lit }: { item: DrawingItem; lit: boolean }) {
   );
 }
 
+/** Below this many pixels for each unit the lettering would be too small to read; it scrolls instead. */
+const leastScale = 0.72;
+
 /** The circuit as a line drawing; what is lit here is lit in the list beside it too. */
 export function Schematic({ drawing, lit, onLight, onPress, label }: SchematicProps) {
+  const [box, scrolls] = useOverflow<HTMLDivElement>();
   return (
-    <svg
-      role="img"
-      aria-label={label}
-      viewBox={viewBoxOf(drawing)}
-      className="block w-full"
-      fill="none"
-      strokeWidth={2}
-      strokeLinejoin="round"
-      strokeLinecap="round"
+    <div
+      ref={box}
+      className="overflow-x-auto"
+      {...(scrolls ? { role: 'region', 'aria-label': 'Circuit diagram', tabIndex: 0 } : {})}
     >
-      {drawing.items.map((item, index) => {
-        const role = 'role' in item ? item.role : undefined;
-        const isLit = role !== undefined && lit?.has(role) === true;
-        return (
-          <g
-            key={index}
-            className={clsx(
-              'transition-colors duration-150',
-              isLit ? 'stroke-spruce' : 'stroke-ink',
-            )}
-            {...(role === undefined
-              ? {}
-              : {
-                  onPointerEnter: () => onLight?.(role),
-                  onPointerLeave: () => onLight?.(null),
-                  onClick: () => onPress?.(role),
-                })}
-          >
-            <Reach item={item} lit={isLit} />
-            <g strokeWidth={isLit ? 3 : undefined}>
-              <Item item={item} lit={isLit} />
-            </g>
-          </g>
-        );
-      })}
-    </svg>
+      <svg
+        role="img"
+        aria-label={label}
+        viewBox={viewBoxOf(drawing)}
+        className="block w-full print:min-w-0!"
+        style={{ minWidth: drawing.width * leastScale }}
+        fill="none"
+        strokeWidth={2}
+        strokeLinejoin="round"
+        strokeLinecap="round"
+      >
+        {drawing.items.map((item, index) => (
+          <Piece key={index} item={item} lit={lit} onLight={onLight} onPress={onPress} />
+        ))}
+      </svg>
+    </div>
+  );
+}
+
+function Piece(props: { item: DrawingItem } & Pick<SchematicProps, 'lit' | 'onLight' | 'onPress'>) {
+  const { item, lit, onLight, onPress } = props;
+  const role = 'role' in item ? item.role : undefined;
+  const isLit = role !== undefined && lit?.has(role) === true;
+  const touch =
+    role === undefined
+      ? {}
+      : {
+          onPointerEnter: () => onLight?.(role),
+          onPointerLeave: () => onLight?.(null),
+          onClick: () => onPress?.(role),
+        };
+  return (
+    <g
+      className={clsx('transition-colors duration-150', isLit ? 'stroke-spruce' : 'stroke-ink')}
+      {...touch}
+    >
+      <Reach item={item} lit={isLit} />
+      <g strokeWidth={isLit ? 3 : undefined}>
+        <Item item={item} lit={isLit} />
+      </g>
+    </g>
   );
 }

@@ -94,13 +94,24 @@ function Care() {
   return (
     <Chapter id="care" title="Care levels">
       <p>
-        <strong className="font-heavy">As stocked</strong> means that the promise is worked out from
-        the values printed on the parts, their tolerances, the temperature range and the supply
-        range, all at their worst together. It is the level every kit is sold at today.
+        The promise always counts tolerances, the temperature range and the supply range, all at
+        their worst together. The care level says what it is worked out from.
       </p>
       <p>
-        Lot-checked (the measured mean of the lot on the shelf), bench-tuned (your capacitor
-        measured and R4 chosen for it) and trimmer fitted are not offered yet.
+        <strong className="font-heavy">As stocked</strong>: the values printed on the parts.
+      </p>
+      <p>
+        <strong className="font-heavy">Lot-checked</strong>: the capacitor counts by the measured
+        mean of its lot on the shelf, so a narrower band can be promised.
+      </p>
+      <p>
+        <strong className="font-heavy">Bench-tuned</strong>: we measure the very capacitor in the
+        bag and choose R4 for it. What is printed on your R4 may differ from the pack page; the
+        build sheet says what is in the bag.
+      </p>
+      <p>
+        <strong className="font-heavy">Trimmer fitted</strong>: you set the rate yourself with a
+        screwdriver, by counting blinks or with a meter on Hz.
       </p>
     </Chapter>
   );

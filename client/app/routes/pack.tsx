@@ -7,8 +7,10 @@ import { Causes } from '../../features/packs/components/causes.tsx';
 import { GraveCautions, PlainCautions } from '../../features/packs/components/cautions.tsx';
 import { CircuitPanel } from '../../features/packs/components/circuit-panel.tsx';
 import { LampPreview } from '../../features/packs/components/lamp-preview.tsx';
+import { Making } from '../../features/packs/components/making.tsx';
 import { PriceLines } from '../../features/packs/components/price-lines.tsx';
 import { PromiseCard } from '../../features/packs/components/promise-card.tsx';
+import { SupplyCurrent } from '../../features/packs/components/supply-current.tsx';
 import { WaveformSection } from '../../features/packs/components/waveform-section.tsx';
 import { makeableWords } from '../../features/packs/model.ts';
 import { bindUnits } from '../../lib/spaces.ts';
@@ -59,6 +61,8 @@ function PackView({ page }: { page: PackPage }) {
         <div className="space-y-9 lg:col-start-2 lg:row-span-2 lg:row-start-1">
           <PromiseCard brief={brief} pack={pack} identifier={page.identifier} />
           <Buy page={page} />
+          <Making pack={pack} />
+          <SupplyCurrent page={page} />
           <PriceLines page={page} />
           {brief.load.kind === 'led' && (
             <LampPreview frequencyHz={pack.promise.frequencyHz} duty={pack.promise.duty} />

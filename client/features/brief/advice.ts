@@ -1,6 +1,7 @@
 import { z } from 'zod';
 import {
   ambientSchema,
+  careLevels,
   loadSchema,
   supplySchema,
   targetSchema,
@@ -19,6 +20,7 @@ const patchSchema = z.object({
     .or(ambientSchema)
     .optional(),
   mounting: z.string().optional(),
+  careLevel: z.enum(careLevels).optional(),
   quantity: z.number().optional(),
   rank: z.string().optional(),
 });
@@ -31,7 +33,8 @@ function plain(value: number, digits = 5): string {
 export function applyAdvice(draft: BriefDraft, change: Record<string, unknown>): BriefDraft {
   const parsed = patchSchema.safeParse(change);
   if (!parsed.success) return draft;
-  const { target, duty, supply, load, band, ambient, mounting, quantity, rank } = parsed.data;
+  const { target, duty, supply, load, band, ambient, mounting, careLevel, quantity, rank } =
+    parsed.data;
   const next: BriefDraft = { ...draft };
   if (target?.value !== undefined) next.rate = plain(target.value, 7);
   if (target?.unit !== undefined) next.unit = target.unit;
@@ -48,6 +51,7 @@ export function applyAdvice(draft: BriefDraft, change: Record<string, unknown>):
   if (ambient?.minCelsius !== undefined) next.from = plain(ambient.minCelsius);
   if (ambient?.maxCelsius !== undefined) next.to = plain(ambient.maxCelsius);
   if (mounting !== undefined) next.mounting = mounting;
+  if (careLevel !== undefined) next.care = careLevel;
   if (quantity !== undefined) next.kits = plain(quantity);
   if (rank !== undefined) next.rank = rank;
   return next;

@@ -1,5 +1,10 @@
-import { ledColours, ranks, targetUnits } from '../../../server/contracts/brief.ts';
-import type { Rank, SolveRequestInput, Target } from '../../../server/contracts/brief.ts';
+import { careLevels, ledColours, ranks, targetUnits } from '../../../server/contracts/brief.ts';
+import type {
+  CareLevel,
+  Rank,
+  SolveRequestInput,
+  Target,
+} from '../../../server/contracts/brief.ts';
 import type { Shop } from '../../../server/contracts/shop.ts';
 import { formatDigits, formatQuantity, readNumber } from '../../lib/format-number.ts';
 import { narrow } from '../../lib/spaces.ts';
@@ -192,7 +197,7 @@ export function readDraft(
       band: fraction(draft.band),
       ambient: { minCelsius: readNumber(draft.from), maxCelsius: readNumber(draft.to) },
       mounting: draft.mounting === 'surface-mount' ? 'surface-mount' : 'through-hole',
-      careLevel: 'as-stocked',
+      careLevel: careOf(draft),
       quantity: readNumber(draft.kits),
       rank: rankOf(draft),
     },
@@ -201,6 +206,10 @@ export function readDraft(
 
 export function rankOf(draft: BriefDraft): Rank {
   return ranks.find((each) => each === draft.rank) ?? 'best-value';
+}
+
+export function careOf(draft: Pick<BriefDraft, 'care'>): CareLevel {
+  return careLevels.find((each) => each === draft.care) ?? 'as-stocked';
 }
 
 function fraction(percent: string): number {

@@ -55,9 +55,13 @@ export interface TagPart {
   part: PackPart;
 }
 
-const tagRoles: readonly (readonly string[])[] = [['R4', 'R4A', 'R4B'], ['C1'], ['R1', 'R2', 'R3']];
+const tagRoles: readonly (readonly string[])[] = [
+  ['R4', 'R4A', 'R4B', 'RV', 'RC', 'RD'],
+  ['C1'],
+  ['R1', 'R2', 'R3'],
+];
 
-/** What is drawn on a tag: the timing resistor, then the capacitor, then the threshold resistors. */
+/** What is drawn on a tag: whatever sets the time, then the capacitor, then the threshold resistors. */
 export function tagParts(pack: Pack): TagPart[] {
   return tagRoles.flatMap((roles) =>
     groupParts(pack.parts.filter((part) => roles.includes(part.role))).map((group) => ({
@@ -94,6 +98,35 @@ export function hasFlashCaution(pack: Pick<Pack, 'cautions'>): boolean {
 
 /** A lamp on the screen may follow the kit only up to this rate, in beats a second. */
 export const lampLimitHertz = 3;
+
+const careNames: Record<Pack['careLevel'], string> = {
+  'as-stocked': 'As stocked',
+  'lot-checked': 'Lot-checked',
+  'bench-tuned': 'Bench-tuned',
+  'trimmer-fitted': 'Trimmer fitted',
+};
+
+/** "Bench-tuned", with what that means for a kit of this pack. */
+export function careWords({ careLevel, join }: Pick<Pack, 'careLevel' | 'join'>): {
+  name: string;
+  meaning: string;
+} {
+  const name = careNames[careLevel];
+  const timing = join === null ? 'R4 is' : 'R4A and R4B are';
+  switch (careLevel) {
+    case 'as-stocked':
+      return { name, meaning: 'parts as printed, their tolerances counted in full' };
+    case 'lot-checked':
+      return { name, meaning: 'the capacitor counts by what its lots on our shelf measured' };
+    case 'bench-tuned':
+      return {
+        name,
+        meaning: `we measure the very capacitor in the bag, and ${timing} chosen for it; the values here are those of a capacitor as printed`,
+      };
+    case 'trimmer-fitted':
+      return { name, meaning: 'you set the rate yourself once the kit runs' };
+  }
+}
 
 export function makeableWords(count: number): string {
   if (count >= 500) return `more than${noBreak}500 can be made today`;

@@ -39,6 +39,10 @@ export function samplePack(
   return {
     token,
     topology: 'equal-thresholds',
+    why: 'Three like resistors set thresholds at a third and two thirds of the supply.',
+    careLevel: 'as-stocked',
+    buffered: false,
+    notes: [],
     join: null,
     timingOhms: 887_000,
     parts: [

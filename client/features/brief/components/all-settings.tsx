@@ -1,8 +1,8 @@
-import { careLevels } from '../../../../server/contracts/brief.ts';
 import { useShop } from '../../../lib/shop.ts';
 import { Field, Select } from '../../../ui/field.tsx';
 import { defaultBattery, isClock } from '../model.ts';
 import type { BriefDraft, BriefErrors, BriefField } from '../model.ts';
+import { CareChoice } from './care-choice.tsx';
 
 interface SettingsProps {
   draft: BriefDraft;
@@ -17,13 +17,6 @@ const unitOptions = [
   { value: 's', label: 's for each beat' },
   { value: 'ms', label: 'ms for each beat' },
 ] as const;
-
-const careWords: Record<(typeof careLevels)[number], string> = {
-  'as-stocked': 'as stocked: the printed values',
-  'lot-checked': 'lot-checked (not offered today)',
-  'bench-tuned': 'bench-tuned (not offered today)',
-  'trimmer-fitted': 'trimmer fitted (not offered today)',
-};
 
 const rankOptions = [
   { value: 'best-value', label: 'best value: the cheapest that holds the band' },
@@ -51,6 +44,12 @@ export function AllSettings(props: SettingsProps & { id: string }) {
       <TargetSettings {...props} />
       <SupplySettings {...props} />
       <HowSettings {...props} />
+      <CareChoice
+        className="sm:col-span-2 lg:col-span-3"
+        draft={props.draft}
+        error={props.errors.care}
+        change={props.change}
+      />
     </section>
   );
 }
@@ -130,17 +129,6 @@ function HowSettings(props: SettingsProps) {
           { value: 'surface-mount', label: 'surface-mount' },
         ]}
         {...typed(props, 'mounting')}
-      />
-      <Select
-        label="Care level"
-        options={careLevels.map((level) => ({
-          value: level,
-          label: careWords[level],
-          disabled: level !== 'as-stocked',
-        }))}
-        hint="Today every kit is packed as stocked. The other levels need the meter on the bench and are not offered yet."
-        value="as-stocked"
-        onChange={() => props.change({ care: 'as-stocked' })}
       />
       <Field label="Kits" inputMode="numeric" {...typed(props, 'kits')} />
       <Select label="Hang first" options={rankOptions} {...typed(props, 'rank')} />

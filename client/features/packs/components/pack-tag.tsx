@@ -11,6 +11,7 @@ import { Scale } from '../../../ui/scale.tsx';
 import { Tag, TagHead } from '../../../ui/tag.tsx';
 import {
   bandOff,
+  careWords,
   hasFlashCaution,
   makeableWords,
   reasonFor,
@@ -81,6 +82,7 @@ function Rate({ pack, brief, packPath }: Omit<PackTagProps, 'action'>) {
         </span>
       </h3>
       <p className="mt-2 text-soft">
+        <span className="font-strong text-ink">{careWords(pack).name}.</span>{' '}
         {yieldClause(pack, brief)}; {makeableWords(pack.makeable)}.
         {hasFlashCaution(pack) && (
           <strong className="block font-strong text-marigold-ink">
