@@ -175,28 +175,30 @@ export function trimmedBand(
   timing: TrimmedTimingParts,
   brief: SearchBrief,
 ): GuaranteedBand {
-  const setting = settingError(timing.ohms, timing.trimmer);
   const band = { minHz: Number.POSITIVE_INFINITY, maxHz: 0 };
   const leakage = insulationSiemens(capacitor);
   const period = (prepared: PreparedSingle, ohms: number, farads: number) =>
     periodWith(prepared, ohms, farads, leakage, capacitor.leakageAmps);
   for (const { atSetting, conditions } of setHeads(head, brief)) {
-    let ohms = timing.ohms;
-    for (let step = 0; step < 4; step += 1) {
-      ohms /= period(atSetting, ohms, capacitor.farads) * brief.targetHz;
-    }
-    const trimmed = Math.max(0, ohms - timing.fixed.ohms);
-    for (const { celsius, prepared } of conditions) {
-      const warm =
-        (ohms - trimmed) * drift(timing.fixed.temperatureCoefficientPerKelvin, celsius) +
-        trimmed * drift(timing.trimmer.temperatureCoefficientPerKelvin, celsius);
-      const farads = capacitor.farads * drift(capacitor.temperatureCoefficientPerKelvin, celsius);
-      for (const spread of [-capacitor.temperatureSpread, capacitor.temperatureSpread]) {
-        const hertz = 1 / period(prepared, warm, farads * (1 + spread));
-        band.minHz = Math.min(band.minHz, hertz > 0 ? hertz : 0);
-        band.maxHz = Math.max(band.maxHz, hertz > 0 ? hertz : 0);
+    // The more a kit's capacitor has, the less is left for the trimmer, and the coarser it sets.
+    for (const sign of [-1, 1]) {
+      const own = capacitor.farads * (1 + sign * capacitor.tolerance);
+      let ohms = timing.ohms / (1 + sign * capacitor.tolerance);
+      for (let step = 0; step < 4; step += 1) ohms /= period(atSetting, ohms, own) * brief.targetHz;
+      const setting = settingError(ohms, timing.trimmer);
+      const trimmed = Math.max(0, ohms - timing.fixed.ohms);
+      for (const { celsius, prepared } of conditions) {
+        const warm =
+          (ohms - trimmed) * drift(timing.fixed.temperatureCoefficientPerKelvin, celsius) +
+          trimmed * drift(timing.trimmer.temperatureCoefficientPerKelvin, celsius);
+        const farads = own * drift(capacitor.temperatureCoefficientPerKelvin, celsius);
+        for (const spread of [-capacitor.temperatureSpread, capacitor.temperatureSpread]) {
+          const hertz = 1 / period(prepared, warm, farads * (1 + spread));
+          band.minHz = Math.min(band.minHz, hertz > 0 ? hertz * (1 - setting) : 0);
+          band.maxHz = Math.max(band.maxHz, hertz > 0 ? hertz / (1 - setting) : 0);
+        }
       }
     }
   }
-  return { minHz: band.minHz * (1 - setting), maxHz: band.maxHz * (1 + setting) };
+  return band;
 }
