@@ -32,7 +32,7 @@ export function trimmedPack(
   if (range === null) return null;
   const fixed = largestFixed(shelf, frame, brief, range.least);
   if (fixed === null) return null;
-  const reach = range.most - fixed.ohms * (1 - fixed.tolerance);
+  const reach = range.most - extremesOf(fixed, brief).least;
   const trimmer = smallestTrimmer(shelf.shelf.trimmers, brief, reach);
   if (trimmer === null) return null;
   return {
@@ -92,18 +92,25 @@ function largestFixed(
       (part) =>
         part.tolerance <= limits.thresholdTolerance * (1 + 1e-9) &&
         holdsMore(part, 1, frame.head.demand, brief.quantity) &&
-        warmest(part, brief) <= leastOhms,
+        extremesOf(part, brief).most <= leastOhms,
     );
     if (suiting) return suiting;
   }
   return null;
 }
 
-function warmest(part: StockedResistor, brief: SearchBrief): number {
+/** Least and most that a part may have over its tolerance and the ambient range, in ohms. */
+function extremesOf(
+  part: StockedResistor | StockedTrimmer,
+  brief: SearchBrief,
+): { least: number; most: number } {
   const drifts = extremeCelsius(brief).map((celsius) =>
     drift(part.temperatureCoefficientPerKelvin, celsius),
   );
-  return part.ohms * (1 + part.tolerance) * Math.max(...drifts);
+  return {
+    least: part.ohms * (1 - part.tolerance) * Math.min(...drifts),
+    most: part.ohms * (1 + part.tolerance) * Math.max(...drifts),
+  };
 }
 
 function smallestTrimmer(
@@ -112,7 +119,7 @@ function smallestTrimmer(
   reachOhms: number,
 ): StockedTrimmer | null {
   const suiting = trimmers.filter(
-    (part) => part.available >= brief.quantity && part.ohms * (1 - part.tolerance) >= reachOhms,
+    (part) => part.available >= brief.quantity && extremesOf(part, brief).least >= reachOhms,
   );
   return suiting.reduce<StockedTrimmer | null>(
     (best, part) =>
