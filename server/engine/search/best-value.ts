@@ -1,8 +1,16 @@
 import type { Frame } from './aim.ts';
+import { inOrder } from './in-order.ts';
 import { byValue, type Candidate } from './candidate.ts';
 import { formCandidate, type AimedFrame } from './closest.ts';
-import { densityOfSum, distributionWith, integrals, type Integrals } from './density.ts';
-import { guaranteedBand } from './guaranteed-band.ts';
+import {
+  densityOfSum,
+  distributionWith,
+  integrals,
+  momentsOf,
+  type Effect,
+  type Integrals,
+} from './density.ts';
+import { guaranteedBand, isWithin } from './guaranteed-band.ts';
 import { frameEffects, shiftRange } from './kit-effects.ts';
 import { frameSpread, kitYield, shareWithin, timingSpread, type FrameSpread } from './kit-yield.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
@@ -33,18 +41,30 @@ export function findBestValue(
   );
   const kinds = mixedKinds(aimed[0]?.stock.offers ?? []);
   const hopeless = rememberHopeless(brief);
-  const queue = aimed
-    .filter((frame) => frame.distance <= -Math.log1p(-brief.band))
-    .sort((a, b) => a.priceMinor - b.priceMinor);
+  const queue = inOrder(
+    aimed.filter((frame) => frame.distance <= -Math.log1p(-brief.band)),
+    (frame) => frame.priceMinor,
+  );
   let best: Candidate | null = null;
   for (const frame of queue) {
     if (best !== null && frame.priceMinor + cheapest > best.priceMinor) break;
     if (hopeless(frame)) continue;
-    const spread = frameSpread(frame, frame.idealOhms, brief);
+    const effects = frameEffects(frame, frame.idealOhms, brief).map(({ effect }) => effect);
+    if (isTooWide(effects, brief)) continue;
+    const spread = frameSpread(frame, frame.idealOhms, brief, effects);
     if (mostOfKinds(spread, kinds, brief) < valueYield - yieldSlack) continue;
     best = cheapestOfFrame(frame, spread, brief, shelf, best);
   }
   return best;
+}
+
+/** 99 % of a sum of uniform causes take at least this many standard deviations to either side. */
+const leastDeviations = 0.99 * Math.sqrt(3) * 0.95;
+
+/** True when the causes' standard deviation alone leaves too few kits in the band. */
+function isTooWide(effects: readonly Effect[], brief: SearchBrief): boolean {
+  const variance = effects.reduce((sum, effect) => sum + momentsOf(effect).variance, 0);
+  return leastDeviations * Math.sqrt(variance) > bandWidth(brief) / 2;
 }
 
 /**
@@ -123,23 +143,20 @@ function cheapestOfFrame(
   let best = before;
   const { stock, head, idealOhms } = frame;
   const { table } = stock;
-  const from = idealOhms * (1 - brief.band) * 0.98;
-  const to = (idealOhms / (1 - brief.band)) * 1.02;
   const leastPrices = cheapestOffers(frame);
-  for (
-    let k = firstNotBelow(table.ohms, Math.max(from, head.minTimingOhms));
-    k < table.ohms.length && table.ohms[k]! <= to;
-    k += 1
-  ) {
+  const farthest = -Math.log1p(-brief.band) * 1.05;
+  const visit = (k: number, offset: number) => {
     const secondAt = table.second[k]!;
     const least = leastPrices[table.first[k]!]! + (secondAt < 0 ? 0 : leastPrices[secondAt]!);
-    if (frame.priceMinor + least > (best?.priceMinor ?? Number.MAX_VALUE)) continue;
-    const offset = spread.sensitivity * Math.log(table.ohms[k]! / idealOhms);
+    if (least === Number.POSITIVE_INFINITY) return;
+    if (best !== null) {
+      const room = best.priceMinor - frame.priceMinor - least;
+      // At the best price so far only a nearer pack is of use.
+      if (room < 0 || (room === 0 && Math.abs(offset) > 1.2 * best.distance + 1e-9)) return;
+    }
     visitChoices(stock, k, (first, second) => {
       const price = frame.priceMinor + first.priceMinor + (second?.priceMinor ?? 0);
       if (best !== null && price > best.priceMinor) return;
-      if (best !== null && price === best.priceMinor && Math.abs(offset) > 1.2 * best.distance)
-        return;
       const timing = chosenParts(table, k, { first, second });
       const estimate = shareWithin(spread, timingSpread(timing, offset), brief);
       if (estimate < valueYield - yieldSlack) return;
@@ -148,22 +165,36 @@ function cheapestOfFrame(
       const actual = Math.log(candidate.frequencyHz / brief.targetHz);
       if (
         shareWithin(spread, timingSpread(timing, actual), brief) >= valueYield ||
-        (estimate < valueYield && holdsBand(candidate, brief, shelf))
+        (estimate < valueYield && isWithin(guaranteedBand(candidate, brief, shelf), brief))
       ) {
         best = candidate;
       }
     });
+  };
+  const start = firstNotBelow(table.ohms, Math.max(idealOhms, head.minTimingOhms));
+  // Outwards from the target, so that a good pack is found early and prices out the rest.
+  for (let [down, up] = [start - 1, start]; down >= 0 || up < table.ohms.length;) {
+    if (up < table.ohms.length) {
+      const offset = spread.sensitivity * Math.log(table.ohms[up]! / idealOhms);
+      if (Math.abs(offset) > farthest) up = table.ohms.length;
+      else visit(up++, offset);
+    }
+    if (down >= 0) {
+      const offset = spread.sensitivity * Math.log(table.ohms[down]! / idealOhms);
+      if (Math.abs(offset) > farthest || table.ohms[down]! < head.minTimingOhms) down = -1;
+      else visit(down--, offset);
+    }
   }
   return best;
 }
 
 const knownPrices = new WeakMap<object, Float64Array>();
 
-/** The least price of each value's offers; very much for none. */
+/** The least price of each value's offers; ∞ for none. */
 function cheapestOffers({ stock: { offers } }: AimedFrame): Float64Array {
   let prices = knownPrices.get(offers);
   if (!prices) {
-    prices = Float64Array.from(offers, (parts) => parts[0]?.priceMinor ?? Number.MAX_VALUE);
+    prices = Float64Array.from(offers, (parts) => parts[0]?.priceMinor ?? Number.POSITIVE_INFINITY);
     knownPrices.set(offers, prices);
   }
   return prices;

@@ -26,65 +26,86 @@ export interface AimedFrame extends Frame {
   distance: number;
 }
 
-/** Aims every head with every capacitor; see `AimedFrame`. */
+/** Aims every head with every capacitor; see `AimedFrame`. Capacitors alike to the circuit share one aim. */
 export function aimFrames(
   heads: readonly Head[],
   capacitors: readonly StockedCapacitor[],
   stock: Omit<TimingStock, 'demand'>,
   brief: SearchBrief,
 ): AimedFrame[] {
+  const groups = groupAlike(capacitors);
   return heads.flatMap((head) => {
     const own = { ...stock, demand: head.demand };
-    return capacitors.map((capacitor) => aimOne({ head, capacitor }, own, brief));
+    const aimed: (Aim | undefined)[] = [];
+    return capacitors.map((capacitor, k): AimedFrame => {
+      const group = groups[k]!;
+      const aim = (aimed[group] ??= aimOne({ head, capacitor }, own, brief));
+      const { idealOhms, reaches, below, above, distance } = aim;
+      return {
+        head,
+        capacitor,
+        idealOhms,
+        reaches,
+        priceMinor: head.priceMinor + capacitor.priceMinor,
+        stock: own,
+        below,
+        above,
+        distance,
+      };
+    });
   });
 }
 
-function aimOne(frame: Frame, stock: TimingStock, brief: SearchBrief): AimedFrame {
-  const { head, capacitor } = frame;
+/** A number for each capacitor, the same for those of one value and leakage. */
+function groupAlike(capacitors: readonly StockedCapacitor[]): number[] {
+  const numbers = new Map<string, number>();
+  return capacitors.map(({ farads, insulationSeconds, leakageAmps }) => {
+    const key = `${farads} ${insulationSeconds} ${leakageAmps}`;
+    const known = numbers.get(key) ?? numbers.size;
+    numbers.set(key, known);
+    return known;
+  });
+}
+
+type Aim = Pick<AimedFrame, 'idealOhms' | 'reaches' | 'below' | 'above' | 'distance'>;
+
+function aimOne(frame: Frame, stock: TimingStock, brief: SearchBrief): Aim {
   const { ohms, reaches } = aimFrame(frame, brief);
-  const aimed: AimedFrame = {
-    head,
-    capacitor,
+  const aim: Aim = {
     idealOhms: ohms,
-    reaches: reaches && ohms >= head.minTimingOhms,
-    priceMinor: head.priceMinor + capacitor.priceMinor,
-    stock,
+    reaches: reaches && ohms >= frame.head.minTimingOhms,
     below: -1,
     above: -1,
     distance: Number.POSITIVE_INFINITY,
   };
-  findNeighbours(aimed, brief);
-  return aimed;
+  findNeighbours(frame, aim, stock, brief);
+  return aim;
 }
 
 /**
  * Since the period rises with resistance, nothing the shelf holds is nearer to the target than the
  * next entry below the ideal resistance and the next above.
  */
-function findNeighbours(aimed: AimedFrame, brief: SearchBrief): void {
-  const { table } = aimed.stock;
-  const { minTimingOhms } = aimed.head;
-  const start = firstNotBelow(table.ohms, Math.max(aimed.idealOhms, minTimingOhms));
+function findNeighbours(frame: Frame, aim: Aim, stock: TimingStock, brief: SearchBrief): void {
+  const { table } = stock;
+  const { minTimingOhms } = frame.head;
+  const start = firstNotBelow(table.ohms, Math.max(aim.idealOhms, minTimingOhms));
   for (let k = start - 1; k >= 0 && table.ohms[k]! >= minTimingOhms; k -= 1) {
-    if (!isMakeable(aimed.stock, k)) continue;
-    aimed.below = k;
+    if (!isMakeable(stock, k)) continue;
+    aim.below = k;
     break;
   }
   for (let k = start; k < table.ohms.length; k += 1) {
-    if (!isMakeable(aimed.stock, k)) continue;
-    aimed.above = k;
+    if (!isMakeable(stock, k)) continue;
+    aim.above = k;
     break;
   }
-  for (const k of [aimed.below, aimed.above]) {
+  for (const k of [aim.below, aim.above]) {
     if (k < 0) continue;
-    const distance = distanceAt(aimed, k, brief);
-    if (distance < aimed.distance) aimed.distance = distance;
+    // NaN, for an entry with which the circuit would not oscillate, compares as no improvement.
+    const distance = Math.abs(Math.log(framePeriod(frame, table.ohms[k]!) * brief.targetHz));
+    if (distance < aim.distance) aim.distance = distance;
   }
-}
-
-/** NaN, which compares as no improvement, for an entry with which the circuit would not oscillate. */
-function distanceAt(aimed: AimedFrame, k: number, brief: SearchBrief): number {
-  return Math.abs(Math.log(framePeriod(aimed, aimed.stock.table.ohms[k]!) * brief.targetHz));
 }
 
 /** Puts a frame and its timing parts together; null when they do not oscillate. */
@@ -134,26 +155,26 @@ function tiedEntries({ below, above, stock }: AimedFrame): number[] {
 
 /**
  * The closest candidate of every capacitor, nearest first. The first is the closest of all that the
- * shelf holds and the rules allow.
+ * shelf holds and the rules allow. `aimed` must come from `aimFrames`.
  */
 export function closestByCapacitor(
   aimed: readonly AimedFrame[],
   brief: SearchBrief,
 ): Candidate<SingleTimingParts>[] {
-  const least = new Map<number, number>();
-  for (const { capacitor, distance } of aimed) {
-    if (distance < (least.get(capacitor.id) ?? Number.POSITIVE_INFINITY)) {
-      least.set(capacitor.id, distance);
-    }
-  }
-  const best = new Map<number, Candidate<SingleTimingParts>>();
+  const least = new Map<number, { distance: number; frames: AimedFrame[] }>();
   for (const frame of aimed) {
-    if (!(frame.distance <= (least.get(frame.capacitor.id) ?? -1) + sameDistance)) continue;
-    const candidate = closestOfFrame(frame, brief);
-    const known = best.get(frame.capacitor.id);
-    if (candidate && (!known || byCloseness(candidate, known) < 0)) {
-      best.set(frame.capacitor.id, candidate);
+    if (frame.distance === Number.POSITIVE_INFINITY) continue;
+    const known = least.get(frame.capacitor.id);
+    if (!known || frame.distance < known.distance - sameDistance) {
+      least.set(frame.capacitor.id, { distance: frame.distance, frames: [frame] });
+    } else if (frame.distance <= known.distance + sameDistance) {
+      known.frames.push(frame);
+      known.distance = Math.min(known.distance, frame.distance);
     }
   }
-  return [...best.values()].sort(byCloseness);
+  const best = [...least.values()].flatMap(({ frames }) => {
+    const found = frames.flatMap((frame) => closestOfFrame(frame, brief) ?? []);
+    return found.sort(byCloseness).slice(0, 1);
+  });
+  return best.sort(byCloseness);
 }

@@ -97,7 +97,8 @@ function gatherSmall(effects: readonly Effect[]): Effect[] {
   return [...effects.filter((_, k) => !isSmall(k)), gathered];
 }
 
-function momentsOf(effect: Effect): { mean: number; variance: number } {
+/** Mean and variance of one effect. */
+export function momentsOf(effect: Effect): { mean: number; variance: number } {
   if (effect.kind === 'points') {
     const mean = effect.values.reduce((sum, value, k) => sum + value * effect.weights[k]!, 0);
     const square = effect.values.reduce((sum, v, k) => sum + v * v * effect.weights[k]!, 0);

@@ -9,7 +9,7 @@ import { conditionShifts, shiftRange, timingCoefficient } from './kit-effects.ts
 import { kitYield, type KitYield } from './kit-yield.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
 import { capacitorSuits } from './rules.ts';
-import type { SearchBrief } from './shelf.ts';
+import type { SearchBrief, StockedCapacitor } from './shelf.ts';
 import { findSteadiest, quickBound, steadier, steadyOf, type Steady } from './steadiest.ts';
 import { steeredCircuit, steeredPacks, steeredValues, supplyReach } from './steered.ts';
 import { isEqualDuty } from './threshold-sets.ts';
@@ -92,9 +92,32 @@ export function findSteadiestPack(shelf: PreparedShelf, brief: SearchBrief): Ran
 /** Every frame of the shelf, aimed at the target. */
 function aimShelf(shelf: PreparedShelf, brief: SearchBrief) {
   const offers = listOffers(shelf.values, brief.quantity);
-  const capacitors = shelf.shelf.capacitors.filter((part) => capacitorSuits(part, brief));
+  const capacitors = cheapestAlike(
+    shelf.shelf.capacitors.filter((part) => capacitorSuits(part, brief)),
+  );
   const stock = { table: shelf.table, offers, quantity: brief.quantity };
   return { aimed: aimFrames(headsFor(shelf, brief), capacitors, stock, brief), capacitors, offers };
+}
+
+/** Of capacitors that differ in nothing but price and stock, the cheapest, then the lowest id. */
+function cheapestAlike(capacitors: readonly StockedCapacitor[]): StockedCapacitor[] {
+  const best = new Map<string, StockedCapacitor>();
+  for (const part of capacitors) {
+    const key = [
+      part.farads,
+      part.tolerance,
+      part.deviation,
+      part.temperatureCoefficientPerKelvin,
+      part.temperatureSpread,
+      part.insulationSeconds,
+      part.leakageAmps,
+    ].join();
+    const known = best.get(key);
+    if (!known || (part.priceMinor - known.priceMinor || part.id - known.id) < 0) {
+      best.set(key, part);
+    }
+  }
+  return [...best.values()];
 }
 
 /** The packs of care levels that fit the timing to each kit; null for those that do not. */

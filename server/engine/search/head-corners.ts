@@ -90,6 +90,38 @@ export function headCorners(head: Head, brief: SearchBrief): HeadCorners {
   return corners;
 }
 
+const knownFew = new WeakMap<Head, HeadCorners>();
+
+/**
+ * Some of a head's corners, for bounds from below: slow with offset and bias pulling one way and much
+ * output resistance, fast undisturbed with little, at both ends of the supply. Kept with the head.
+ */
+export function fewCorners(head: Head, brief: SearchBrief): HeadCorners {
+  let few = knownFew.get(head);
+  if (!few) {
+    const all = comparatorCorners(head, brief);
+    const { celsius, slow, fast } = headCorners(head, brief);
+    const places = (wanted: (corner: HeadCorner) => boolean) =>
+      all.flatMap((corner, k) => (wanted(corner) ? [k] : []));
+    const slowPlaces = places(
+      ({ outputFactor, offsetVolts, biasAmps }) =>
+        outputFactor === 2 && offsetVolts! * biasAmps! > 0,
+    );
+    const fastPlaces = places(
+      ({ outputFactor, offsetVolts }) => outputFactor === 0.5 && offsetVolts === 0,
+    );
+    const pick = (from: readonly PreparedSingle[], which: readonly number[]) =>
+      which.length === 0 ? from : which.map((k) => from[k]!);
+    few = {
+      celsius,
+      slow: slow.map((each) => pick(each, slowPlaces)),
+      fast: fast.map((each) => pick(each, fastPlaces)),
+    };
+    knownFew.set(head, few);
+  }
+  return few;
+}
+
 const disturbances = [
   [0, 0],
   [1, 1],

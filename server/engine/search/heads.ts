@@ -2,6 +2,7 @@ import { createCircuit, type Circuit } from '../circuit.ts';
 import { checkCircuit } from '../check-circuit.ts';
 import { prepareChecked, type PreparedSingle } from '../prepared-single.ts';
 import { demandMakeable, demandOf, type ResistorDemand } from './demand.ts';
+import { nearestResistor } from './nearest-resistor.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
 import {
   bearsLoad,
@@ -12,8 +13,8 @@ import {
   idealPullUpOhms,
   limits,
   lowestTimingOhms,
-  nearestResistor,
 } from './rules.ts';
+import type { ResistorValues } from './resistor-values.ts';
 import type { SearchBrief, StockedComparator, StockedResistor } from './shelf.ts';
 import { thresholdSets, type ThresholdSet } from './threshold-sets.ts';
 
@@ -36,14 +37,17 @@ export interface Head {
 }
 
 /** Lists every head the shelf and the rules allow, in ascending order of the comparators' ids. */
-export function headsFor({ shelf, smallestWatts }: PreparedShelf, brief: SearchBrief): Head[] {
-  const sets = rememberSets(shelf.resistors, brief);
+export function headsFor(
+  { shelf, values, smallestWatts }: PreparedShelf,
+  brief: SearchBrief,
+): Head[] {
+  const sets = new Map<number, ThresholdSet[]>();
   return shelf.comparators
     .filter((part) => comparatorSuits(part, brief))
     .flatMap((comparator) => {
-      const pullUp = choosePullUp(shelf.resistors, comparator, brief);
-      const ledResistor = chooseLedResistor(shelf.resistors, comparator, brief);
-      const idle = chooseIdleResistor(shelf.resistors, comparator, brief);
+      const pullUp = choosePullUp(values, comparator, brief);
+      const ledResistor = chooseLedResistor(values, comparator, brief);
+      const idle = chooseIdleResistor(values, comparator, brief);
       if (pullUp === undefined || ledResistor === undefined || idle === undefined) return [];
       const buffered = buffersLoad(comparator, brief);
       const minTimingOhms = lowestTimingOhms(
@@ -52,7 +56,7 @@ export function headsFor({ shelf, smallestWatts }: PreparedShelf, brief: SearchB
         brief,
         smallestWatts,
       );
-      return sets(comparator).flatMap((thresholds): Head[] => {
+      return thresholdSets(values, comparator, brief, sets).flatMap((thresholds): Head[] => {
         if (!buffered && !bearsLoad(comparator, thresholds, brief)) return [];
         const parts = { comparator, thresholds, pullUp, ledResistor, buffered, idle };
         const fixed = fixedResistors(parts);
@@ -84,32 +88,21 @@ function fixedResistors(parts: HeadParts): (StockedResistor | null)[] {
   return [r1, r2, r3, parts.pullUp, parts.ledResistor, parts.idle, parts.idle];
 }
 
-/** Many comparators share an ideal threshold value; the sets for it are looked up once. */
-function rememberSets(resistors: readonly StockedResistor[], brief: SearchBrief) {
-  const candidates = resistors.filter(
-    (part) =>
-      part.tolerance <= limits.thresholdTolerance * (1 + 1e-9) &&
-      part.available >= 3 * brief.quantity,
-  );
-  const known = new Map<number, ThresholdSet[]>();
-  return (comparator: StockedComparator) => thresholdSets(candidates, comparator, brief, known);
-}
-
 /** Null where none is needed, undefined where one is needed and the shelf has none. */
 function choosePullUp(
-  resistors: readonly StockedResistor[],
+  values: ResistorValues,
   comparator: StockedComparator,
   brief: SearchBrief,
 ): StockedResistor | null | undefined {
   if (comparator.output === 'push-pull') return null;
   const suits = (part: StockedResistor) =>
     part.available >= brief.quantity && bearsPower(part, brief.maxSupplyVolts);
-  return nearestResistor(resistors, idealPullUpOhms(brief), suits) ?? undefined;
+  return nearestResistor(values, idealPullUpOhms(brief), suits) ?? undefined;
 }
 
 /** The smallest stocked value not under the ideal one, so that the asked current is never exceeded. */
 function chooseLedResistor(
-  resistors: readonly StockedResistor[],
+  values: ResistorValues,
   comparator: StockedComparator,
   brief: SearchBrief,
 ): StockedResistor | null | undefined {
@@ -119,12 +112,12 @@ function chooseLedResistor(
   const most = brief.maxSupplyVolts - brief.load.minForwardVolts;
   const suits = (part: StockedResistor) =>
     part.available >= brief.quantity && part.ohms >= ideal * (1 - 1e-9) && bearsPower(part, most);
-  return nearestResistor(resistors, ideal, suits) ?? undefined;
+  return nearestResistor(values, ideal, suits) ?? undefined;
 }
 
 /** For idle sections two of the stocked value nearest to 10 kΩ, between 1 and 10 kΩ. */
 function chooseIdleResistor(
-  resistors: readonly StockedResistor[],
+  values: ResistorValues,
   comparator: StockedComparator,
   brief: SearchBrief,
 ): StockedResistor | null | undefined {
@@ -133,7 +126,7 @@ function chooseIdleResistor(
     part.available >= 2 * brief.quantity &&
     part.ohms >= limits.minIdleOhms * (1 - 1e-9) &&
     part.ohms <= limits.maxIdleOhms * (1 + 1e-9);
-  return nearestResistor(resistors, limits.maxIdleOhms, suits) ?? undefined;
+  return nearestResistor(values, limits.maxIdleOhms, suits) ?? undefined;
 }
 
 /** What a nominal circuit is changed by at a corner; ohms as they are at the corner's temperature. */

@@ -42,9 +42,16 @@ export interface FrameSpread {
   shifts: readonly ConditionShift[];
 }
 
-/** The spread of a frame at about the timing resistance that meets the target. */
-export function frameSpread(frame: Frame, idealOhms: number, brief: SearchBrief): FrameSpread {
-  const effects = frameEffects(frame, idealOhms, brief).map(({ effect }) => effect);
+/**
+ * The spread of a frame at about the timing resistance that meets the target; `effects` are its
+ * `frameEffects` there, worked out when left out.
+ */
+export function frameSpread(
+  frame: Frame,
+  idealOhms: number,
+  brief: SearchBrief,
+  effects: readonly Effect[] = frameEffects(frame, idealOhms, brief).map(({ effect }) => effect),
+): FrameSpread {
   return {
     of: integrals(densityOfSum(effects)),
     sensitivity: timingSensitivity(frame, idealOhms),

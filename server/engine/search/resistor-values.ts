@@ -69,6 +69,7 @@ export function formTimingTable(values: ResistorValues): TimingTable {
   const keys = sortedKeys(values);
   const codes = new Uint32Array(keys.buffer);
   const n = values.ohms.length;
+  const codeMask = codeMaskOf(n);
   const table: TimingTable = {
     ohms: new Float64Array(keys.length),
     first: new Int16Array(keys.length),
@@ -83,7 +84,7 @@ export function formTimingTable(values: ResistorValues): TimingTable {
     const second = place === n ? -1 : place;
     const ohms = formed(values.ohms[first]!, second < 0 ? NaN : values.ohms[second]!, parallel);
     let at = k;
-    // The keys are sorted to about 2e-9 only; what is nearer than that is put in order here.
+    // The keys are sorted by their upper bits only; what those don't tell apart is put in order here.
     for (; at > 0 && table.ohms[at - 1]! > ohms; at -= 1) copyEntry(table, at - 1, at);
     table.ohms[at] = ohms;
     table.first[at] = first;
@@ -93,9 +94,13 @@ export function formTimingTable(values: ResistorValues): TimingTable {
   return table;
 }
 
-/** Enough for 2 × 2000 × 2001 ways; the rest of a double's 52 bits keeps 2e-9 of the value. */
-const codeBits = 23;
-const codeMask = 2 ** codeBits - 1;
+/**
+ * Lowest bits that number every way of n values. For 2000 values they leave 2e-9 of a double's
+ * precision, for the 32767 that the table's arrays can name 5e-7.
+ */
+function codeMaskOf(n: number): number {
+  return 2 ** Math.ceil(Math.log2(2 * n * (n + 1) + 1)) - 1;
+}
 
 /**
  * The value of every way with the way's number in its lowest bits, sorted. Numbers sort natively
@@ -104,7 +109,9 @@ const codeMask = 2 ** codeBits - 1;
  */
 function sortedKeys({ ohms, pairs }: ResistorValues): Float64Array {
   const n = ohms.length;
-  const keys = new Float64Array(n + n * (n + 1));
+  const codeMask = codeMaskOf(n);
+  const paired = pairs.reduce((sum, each) => sum + each, 0);
+  const keys = new Float64Array(n + paired * (paired + 1));
   const words = new Uint32Array(keys.buffer);
   let count = 0;
   const add = (value: number, code: number) => {

@@ -150,35 +150,3 @@ export function idealLedOhms(part: StockedComparator, brief: SearchBrief): numbe
   if (brief.load === null) return Number.POSITIVE_INFINITY;
   return (brief.supplyVolts - brief.load.forwardVolts) / brief.load.amps - part.highOhms;
 }
-
-/**
- * The resistor nearest to `idealOhms` by ratio among those that pass, or null. Ties go to the
- * lower price, then to the lower id.
- */
-export function nearestResistor(
-  resistors: readonly StockedResistor[],
-  idealOhms: number,
-  passes: (part: StockedResistor) => boolean,
-): StockedResistor | null {
-  let best: StockedResistor | null = null;
-  let bestDistance = Number.POSITIVE_INFINITY;
-  for (const part of resistors) {
-    if (!passes(part)) continue;
-    const distance = Math.abs(Math.log(part.ohms / idealOhms));
-    if (
-      distance < bestDistance - 1e-12 ||
-      (distance <= bestDistance + 1e-12 && isBefore(part, best))
-    ) {
-      best = part;
-      bestDistance = distance;
-    }
-  }
-  return best;
-}
-
-function isBefore(part: StockedResistor, best: StockedResistor | null): boolean {
-  if (best === null) return true;
-  return (
-    part.priceMinor < best.priceMinor || (part.priceMinor === best.priceMinor && part.id < best.id)
-  );
-}

@@ -2,7 +2,16 @@ import type { Frame } from './aim.ts';
 import { byPriceThenIds, type Candidate } from './candidate.ts';
 import { formCandidate, type AimedFrame } from './closest.ts';
 import { guaranteedBand, worseEnd } from './guaranteed-band.ts';
-import { capacitanceAt, extremeRate, headCorners, logDrift } from './head-corners.ts';
+import {
+  atCorner,
+  capacitanceAt,
+  extremeRate,
+  fewCorners,
+  headCorners,
+  logDrift,
+  type HeadCorners,
+} from './head-corners.ts';
+import { inOrder } from './in-order.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
 import { firstNotBelow } from './resistor-values.ts';
 import type { SearchBrief, StockedResistor } from './shelf.ts';
@@ -37,21 +46,34 @@ export function findSteadiest(
 ): Steady | null {
   const kinds = mixedKinds(aimed[0]?.stock.offers ?? []);
   const tolerance = kinds.reduce((least, kind) => Math.min(least, kind.tolerance), 1);
-  const queue = aimed
-    .filter((frame) => frame.distance < Number.POSITIVE_INFINITY)
-    .map((frame) => ({
-      frame,
-      // A band has its nominal rate inside.
-      bound: Math.max(quickBound(frame, tolerance), -Math.expm1(-frame.distance)),
-    }))
-    .sort((a, b) => a.bound - b.bound);
+  const queue = inOrder(
+    aimed
+      .filter((frame) => frame.distance < Number.POSITIVE_INFINITY)
+      .map((frame) => ({
+        frame,
+        // A band has its nominal rate inside.
+        bound: Math.max(quickBound(frame, tolerance), -Math.expm1(-frame.distance)),
+      })),
+    ({ bound }) => bound,
+  );
   let best: Steady | null = null;
-  for (const { frame, bound } of queue) {
-    if (best !== null && bound > best.end) break;
-    best = steadiestOfFrame(frame, brief, shelf, kinds, best);
+  for (let from = 0; from < queue.length; from += batchLength) {
+    const batch = queue.slice(from, from + batchLength);
+    if (best !== null && batch[0]!.bound > best.end) break;
+    const closer = batch
+      .filter(({ bound }) => best === null || bound <= best.end)
+      .map(({ frame }) => ({ frame, bound: leastEnd(partialReach(frame, brief), kinds) }))
+      .sort((a, b) => a.bound - b.bound);
+    for (const { frame, bound } of closer) {
+      if (best !== null && bound - estimateSlack > best.end) break;
+      best = steadiestOfFrame(frame, brief, shelf, kinds, best);
+    }
   }
   return best;
 }
+
+/** Frames are looked at in batches: by a quick bound between them, by a closer one within. */
+const batchLength = 256;
 
 /**
  * The period goes with at least this power of R, C and the thresholds' ratio: delays take a tenth of
@@ -89,8 +111,16 @@ interface Reach {
 const powerStep = 0.05;
 
 function reachOf(frame: AimedFrame, brief: SearchBrief): Reach {
-  const { head, capacitor, idealOhms } = frame;
-  const corners = headCorners(head, brief);
+  return reachOver(frame, brief, headCorners(frame.head, brief));
+}
+
+/** As `reachOf` over a few of the corners that are the furthest as a rule: never wider. */
+function partialReach(frame: AimedFrame, brief: SearchBrief): Reach {
+  return reachOver(frame, brief, fewCorners(frame.head, brief));
+}
+
+function reachOver(frame: AimedFrame, brief: SearchBrief, corners: HeadCorners): Reach {
+  const { capacitor, idealOhms } = frame;
   const logAt = (corner: 'slow' | 'fast', t: number, ohms: number) => {
     const farads = capacitanceAt(capacitor, corner, corners.celsius[t]!);
     return Math.log(extremeRate(corners, corner, t, ohms, farads, capacitor) / brief.targetHz);
@@ -108,8 +138,10 @@ function reachOf(frame: AimedFrame, brief: SearchBrief): Reach {
   };
 }
 
-/** Estimates are this near to the band by the full model, in ln of the rate. */
-const estimateSlack = 2e-4;
+/** Estimates are this near to the band by the full model, as a fraction of the rate. */
+const estimateSlack = 4e-5;
+/** Once an estimate of a frame was put right by the full model, the others are this near. */
+const correctedSlack = 2e-6;
 
 function steadiestOfFrame(
   frame: AimedFrame,
@@ -124,18 +156,26 @@ function steadiestOfFrame(
   const { table } = frame.stock;
   const middle = frame.idealOhms * Math.exp(middleOf(reach));
   const start = firstNotBelow(table.ohms, Math.max(middle, frame.head.minTimingOhms));
+  let [correction, slack] = [0, estimateSlack];
   const windowNow = () =>
-    windowFor(reach, kinds, (best?.end ?? Number.POSITIVE_INFINITY) + estimateSlack);
+    windowFor(reach, kinds, (best?.end ?? Number.POSITIVE_INFINITY) - correction + slack);
   let [from, to] = windowNow();
   for (const step of [-1, 1]) {
     for (let k = step < 0 ? start - 1 : start; k >= 0 && k < table.ohms.length; k += step) {
       if (table.ohms[k]! < frame.head.minTimingOhms) break;
       const away = Math.log(table.ohms[k]! / frame.idealOhms);
       if (step < 0 ? away < from : away > to) break;
+      const most = best === null ? 1 : mostTolerance(reach, away, best.end - correction + slack);
+      const share = firstShare(frame, k);
+      if (leastTolerance(frame, k, share) > most) continue;
       visitChoices(frame.stock, k, (first, second) => {
-        const end = estimatedEnd(frame, reach, k, first, second, away);
-        if (best !== null && end - estimateSlack > best.end) return;
+        const tolerance = share * first.tolerance + (1 - share) * (second?.tolerance ?? 0);
+        if (tolerance > most) return;
+        const end = estimatedEnd(frame, reach, k, first, second);
+        if (best !== null && end + correction - slack > best.end) return;
         const found = assess(frame, chosenParts(table, k, { first, second }), brief, shelf);
+        if (found === null) return;
+        [correction, slack] = [found.end - end, correctedSlack];
         const better = steadier(best, found);
         if (better === best) return;
         best = better;
@@ -149,15 +189,6 @@ function steadiestOfFrame(
 /** Where the resistance should lie, in ln from the ideal one, for both ends to be equally far. */
 function middleOf({ slow, fast }: Reach): number {
   return (Math.max(...fast) + Math.min(...slow)) / 2;
-}
-
-/** Worse end with a resistor of a kind that is `away` (ln) from the ideal value. */
-function endAt(reach: Reach, away: number, kind: TimingKind): number {
-  const [low, high] = endsOf(reach, kind);
-  return Math.max(
-    Math.expm1(high - reach.fastPower * away),
-    -Math.expm1(low - reach.slowPower * away),
-  );
 }
 
 /** ln of the extreme rates with a resistor of a kind at the ideal value. */
@@ -202,31 +233,80 @@ function windowFor(reach: Reach, kinds: readonly TimingKind[], end: number): [nu
   return [from, to];
 }
 
+const knownTolerances = new WeakMap<object, Float64Array>();
+
+/** The least tolerance among each value's offers; ∞ for none. */
+function leastTolerances({ stock: { offers } }: AimedFrame): Float64Array {
+  let tolerances = knownTolerances.get(offers);
+  if (!tolerances) {
+    tolerances = Float64Array.from(offers, (parts) =>
+      parts.reduce((least, part) => Math.min(least, part.tolerance), Number.POSITIVE_INFINITY),
+    );
+    knownTolerances.set(offers, tolerances);
+  }
+  return tolerances;
+}
+
+/** The share of the first part in the relative change of entry `k`; 1 for one alone. */
+function firstShare({ stock: { table, offers } }: AimedFrame, k: number): number {
+  if (table.second[k]! < 0) return 1;
+  const ohms = table.ohms[k]!;
+  const first = offers[table.first[k]!]![0]?.ohms ?? ohms;
+  return table.parallel[k] === 1 ? ohms / first : first / ohms;
+}
+
+/** The least tolerance that parts for entry `k` can have together; ∞ where the shelf has none. */
+function leastTolerance(frame: AimedFrame, k: number, share: number): number {
+  const { table } = frame.stock;
+  const tolerances = leastTolerances(frame);
+  const first = tolerances[table.first[k]!]!;
+  const secondAt = table.second[k]!;
+  return secondAt < 0 ? first : share * first + (1 - share) * tolerances[secondAt]!;
+}
+
+/**
+ * More than the tolerance with which a resistance `away` (ln) from the ideal one can have a worse end
+ * under `end`: what is left at 25 °C, where nothing drifts. 1 where 25 °C is not in the range.
+ */
+function mostTolerance(reach: Reach, away: number, end: number): number {
+  const t = reach.celsius.indexOf(25);
+  if (t < 0 || end >= 1) return 1;
+  const fast = away + (Math.log1p(end) - reach.fast[t]!) / reach.fastPower;
+  const slow = (reach.slow[t]! - Math.log1p(-end)) / reach.slowPower - away;
+  // Two parts side by side spread a little less than their shares say.
+  return Math.min(Math.expm1(slow), -Math.expm1(-fast)) * 1.05 + 1e-5;
+}
+
+/** Worse end of a choice for entry `k`, from the reach of its frame and the choice's own corners. */
 function estimatedEnd(
-  frame: AimedFrame,
-  reach: Reach,
+  { stock: { table }, idealOhms }: AimedFrame,
+  { celsius, slow, fast, slowPower, fastPower }: Reach,
   k: number,
   first: StockedResistor,
   second: StockedResistor | null,
-  away: number,
 ): number {
-  if (second === null) return endAt(reach, away, kindOf(first));
-  const ohms = frame.stock.table.ohms[k]!;
-  const parallel = frame.stock.table.parallel[k] === 1;
-  const a = parallel ? ohms / first.ohms : first.ohms / ohms;
-  const [one, other] = [kindOf(first), kindOf(second)];
-  const mix = (x: number, y: number) => a * x + (1 - a) * y;
-  return endAt(reach, away, {
-    tolerance: mix(one.tolerance, other.tolerance),
-    coefficientPerKelvin: mix(one.coefficientPerKelvin, other.coefficientPerKelvin),
-  });
+  let [low, high] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
+  const parallel = table.parallel[k] === 1;
+  for (let t = 0; t < celsius.length; t += 1) {
+    const most = ohmsAt(first, second, parallel, 1, celsius[t]!);
+    const least = ohmsAt(first, second, parallel, -1, celsius[t]!);
+    low = Math.min(low, slow[t]! - slowPower * Math.log(most / idealOhms));
+    high = Math.max(high, fast[t]! - fastPower * Math.log(least / idealOhms));
+  }
+  return Math.max(Math.expm1(high), -Math.expm1(low));
 }
 
-function kindOf(part: StockedResistor): TimingKind {
-  return {
-    tolerance: part.tolerance,
-    coefficientPerKelvin: part.temperatureCoefficientPerKelvin,
-  };
+function ohmsAt(
+  first: StockedResistor,
+  second: StockedResistor | null,
+  parallel: boolean,
+  sign: number,
+  celsius: number,
+): number {
+  const a = atCorner(first.ohms, first, sign, celsius);
+  if (second === null) return a;
+  const b = atCorner(second.ohms, second, sign, celsius);
+  return parallel ? (a * b) / (a + b) : a + b;
 }
 
 function assess(

@@ -1,5 +1,6 @@
-import { limits, idealThresholdOhms, nearestResistor } from './rules.ts';
-import { firstNotBelow, groupByValue, type ResistorValues } from './resistor-values.ts';
+import { nearestResistor } from './nearest-resistor.ts';
+import { limits, idealThresholdOhms } from './rules.ts';
+import { firstNotBelow, type ResistorValues } from './resistor-values.ts';
 import type { SearchBrief, StockedComparator, StockedResistor } from './shelf.ts';
 
 /** Three stocked resistors that set the thresholds; the same one thrice for equal thresholds. */
@@ -13,14 +14,14 @@ const swingLog = Math.LN2 * 2;
 const setsKept = 3;
 
 /**
- * The threshold sets a comparator may use for a brief, out of `usable`: the resistors of 1 % or
- * better of which the shelf holds three for every kit. With a duty of one half, three of one SKU,
- * nearest to the ideal value, once among all of these and once among those of 0.1 % or better; with
- * another duty, the three sets nearest to the asked duty. Empty when there are none, or when the duty
- * is outside 5…95 %. What is found is kept in `known` by the ideal value in ohms.
+ * The threshold sets a comparator may use for a brief, from resistors of 1 % or better of which the
+ * shelf holds three for every kit. With a duty of one half, three of one SKU, nearest to the ideal
+ * value, once among all of these and once among those of 0.1 % or better; with another duty, the
+ * three sets nearest to the asked duty. Empty when there are none, or when the duty is outside
+ * 5…95 %. What is found is kept in `known` by the ideal value in ohms.
  */
 export function thresholdSets(
-  usable: readonly StockedResistor[],
+  values: ResistorValues,
   part: StockedComparator,
   brief: SearchBrief,
   known: Map<number, ThresholdSet[]> = new Map(),
@@ -28,20 +29,23 @@ export function thresholdSets(
   const ideal = idealThresholdOhms(part, brief);
   let sets = known.get(ideal);
   if (!sets) {
-    sets = findSets(usable, ideal, brief.duty);
+    sets = findSets(values, ideal, brief);
     known.set(ideal, sets);
   }
   return sets;
 }
 
-function findSets(
-  usable: readonly StockedResistor[],
-  idealOhms: number,
-  duty: number,
-): ThresholdSet[] {
-  if (isEqualDuty(duty)) return equalSets(usable, idealOhms);
+function findSets(values: ResistorValues, idealOhms: number, brief: SearchBrief): ThresholdSet[] {
+  const { duty, quantity } = brief;
+  if (isEqualDuty(duty)) return equalSets(values, idealOhms, quantity);
   if (duty < limits.minDuty || duty > limits.maxDuty) return [];
-  return shiftedSets(usable, idealOhms, duty);
+  return shiftedSets(values, idealOhms, duty, quantity);
+}
+
+/** Tells the resistors that may set thresholds: tight enough, and three of them for every kit. */
+function maySetThresholds(tolerance: number, quantity: number) {
+  return (part: StockedResistor) =>
+    part.tolerance <= tolerance * (1 + 1e-9) && part.available >= 3 * quantity;
 }
 
 /** True for a duty so near one half that equal thresholds serve it. */
@@ -49,15 +53,10 @@ export function isEqualDuty(duty: number): boolean {
   return Math.abs(duty - 0.5) <= limits.equalDutyTolerance;
 }
 
-/** Equal thresholds, as for a duty of one half: nearest to the ideal value, then tighter ones. */
-export function equalSets(usable: readonly StockedResistor[], idealOhms: number): ThresholdSet[] {
+function equalSets(values: ResistorValues, idealOhms: number, quantity: number): ThresholdSet[] {
   const sets: ThresholdSet[] = [];
   for (const tolerance of [limits.thresholdTolerance, limits.preciseTolerance]) {
-    const one = nearestResistor(
-      usable,
-      idealOhms,
-      (part) => part.tolerance <= tolerance * (1 + 1e-9),
-    );
+    const one = nearestResistor(values, idealOhms, maySetThresholds(tolerance, quantity));
     if (one !== null && sets[0]?.r1 !== one) sets.push({ r1: one, r2: one, r3: one });
   }
   return sets;
@@ -71,27 +70,24 @@ function idealDuty(set: ThresholdSet): number {
 }
 
 function shiftedSets(
-  usable: readonly StockedResistor[],
+  values: ResistorValues,
   idealOhms: number,
   duty: number,
+  quantity: number,
 ): ThresholdSet[] {
-  const byValue = groupByValue(usable);
+  const passes = maySetThresholds(limits.thresholdTolerance, quantity);
   const sets: { set: ThresholdSet; miss: number }[] = [];
-  for (const r3 of usable) {
-    if (r3.ohms > 2 * idealOhms || r3.ohms < idealOhms / 2) continue;
-    const r1 = nearestOf(byValue, r3.ohms * Math.expm1((1 - duty) * swingLog));
-    const r2 = nearestOf(byValue, r3.ohms * Math.expm1(duty * swingLog));
-    const set = { r1, r2, r3 };
-    const miss = Math.abs(idealDuty(set) - duty);
-    if (miss <= limits.dutyTolerance) sets.push({ set, miss });
+  const start = firstNotBelow(values.ohms, (idealOhms / 2) * (1 - 1e-12));
+  for (let k = start; k < values.ohms.length && values.ohms[k]! <= 2 * idealOhms; k += 1) {
+    for (const r3 of values.parts[k]!) {
+      if (!passes(r3)) continue;
+      const r1 = nearestResistor(values, r3.ohms * Math.expm1((1 - duty) * swingLog), passes)!;
+      const r2 = nearestResistor(values, r3.ohms * Math.expm1(duty * swingLog), passes)!;
+      const set = { r1, r2, r3 };
+      const miss = Math.abs(idealDuty(set) - duty);
+      if (miss <= limits.dutyTolerance) sets.push({ set, miss });
+    }
   }
   sets.sort((a, b) => a.miss - b.miss || a.set.r3.id - b.set.r3.id);
   return sets.slice(0, setsKept).map((entry) => entry.set);
-}
-
-/** The part nearest by ratio; among equals the cheaper, then the lower id, as in `nearestResistor`. */
-function nearestOf({ ohms, parts }: ResistorValues, idealOhms: number): StockedResistor {
-  const at = firstNotBelow(ohms, idealOhms);
-  const near = [at - 1, at].flatMap((k) => parts[k]?.[0] ?? []);
-  return nearestResistor(near, idealOhms, () => true)!;
 }

@@ -6,11 +6,11 @@ export interface TimingKind {
   coefficientPerKelvin: number;
 }
 
-const mixSteps = 8;
+const mixSteps = 4;
 
 /**
  * The kinds of timing resistance that the shelf's resistors can form, singly or mixed by twos in
- * steps of an eighth; what lies between steps hardly differs.
+ * steps of a quarter; what lies between steps hardly differs.
  */
 export function mixedKinds(offers: Offers): TimingKind[] {
   const kinds = new Map<string, TimingKind>();
