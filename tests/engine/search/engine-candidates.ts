@@ -28,7 +28,13 @@ export function candidatesOf(outcomes: readonly Outcome[], brief: SearchBrief): 
     const key = headKey(frame);
     const head = heads.get(key) ?? headOf(frame, brief);
     heads.set(key, head);
-    return { frame: { head, capacitor: frame.capacitor }, timing, frequencyHz, distance, priceMinor };
+    return {
+      frame: { head, capacitor: frame.capacitor },
+      timing,
+      frequencyHz,
+      distance,
+      priceMinor,
+    };
   });
 }
 

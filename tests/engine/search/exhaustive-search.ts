@@ -300,9 +300,7 @@ function hotSaturationAmps(diode: StockedDiode, brief: SearchBrief): number {
   const thermalVolts = 8.617333262e-5 * kelvins;
   const { emissionCoefficient: n, energyGapElectronVolts: gap } = diode;
   const power = diode.saturationTemperatureExponent / n;
-  return (
-    diode.saturationAmps * Math.exp(((ratio - 1) * gap) / (n * thermalVolts)) * ratio ** power
-  );
+  return diode.saturationAmps * Math.exp(((ratio - 1) * gap) / (n * thermalVolts)) * ratio ** power;
 }
 
 /** By repeated correction of each resistance by what its own half period misses. */
@@ -332,7 +330,10 @@ function steeredCircuit(
   dischargeOhms: number,
   brief: SearchBrief,
 ): Circuit {
-  return { ...circuitOfFrame(frame, brief), timing: { kind: 'steered', chargeOhms, dischargeOhms, diode } };
+  return {
+    ...circuitOfFrame(frame, brief),
+    timing: { kind: 'steered', chargeOhms, dischargeOhms, diode },
+  };
 }
 
 function fixedParts({ thresholds, pullUp, ledResistor, idle }: FrameParts) {

@@ -27,7 +27,16 @@ const capacitor = fc.record({
   farads: fc.constantFrom(8.2e-11, 1e-10, 4.7e-10, 1e-9, 1e-8, 1e-8, 1e-7, 8.2e-7, 1e-5),
   tolerance: fc.constantFrom(0.01, 0.025, 0.05, 0.2),
   deviation: fc.constantFrom(null, null, 0.004),
-  dielectric: fc.constantFrom('C0G', 'C0G', 'film-pp', 'film-pp', 'film-pet', 'film-pet', 'X7R', 'electrolytic'),
+  dielectric: fc.constantFrom(
+    'C0G',
+    'C0G',
+    'film-pp',
+    'film-pp',
+    'film-pet',
+    'film-pet',
+    'X7R',
+    'electrolytic',
+  ),
   ratedVolts: fc.constantFrom(6.3, 16, 63, 63, 63),
   temperatureCoefficientPerKelvin: fc.constantFrom(0, -2e-4, 4e-4),
   temperatureSpread: fc.constantFrom(0, 0.004),
@@ -35,18 +44,18 @@ const capacitor = fc.record({
   leakageAmps: fc.constantFrom(0, 0, 1e-9, 2e-7),
 });
 
-const comparator = fc.record({
+/** Typical bias with its maximum, as makers state them; of either sign. */
+const bias = fc.constantFrom([0, 1e-11], [2e-12, 1e-11], [-2.5e-8, -1e-7], [1e-7, 2e-7]);
+/** Typical delays, rising and falling, with their maximum. */
+const delay = fc.constantFrom([0, 0, 1e-6], [4.5e-7, 3e-7, 1e-6], [9e-6, 7e-6, 2e-5]);
+
+const comparatorFigures = fc.record({
   available: fc.constantFrom(0, 1, 3, 20, 20, 20, 20),
   priceMinor: fc.constantFrom(58, 130),
   output: fc.constantFrom('push-pull', 'push-pull', 'open-drain'),
   sections: fc.constantFrom(1, 1, 1, 2, 4),
   minSupplyVolts: fc.constantFrom(1.8, 1.8, 1.8, 2.9),
   maxSupplyVolts: fc.constantFrom(5.5, 16, 16),
-  delayLowHighSeconds: fc.constantFrom(0, 4.5e-7, 4.5e-7, 9e-6),
-  delayHighLowSeconds: fc.constantFrom(0, 3e-7, 3e-7, 7e-6),
-  maxDelaySeconds: fc.constant(2e-5),
-  inputBiasAmps: fc.constantFrom(0, 2e-12, -2.5e-8, 1e-7),
-  maxInputBiasAmps: fc.constantFrom(1e-11, -1e-7, 2e-7),
   offsetVolts: fc.constant(1e-3),
   maxOffsetVolts: fc.constantFrom(2e-3, 5e-3),
   hysteresisVolts: fc.constantFrom(0, 2e-3),
@@ -56,6 +65,17 @@ const comparator = fc.record({
   quiescentAmps: fc.constant(1e-5),
   maxQuiescentAmps: fc.constant(2e-5),
 });
+
+const comparator = fc
+  .record({ figures: comparatorFigures, bias, delay })
+  .map(({ figures, bias: [typical, most], delay: [rising, falling, slowest] }) => ({
+    ...figures,
+    inputBiasAmps: typical!,
+    maxInputBiasAmps: most!,
+    delayLowHighSeconds: rising!,
+    delayHighLowSeconds: falling!,
+    maxDelaySeconds: slowest!,
+  }));
 
 const diode = fc.record({
   available: fc.constantFrom(1, 2, 30, 30),

@@ -3,7 +3,9 @@ import type {
   Shelf,
   StockedCapacitor,
   StockedComparator,
+  StockedDiode,
   StockedResistor,
+  StockedTrimmer,
 } from '../../../server/engine/search/shelf.ts';
 
 const e24 = [
@@ -20,6 +22,7 @@ function resistors(): StockedResistor[] {
       ohms,
       tolerance,
       temperatureCoefficientPerKelvin: perKelvin,
+      ratedWatts: 0.25,
     }));
   const all = decades.flatMap((decade) => e24.map((mantissa) => mantissa * decade));
   const precise = [10, 15, 22, 33, 47, 68].flatMap((mantissa) => [mantissa * 1e3, mantissa * 1e4]);
@@ -31,7 +34,7 @@ function resistors(): StockedResistor[] {
 }
 
 function capacitors(): StockedCapacitor[] {
-  const common = { available: 40, ratedVolts: 63, leakageAmps: 0 };
+  const common = { available: 40, deviation: null, ratedVolts: 63, leakageAmps: 0 };
   const list: Omit<StockedCapacitor, 'id'>[] = [1e-9, 1e-8, 1e-7, 4.7e-7, 1e-6, 4.7e-6].flatMap(
     (farads, k): Omit<StockedCapacitor, 'id'>[] => [
       {
@@ -109,11 +112,59 @@ const openDrain: StockedComparator = {
   lowOhms: 60,
 };
 
-/** A workshop's shelf: E24 in three tolerances, two films, an electrolytic, two comparators. */
+const dual: StockedComparator = { ...pushPull, id: 3, priceMinor: 130, sections: 2 };
+const quad: StockedComparator = { ...dual, id: 4, priceMinor: 170, sections: 4, lowOhms: 50 };
+
+const diode: StockedDiode = {
+  id: 1,
+  available: 100,
+  priceMinor: 3,
+  saturationAmps: 2.5e-9,
+  emissionCoefficient: 1.75,
+  energyGapElectronVolts: 1.11,
+  saturationTemperatureExponent: 3,
+};
+
+const trimmers = [1e3, 1e4, 1e5, 1e6].map((ohms, k): StockedTrimmer => ({
+  id: k + 1,
+  available: 20,
+  priceMinor: 70,
+  ohms,
+  tolerance: 0.1,
+  temperatureCoefficientPerKelvin: 1e-4,
+}));
+
+/**
+ * A workshop's shelf: E24 in three tolerances, two films, an electrolytic, two single comparators, a
+ * dual and a quad, a diode and four trimmers.
+ */
 export const workshop: Shelf = {
   resistors: resistors(),
   capacitors: capacitors(),
-  comparators: [pushPull, openDrain],
+  comparators: [pushPull, openDrain, dual, quad],
+  diodes: [diode],
+  trimmers,
+};
+
+/** The workshop with some comparators only, by id. */
+export function workshopWith(...comparatorIds: number[]): Shelf {
+  const comparators = workshop.comparators.filter(({ id }) => comparatorIds.includes(id));
+  return { ...workshop, comparators };
+}
+
+/** The workshop after its lots were measured: the films' means are off and their windows narrow. */
+export const lotChecked: Shelf = {
+  ...workshop,
+  capacitors: workshop.capacitors.map((part) =>
+    part.dielectric === 'electrolytic'
+      ? part
+      : {
+          ...part,
+          farads: part.farads * 1.013,
+          tolerance: 0.4 * part.tolerance,
+          deviation: 0.15 * part.tolerance,
+        },
+  ),
 };
 
 /** A logic clock at 5 V regulated to 5 %, one kit, within 5 % between 0 and 40 °C. */
@@ -129,6 +180,8 @@ export function briefAt(targetHz: number, change: Partial<SearchBrief> = {}): Se
     maxCelsius: 40,
     quantity: 1,
     load: null,
+    care: 'as-stocked',
+    meterUncertainty: 0.005,
     ...change,
   };
 }
