@@ -114,7 +114,8 @@ describe('findPacks', () => {
             for (const rank of ['closest', 'best-value', 'steadiest'] as const) {
               const found = (from: Shelf) =>
                 findPacks(prepareShelf(from), { ...brief, care }, rank, 4).packs;
-              const parts = (from: Shelf) => found(from).map(({ frame, timing }) => [frame, timing]);
+              const parts = (from: Shelf) =>
+                found(from).map(({ frame, timing }) => [frame, timing]);
               expect(parts(backwards(shelf))).toEqual(parts(shelf));
               packs += parts(shelf).length;
             }

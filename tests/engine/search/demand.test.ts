@@ -1,11 +1,6 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { formComposites } from '../../../server/engine/search/composites.ts';
-import {
-  compositeMakeable,
-  demandMakeable,
-  demandOf,
-} from '../../../server/engine/search/demand.ts';
+import { demandMakeable, demandOf, holdsMore } from '../../../server/engine/search/demand.ts';
 import type { StockedResistor } from '../../../server/engine/search/shelf.ts';
 
 const stock = fc
@@ -18,9 +13,10 @@ const stock = fc
       ohms: [1e4, 2.2e4, 4.7e4][k]!,
       tolerance: 0.01,
       temperatureCoefficientPerKelvin: 0,
+      ratedWatts: 0.25,
     })),
   );
-const uses = fc.array(fc.constantFrom(0, 1, 2, null), { maxLength: 5 });
+const uses = fc.array(fc.constantFrom(0, 1, 2, null), { maxLength: 7 });
 
 const enough = (taken: readonly (StockedResistor | null)[], quantity: number) =>
   taken.every(
@@ -46,26 +42,24 @@ describe('demandOf', () => {
   });
 });
 
-describe('compositeMakeable', () => {
-  describe('when thresholds, pull-up and timing may share a value', () => {
-    it('agrees with counting the pieces on the table', () => {
-      fc.assert(
-        fc.property(stock, uses, fc.integer({ min: 1, max: 3 }), (parts, chosen, quantity) => {
-          const fixed = chosen.map((k) => (k === null ? null : parts[k]!));
-          expect(demandMakeable(fixed, quantity)).toBe(enough(fixed, quantity));
-          if (!enough(fixed, quantity)) return;
-          const table = formComposites(parts);
-          const demand = demandOf(fixed);
-          for (let k = 0; k < table.ohms.length; k += 1) {
-            const pieces = [table.first[k]!, table.second[k]!].map((at) => parts[at] ?? null);
-            const own = [...fixed, ...pieces].filter(
-              (part) => part === null || pieces.some((piece) => piece?.id === part.id),
-            );
-            expect(compositeMakeable(table, k, demand, quantity)).toBe(enough(own, quantity));
+describe('demandMakeable and holdsMore', () => {
+  it('agree with counting the pieces on the table', () => {
+    fc.assert(
+      fc.property(stock, uses, fc.integer({ min: 1, max: 3 }), (parts, chosen, quantity) => {
+        const fixed = chosen.map((k) => (k === null ? null : parts[k]!));
+        expect(demandMakeable(fixed, quantity)).toBe(enough(fixed, quantity));
+        for (const part of parts) {
+          for (const count of [1, 2]) {
+            const more = [
+              ...fixed.filter((one) => one?.id === part.id),
+              ...Array(count).fill(part),
+            ];
+            const held = holdsMore(part, count, demandOf(fixed), quantity);
+            expect(held).toBe(enough(more as StockedResistor[], quantity));
           }
-        }),
-        { numRuns: 300, seed: 2 },
-      );
-    });
+        }
+      }),
+      { numRuns: 300, seed: 2 },
+    );
   });
 });
