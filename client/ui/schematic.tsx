@@ -1,4 +1,5 @@
 import { clsx } from 'clsx';
+import type { CSSProperties } from 'react';
 import type { Drawing, DrawingItem } from '../../server/contracts/drawing.ts';
 import { bindUnits } from '../lib/spaces.ts';
 import { useOverflow } from '../lib/use-overflow.ts';
@@ -94,34 +95,39 @@ function Reach({ item, lit }: { item: DrawingItem; lit: boolean }) {
   );
 }
 
-/** Below this many pixels for each unit the lettering would be too small to read; it scrolls instead. */
+/** On a phone, with fewer pixels for each unit, the lettering would be too small; it scrolls instead. */
 const leastScale = 0.72;
 
 /** The circuit as a line drawing; what is lit here is lit in the list beside it too. */
 export function Schematic({ drawing, lit, onLight, onPress, label }: SchematicProps) {
   const [box, scrolls] = useOverflow<HTMLDivElement>();
   return (
-    <div
-      ref={box}
-      className="overflow-x-auto"
-      {...(scrolls ? { role: 'region', 'aria-label': 'Circuit diagram', tabIndex: 0 } : {})}
-    >
-      <svg
-        role="img"
-        aria-label={label}
-        viewBox={viewBoxOf(drawing)}
-        className="block w-full print:min-w-0!"
-        style={{ minWidth: drawing.width * leastScale }}
-        fill="none"
-        strokeWidth={2}
-        strokeLinejoin="round"
-        strokeLinecap="round"
+    <>
+      <div
+        ref={box}
+        className="overflow-x-auto"
+        {...(scrolls ? { role: 'region', 'aria-label': 'Circuit diagram', tabIndex: 0 } : {})}
       >
-        {drawing.items.map((item, index) => (
-          <Piece key={index} item={item} lit={lit} onLight={onLight} onPress={onPress} />
-        ))}
-      </svg>
-    </div>
+        <svg
+          role="img"
+          aria-label={label}
+          viewBox={viewBoxOf(drawing)}
+          className="block w-full max-sm:min-w-(--least) print:min-w-0!"
+          style={{ '--least': `${drawing.width * leastScale}px` } as CSSProperties}
+          fill="none"
+          strokeWidth={2}
+          strokeLinejoin="round"
+          strokeLinecap="round"
+        >
+          {drawing.items.map((item, index) => (
+            <Piece key={index} item={item} lit={lit} onLight={onLight} onPress={onPress} />
+          ))}
+        </svg>
+      </div>
+      {scrolls && (
+        <p className="mt-2 text-small text-soft">The drawing goes on to the right; slide it.</p>
+      )}
+    </>
   );
 }
 

@@ -11,7 +11,7 @@ import {
   targetHertz,
 } from '../../../client/features/brief/model.ts';
 import { narrow } from '../../../client/lib/spaces.ts';
-import { solveRequestSchema, targetUnits } from '../../../server/contracts/brief.ts';
+import { careLevels, solveRequestSchema, targetUnits } from '../../../server/contracts/brief.ts';
 import { sampleShop } from '../support/render.tsx';
 
 describe('readDraft', () => {
@@ -65,6 +65,19 @@ describe('readDraft', () => {
   it('does not judge the LED current of a logic clock', () => {
     const draft = { ...defaultDraft, load: 'clock', milliamps: 'none' };
     expect(readDraft(draft, sampleShop).errors).toBeUndefined();
+  });
+});
+
+describe('the care level', () => {
+  it.each(careLevels)('%s is asked for as chosen, and stays in the address', (care) => {
+    const draft = { ...defaultDraft, care };
+    expect(readDraft(draft, sampleShop).request?.careLevel).toBe(care);
+    expect(draftFromQuery(new URLSearchParams(queryFromDraft(draft))).care).toBe(care);
+  });
+
+  it('is as stocked where the address names one there is not', () => {
+    const draft = draftFromQuery(new URLSearchParams('care=gold-plated'));
+    expect(readDraft(draft, sampleShop).request?.careLevel).toBe('as-stocked');
   });
 });
 
@@ -137,6 +150,20 @@ describe('applyAdvice', () => {
   it('patches what the advice names and leaves the rest', () => {
     const next = applyAdvice(defaultDraft, { band: 0.1, supply: { volts: 5 } });
     expect(next).toEqual({ ...defaultDraft, band: '10', supply: 'volts', volts: '5' });
+  });
+
+  it.each([
+    [{ careLevel: 'trimmer-fitted' }, { care: 'trimmer-fitted' }],
+    [{ band: 0.122 }, { band: '12.2' }],
+    [{ mounting: 'surface-mount' }, { mounting: 'surface-mount' }],
+    [{ quantity: 37 }, { kits: '37' }],
+    [{ ambient: { minCelsius: 15, maxCelsius: 30 } }, { from: '15', to: '30' }],
+    [{ duty: 0.95 }, { lit: '95' }],
+    [{ load: { kind: 'led', colour: 'blue', amps: 0.001 } }, { load: 'blue', milliamps: '1' }],
+    [{ load: { kind: 'logic' } }, { load: 'clock' }],
+    [{ target: { value: 0.05, unit: 'Hz' } }, { rate: '0.05', unit: 'Hz' }],
+  ])('carries over %o', (change, expected) => {
+    expect(applyAdvice(defaultDraft, change)).toEqual({ ...defaultDraft, ...expected });
   });
 
   it('leaves the brief alone when the patch makes no sense', () => {

@@ -2,6 +2,7 @@ import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import {
   bandOff,
+  careWords,
   frontAndBehind,
   makeableWords,
   rateClause,
@@ -11,7 +12,8 @@ import {
 } from '../../../client/features/packs/model.ts';
 import { placeTags } from '../../../client/features/packs/scatter.ts';
 import { narrow } from '../../../client/lib/spaces.ts';
-import { samplePack } from '../support/sample-pack.ts';
+import type { PackRole } from '../../../server/contracts/packs.ts';
+import { samplePack, samplePart } from '../support/sample-pack.ts';
 
 describe('frontAndBehind', () => {
   it('hangs every winner in front and fills up with the next in rank', () => {
@@ -53,6 +55,34 @@ describe('tagParts', () => {
       ['C1', `560${narrow}nF`],
       ['R1–R3', `3${narrow}×${narrow}1${narrow}MΩ`],
     ]);
+  });
+});
+
+describe('tagParts of other circuits', () => {
+  const rolesOn = (...roles: PackRole[]) =>
+    tagParts(
+      samplePack('a', 0.05, 400, { parts: roles.map((role) => samplePart({ role, value: '1' })) }),
+    ).map((part) => part.roles);
+
+  it('draws both steering resistors, and leaves the diodes to the pack’s own page', () => {
+    expect(rolesOn('U1', 'RC', 'RD', 'DC', 'DD', 'C1')).toEqual(['RC', 'RD', 'C1']);
+  });
+
+  it('draws a trimmer beside R4', () => {
+    expect(rolesOn('R4', 'RV', 'C1')).toEqual(['R4', 'RV', 'C1']);
+  });
+});
+
+describe('careWords', () => {
+  it.each([
+    ['as-stocked', 'As stocked', /as printed/],
+    ['lot-checked', 'Lot-checked', /lots on our shelf measured/],
+    ['bench-tuned', 'Bench-tuned', /R4 is chosen for it/],
+    ['trimmer-fitted', 'Trimmer fitted', /you set the rate yourself/],
+  ] as const)('names %s and says what it means', (careLevel, name, meaning) => {
+    const words = careWords({ careLevel, join: null });
+    expect(words.name).toBe(name);
+    expect(words.meaning).toMatch(meaning);
   });
 });
 

@@ -23,7 +23,7 @@ export function SheetView({ sheet }: { sheet: BuildSheet }) {
       <div>
         <PulseStrip strip={sheet.strip} withAxis className="h-20" />
       </div>
-      <div className="grid items-start gap-x-12 gap-y-10 pt-6 lg:grid-cols-2 print:grid-cols-2">
+      <div className="grid items-start gap-x-12 gap-y-10 pt-6 lg:grid-cols-[1fr_1.25fr] print:grid-cols-2">
         <section aria-labelledby="parts">
           <Title id="parts">What is in the bag</Title>
           <PartsTable
@@ -33,9 +33,9 @@ export function SheetView({ sheet }: { sheet: BuildSheet }) {
             caption="Parts of the kit"
           />
         </section>
-        <section aria-labelledby="circuit" className="lg:sticky lg:top-6">
+        <section aria-labelledby="circuit" className="min-w-0 lg:sticky lg:top-6">
           <Title id="circuit">How it is joined</Title>
-          <div className="ruled border border-line px-4 py-6">
+          <div className="ruled border border-line px-3 py-6 sm:pl-13">
             <Schematic
               drawing={sheet.drawing}
               lit={litSet}

@@ -45,7 +45,7 @@ export function BarTable(props: {
                     className="fill-spruce"
                   />
                 </svg>
-                <span className="w-19 shrink-0">{bar.value}</span>
+                <span className="w-24 shrink-0">{bar.value}</span>
               </span>
             </td>
           </tr>

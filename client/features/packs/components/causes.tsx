@@ -3,6 +3,15 @@ import { formatPercent } from '../../../lib/format-number.ts';
 import { bindUnits, narrow } from '../../../lib/spaces.ts';
 import { BarTable } from './bar-table.tsx';
 
+const leastShown = 1e-4;
+
+/** A cause that is next to nothing gets no figures of its own. */
+function reachWords(fraction: number): string {
+  return fraction < leastShown
+    ? `under ${formatPercent(leastShown)}`
+    : `±${narrow}${formatPercent(fraction)}`;
+}
+
 /** What moves the rate, largest first: a conclusion, then a bar for each cause. */
 export function Causes({ page }: { page: PackPage }) {
   const largest = Math.max(...page.causes.map((cause) => cause.fraction), 1e-12);
@@ -24,7 +33,7 @@ export function Causes({ page }: { page: PackPage }) {
             </>
           ),
           share: cause.fraction / largest,
-          value: `±${narrow}${formatPercent(cause.fraction)}`,
+          value: reachWords(cause.fraction),
         }))}
       />
     </section>

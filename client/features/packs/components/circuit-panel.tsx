@@ -8,8 +8,8 @@ export function CircuitPanel(props: {
   onLight: (roles: readonly string[]) => void;
 }) {
   return (
-    <figure>
-      <div className="ruled border border-line px-3 py-6 sm:px-8 sm:py-10">
+    <figure className="min-w-0">
+      <div className="ruled border border-line px-3 py-6 sm:py-10 sm:pr-8 sm:pl-14">
         <Schematic
           drawing={props.drawing}
           lit={props.lit}
