@@ -70,7 +70,7 @@ const known = new WeakMap<Head, HeadCorners>();
  * The corners of a head: supply from empty to fresh, output resistance from half to twice the
  * typical, delay from half the typical to the maximum, bias and offset from none to the maximum with
  * either sign, LED voltage. The rate is monotone in R1–R3 (model section 6), so those stand at one
- * corner each: fastest at R1−, R2−, R3+. It is not monotone in offset and bias, so each corner holds
+ * corner each: fastest at R1−, R2−, R3+; but see `thresholdSigns`. It is not monotone in offset and bias, so each corner holds
  * the undisturbed middle and all four signs (model section 8.5). Kept with the head.
  */
 export function headCorners(head: Head, brief: SearchBrief): HeadCorners {
@@ -80,10 +80,12 @@ export function headCorners(head: Head, brief: SearchBrief): HeadCorners {
     const reduce = cornerReducer(head, brief);
     const combinations = comparatorCorners(head, brief);
     const at = (corner: Corner) =>
-      celsius.map((each) => {
-        const passive = passiveCorner(head, corner, each);
-        return combinations.map((one) => reduce(Object.assign(passive, one)));
-      });
+      celsius.map((each) =>
+        thresholdSigns(head).flatMap((signs) => {
+          const passive = passiveCorner(head, corner, each, signs);
+          return combinations.map((one) => reduce(Object.assign(passive, one)));
+        }),
+      );
     corners = { celsius, slow: at('slow'), fast: at('fast') };
     known.set(head, corners);
   }
@@ -130,16 +132,39 @@ const disturbances = [
   [-1, -1],
 ] as const;
 
-/** What a corner sets apart from offset, bias, supply, output and LED. */
-export function passiveCorner(head: Head, corner: Corner, celsius: number): HeadCorner {
+type Signs = readonly [number, number, number];
+
+/** Which way R1–R3 stand in the slowest kit where the thresholds are well away from the rails. */
+const usualSigns: Signs = [1, 1, -1];
+/** Bias above which a megohm or more of R4 takes equal thresholds near to where they cannot be reached. */
+const muchBiasAmps = 3e-8;
+
+/**
+ * Which ways R1–R3 may stand in the slowest kit (the other way round in the fastest), the usual first.
+ * Where bias, leakage, offset or the output's own level leave little room between a threshold and where
+ * the capacitor settles, the time to get there outweighs all else, so that less R1 or less R2 slows.
+ */
+function thresholdSigns({ thresholds: { r1, r2, r3 }, comparator }: Head): readonly Signs[] {
+  const isEqual = r1.id === r2.id && r2.id === r3.id;
+  const hasRoom = isEqual && Math.abs(comparator.maxInputBiasAmps) < muchBiasAmps;
+  return hasRoom ? [usualSigns] : [usualSigns, [-1, 1, -1], [1, -1, -1]];
+}
+
+/** What a corner sets apart from offset, bias, supply, output and LED; `signs` as in the slowest kit. */
+export function passiveCorner(
+  head: Head,
+  corner: Corner,
+  celsius: number,
+  signs: Signs = usualSigns,
+): HeadCorner {
   const { comparator: part, thresholds } = head;
   const { r1, r2, r3 } = thresholds;
   const sign = corner === 'slow' ? 1 : -1;
   const slow = corner === 'slow';
   return {
-    r1Ohms: atCorner(r1.ohms, r1, sign, celsius),
-    r2Ohms: atCorner(r2.ohms, r2, sign, celsius),
-    r3Ohms: atCorner(r3.ohms, r3, -sign, celsius),
+    r1Ohms: atCorner(r1.ohms, r1, sign * signs[0], celsius),
+    r2Ohms: atCorner(r2.ohms, r2, sign * signs[1], celsius),
+    r3Ohms: atCorner(r3.ohms, r3, sign * signs[2], celsius),
     delayLowHighSeconds: slow ? part.maxDelaySeconds : part.delayLowHighSeconds / 2,
     delayHighLowSeconds: slow ? part.maxDelaySeconds : part.delayHighLowSeconds / 2,
   };
