@@ -125,7 +125,9 @@ export function Schematic({ drawing, lit, onLight, onPress, label }: SchematicPr
         </svg>
       </div>
       {scrolls && (
-        <p className="mt-2 text-small text-soft">The drawing goes on to the right; slide it.</p>
+        <p className="mt-2 w-fit bg-card pr-1 text-small text-soft">
+          The drawing goes on to the right; slide it.
+        </p>
       )}
     </>
   );

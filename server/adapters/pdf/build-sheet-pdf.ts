@@ -32,14 +32,17 @@ function heading(paper: Sheet, text: string, y: number): number {
   return below + 6;
 }
 
+/** Holds a sentence of two lines. */
+const tagHeight = 192;
+
 function printTag(paper: Sheet, sheet: BuildSheet): number {
   const top = area.top;
   const { promise } = sheet;
   paper
     .moveTo(area.left + 14, top)
     .lineTo(area.right, top)
-    .lineTo(area.right, top + 178)
-    .lineTo(area.left, top + 178)
+    .lineTo(area.right, top + tagHeight)
+    .lineTo(area.left, top + tagHeight)
     .lineTo(area.left, top + 14)
     .closePath()
     .lineWidth(1)
@@ -71,7 +74,7 @@ function printTag(paper: Sheet, sheet: BuildSheet): number {
     colour: ink.soft,
     width: width - 28,
   });
-  return top + 178;
+  return top + tagHeight;
 }
 
 function printParts(paper: Sheet, sheet: BuildSheet, from: number): number {
