@@ -25,7 +25,7 @@ const storage = fc.record({
   insulationSeconds: fc.constantFrom(null, 500, 1e4),
   leakageAmps: fc.constantFrom(0, 1e-9),
 });
-const ratios = fc.constantFrom([1, 1], [0.4, 1.8], [2.5, 0.15]);
+const ratios = fc.constantFrom<[number, number][]>([1, 1], [0.4, 1.8], [2.5, 0.15]);
 
 const [hundredKilohms] = workshop.resistors.filter(({ ohms }) => ohms === 1e5);
 const tenKilohms = workshop.resistors.find(({ ohms }) => ohms === 1e4)!;
@@ -33,14 +33,14 @@ const tenKilohms = workshop.resistors.find(({ ohms }) => ohms === 1e4)!;
 function frameOf(
   { openDrain, ...figure }: Partial<StockedComparator> & { openDrain?: boolean },
   capacitor: Partial<StockedCapacitor>,
-  [x1, x2]: number[],
+  [x1, x2]: [number, number],
   brief: SearchBrief,
 ): Frame {
   const threshold = (ratio: number) => ({ ...hundredKilohms!, ohms: 1e5 * ratio });
   const output = openDrain ? 'open-drain' : 'push-pull';
   const parts = {
     comparator: { ...workshop.comparators[0]!, ...figure, output } as const,
-    thresholds: { r1: threshold(x1!), r2: threshold(x2!), r3: threshold(1) },
+    thresholds: { r1: threshold(x1), r2: threshold(x2), r3: threshold(1) },
     pullUp: openDrain ? tenKilohms : null,
     ledResistor: null,
     buffered: false,

@@ -12,6 +12,9 @@ import { anyCase, type Case } from './random-shelves.ts';
 
 const met = { found: 0, none: 0, notClosest: 0, notSure: 0, pairs: 0, singles: 0, refused: 0 };
 
+/** Room for a machine that is busy with something else. */
+const slow = { timeout: 120_000 };
+
 /** The cheapest of all that hold the band, the nearest of these. Yields of dear ones are not needed. */
 function cheapest({ shelf, brief }: Case): Candidate | null {
   const prepared = prepareShelf(shelf);
@@ -46,33 +49,36 @@ const share = fc.constantFrom(0.4, 0.55, 0.65, 0.75, 0.85, 1.05, 1.3, 2);
 
 describe('findPacks', () => {
   describe('when asked for the best value on any small shelf', () => {
-    it('finds the cheapest pack that holds the band of all that the rules allow, and the nearest of that price', () => {
-      fc.assert(
-        fc.property(anyCase, share, (one, width) => {
-          const { shelf, brief } = narrowed(one, width);
-          const { packs } = findPacks(prepareShelf(shelf), brief, 'best-value', 3);
-          const winner = packs.find((pack) => pack.wins.includes('best-value')) ?? null;
-          const best = cheapest({ shelf, brief });
-          if (best === null) {
-            if (packs.length > 0) met.none += 1;
-            expect(winner).toBeNull();
-            return;
-          }
-          met.found += 1;
-          expect(winner).not.toBeNull();
-          expect(winner!.yieldWithinBand).toBeGreaterThanOrEqual(0.99);
-          expect(winner!.priceMinor).toBe(best.priceMinor);
-          expect(winner!.distance).toBeCloseTo(best.distance, 11);
-          if (winner!.timing.kind === 'single' && winner!.timing.second) met.pairs += 1;
-          else met.singles += 1;
-          if (!winner!.wins.includes('closest')) met.notClosest += 1;
-          if (winner!.yieldWithinBand < 1) met.notSure += 1;
-        }),
-        { numRuns: 700, seed: 43 },
-      );
-      console.log(met);
-      expect(met.found).toBeGreaterThan(100);
-      for (const [what, count] of Object.entries(met)) expect(count, what).toBeGreaterThan(5);
-    });
+    it(
+      'finds the cheapest pack that holds the band of all that the rules allow, and the nearest of that price',
+      slow,
+      () => {
+        fc.assert(
+          fc.property(anyCase, share, (one, width) => {
+            const { shelf, brief } = narrowed(one, width);
+            const { packs } = findPacks(prepareShelf(shelf), brief, 'best-value', 3);
+            const winner = packs.find((pack) => pack.wins.includes('best-value')) ?? null;
+            const best = cheapest({ shelf, brief });
+            if (best === null) {
+              if (packs.length > 0) met.none += 1;
+              expect(winner).toBeNull();
+              return;
+            }
+            met.found += 1;
+            expect(winner).not.toBeNull();
+            expect(winner!.yieldWithinBand).toBeGreaterThanOrEqual(0.99);
+            expect(winner!.priceMinor).toBe(best.priceMinor);
+            expect(winner!.distance).toBeCloseTo(best.distance, 11);
+            if (winner!.timing.kind === 'single' && winner!.timing.second) met.pairs += 1;
+            else met.singles += 1;
+            if (!winner!.wins.includes('closest')) met.notClosest += 1;
+            if (winner!.yieldWithinBand < 1) met.notSure += 1;
+          }),
+          { numRuns: 650, seed: 43 },
+        );
+        expect(met.found + met.none).toBeGreaterThan(200);
+        for (const [what, count] of Object.entries(met)) expect(count, what).toBeGreaterThan(5);
+      },
+    );
   });
 });

@@ -70,11 +70,11 @@ const comparator = fc
   .record({ figures: comparatorFigures, bias, delay })
   .map(({ figures, bias: [typical, most], delay: [rising, falling, slowest] }) => ({
     ...figures,
-    inputBiasAmps: typical!,
-    maxInputBiasAmps: most!,
-    delayLowHighSeconds: rising!,
-    delayHighLowSeconds: falling!,
-    maxDelaySeconds: slowest!,
+    inputBiasAmps: typical,
+    maxInputBiasAmps: most,
+    delayLowHighSeconds: rising,
+    delayHighLowSeconds: falling,
+    maxDelaySeconds: slowest,
   }));
 
 const diode = fc.record({

@@ -12,7 +12,22 @@ import { anyCase } from './random-shelves.ts';
 /** With a worse end beyond this the shelf has no answer worth the name, and the nearest will do. */
 const farOff = 0.3;
 
-const met = { found: 0, none: 0, farOff: 0, steered: 0, pairs: 0, singles: 0, notClosest: 0 };
+/** Packs so near to each other as this are told apart by an estimate. */
+const estimate = 1e-4;
+
+const met = {
+  found: 0,
+  estimated: 0,
+  none: 0,
+  farOff: 0,
+  steered: 0,
+  pairs: 0,
+  singles: 0,
+  notClosest: 0,
+};
+
+/** Room for a machine that is busy with something else. */
+const slow = { timeout: 120_000 };
 
 /**
  * The least worse end of all, nearest candidates first. The nominal rate lies inside the band, so no
@@ -33,7 +48,7 @@ function leastWorseEnd(
 
 describe('findPacks', () => {
   describe('when asked for the steadiest pack on any small shelf', () => {
-    it('finds none with a lesser worse end among every kit that the rules allow', () => {
+    it('finds none with a lesser worse end among every kit that the rules allow', slow, () => {
       fc.assert(
         fc.property(anyCase, ({ shelf, brief }) => {
           const prepared = prepareShelf(shelf);
@@ -53,7 +68,8 @@ describe('findPacks', () => {
             met.farOff += 1;
             return;
           }
-          expect(end).toBeCloseTo(least, 10);
+          expect(end / least).toBeLessThan(1 + estimate);
+          if (Math.abs(end / least - 1) > 1e-9) met.estimated += 1;
           if (winner!.timing.kind === 'steered') met.steered += 1;
           else if (winner!.timing.kind === 'single' && winner!.timing.second) met.pairs += 1;
           else met.singles += 1;
@@ -62,7 +78,9 @@ describe('findPacks', () => {
         { numRuns: 700, seed: 41 },
       );
       expect(met.found).toBeGreaterThan(200);
-      for (const [what, count] of Object.entries(met)) expect(count, what).toBeGreaterThan(5);
+      const { estimated, ...others } = met;
+      expect(estimated).toBeLessThan(3);
+      for (const [what, count] of Object.entries(others)) expect(count, what).toBeGreaterThan(5);
     });
   });
 });

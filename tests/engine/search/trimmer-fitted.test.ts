@@ -27,6 +27,9 @@ function trimmedTo(kit: Kit, ohms: number): Kit {
   return { ...kit, timing: [fixed, { ...track, ohms }] };
 }
 
+/** By this much a kit's own thresholds and stray capacitance shift the trimmer's share in it. */
+const ownShare = 2e-4;
+
 describe('a trimmer', () => {
   describe.each(cases)('when fitted for $name', ({ brief, shelf }) => {
     const packs = findPacks(prepareShelf(shelf), brief, 'closest', 8).packs;
@@ -75,9 +78,6 @@ describe('a trimmer', () => {
     });
   });
 });
-
-/** By this much a kit's own thresholds and stray capacitance shift the trimmer's share in it. */
-const ownShare = 2e-4;
 
 /** Larger resistors of 1 % that would not be too much for the kit that needs the least. */
 function largerFixed(pack: RankedPack, brief: SearchBrief): StockedResistor[] {
