@@ -238,17 +238,19 @@ export function distributionWith(of: Integrals, value: number, a: number, b: num
   );
 }
 
-/** One of the integrals between grid points, and beyond the grid by its closed continuation. */
-function at(of: Integrals, table: Float64Array, value: number): number {
-  const place = (value - of.start) / of.step;
-  if (place <= 0) return 0;
+/**
+ * One of the integrals between grid points, where the density is level, so that they are polynomials,
+ * and beyond the grid by its closed continuation. Straight lines between the points would not do:
+ * `distributionWith` takes small differences of large values.
+ */
+function at({ start, step, once, twice, thrice }: Integrals, table: Float64Array, value: number) {
   const last = table.length - 1;
-  if (place >= last) {
-    const beyond = (place - last) * of.step;
-    if (table === of.once) return 1;
-    if (table === of.twice) return table[last]! + beyond;
-    return table[last]! + beyond * of.twice[last]! + beyond ** 2 / 2;
-  }
-  const whole = Math.floor(place);
-  return table[whole]! + (place - whole) * (table[whole + 1]! - table[whole]!);
+  const place = (value - start) / step;
+  if (place <= 0) return 0;
+  const whole = Math.min(last, Math.floor(place));
+  const rest = (place - whole) * step;
+  const level = whole < last ? (once[whole + 1]! - once[whole]!) / step : 0;
+  if (table === once) return once[whole]! + rest * level;
+  if (table === twice) return twice[whole]! + rest * (once[whole]! + (rest * level) / 2);
+  return thrice[whole]! + rest * (twice[whole]! + (rest / 2) * (once[whole]! + (rest * level) / 3));
 }
