@@ -14,16 +14,23 @@ import {
   type FoundPacks,
   type RankedPack,
 } from '../engine/search/find-packs.ts';
-import type { Deps } from '../ports.ts';
+import type { Deps, Signer } from '../ports.ts';
 import { assess, openPackBook, type PackBook } from './pack-book.ts';
 import { Refusal } from './refusal.ts';
 import { searchShelf, withBoards } from './search-shelf.ts';
 
 const nothing: FoundPacks = { packs: [], considered: 0 };
 
+type Answer = Omit<SolveResponse, 'elapsedMs'>;
+
+/** Answers of the latest state of the shelves, by request; a bookmarked brief is asked again and again. */
+const answers = new WeakMap<PackBook['catalogue'], Map<string, Answer>>();
+const answersKept = 256;
+
 /**
  * Finds the packs that today's unreserved stock can make for a brief, best first. A brief that no
  * physics can serve is refused; one that the shelves cannot hold gets the nearest packs and advice.
+ * The same request gets the same answer without another search as long as stock, prices and fees stand.
  */
 export async function solveBrief(
   deps: Pick<Deps, 'db' | 'stockView' | 'signer'>,
@@ -31,6 +38,20 @@ export async function solveBrief(
 ): Promise<SolveResponse> {
   const started = performance.now();
   const book = await openPackBook(deps);
+  const kept = answers.get(book.catalogue) ?? new Map<string, Answer>();
+  answers.set(book.catalogue, kept);
+  const key = JSON.stringify([request, book.rule, book.settings]);
+  let answer = kept.get(key);
+  if (!answer) {
+    answer = solve(book, deps.signer, request);
+    if (kept.size >= answersKept) kept.delete(kept.keys().next().value!);
+    kept.set(key, answer);
+  }
+  const elapsedMs = Math.round((performance.now() - started) * 100) / 100;
+  return { ...answer, elapsedMs };
+}
+
+function solve(book: PackBook, signer: Signer, request: SolveRequest): Answer {
   const inHand = resolveBrief(request, book.catalogue, book.settings);
   if (inHand.kind === 'impossible') {
     throw new Refusal('impossible-brief', inHand.errors[0]!.message, inHand.errors);
@@ -39,13 +60,12 @@ export async function solveBrief(
   const found = searchShelves(book, inHand, accessories, request);
   const offered = found.packs.filter((ranked) => isNear(ranked) && ranked.guaranteed.minHz > 0);
   const packs = offered.map((ranked) =>
-    assess(book, deps.signer, request, inHand, ranked, choiceOf(ranked, inHand, accessories)),
+    assess(book, signer, request, inHand, ranked, choiceOf(ranked, inHand, accessories)),
   );
   return {
     brief: inHand.brief,
     packs: packs.map(({ pack }) => pack).filter((pack) => pack.makeable >= request.quantity),
     considered: found.considered,
-    elapsedMs: Math.round((performance.now() - started) * 100) / 100,
     advice: advice(book, inHand, accessories, request, found),
   };
 }

@@ -4,14 +4,19 @@ import autocannon, { type Request } from 'autocannon';
 import express, { type Express } from 'express';
 import { createApp } from '../../server/http/app.ts';
 import type { Deps } from '../../server/ports.ts';
+import { printTable } from './tables.ts';
 
 const connections = 10;
 const warmSeconds = 2;
 const seconds = 8;
-const briefs = Array.from({ length: 60 }, (_, k) => ({
-  target: { value: 0.05 * 1e6 ** (k / 59), unit: 'Hz' },
-  rank: (['closest', 'best-value', 'steadiest'] as const)[k % 3],
-}));
+const briefsOf = (count: number, from: number) =>
+  Array.from({ length: count }, (_, k) => ({
+    target: { value: from * 1e6 ** (k / (count - 1)), unit: 'Hz' },
+    rank: (['closest', 'best-value', 'steadiest'] as const)[k % 3],
+  }));
+const briefs = briefsOf(60, 0.05);
+/** More than can be answered in the time, in an order that mixes slow and fast rates. */
+const freshBriefs = briefsOf(6000, 0.0501).map((_, k, all) => all[(k * 2477) % all.length]!);
 
 /**
  * Prints how many briefs a second the shop answers over ten connections, beside a bare Express route
@@ -22,15 +27,24 @@ export async function httpThroughput(deps: Deps): Promise<void> {
   const answers = new Map<number, string>();
   for (const brief of briefs) answers.set(brief.target.value, await answerTo(shop.url, brief));
   const bare = await serve(bareApp(answers));
-  const reference = await requestsPerSecond(bare.url);
-  const solved = await requestsPerSecond(shop.url);
+  const reference = await requestsPerSecond(bare.url, briefs);
+  const again = await requestsPerSecond(shop.url, briefs);
+  const fresh = await requestsPerSecond(shop.url, freshBriefs);
   await Promise.all([shop.close(), bare.close()]);
-  const row = (name: string, rate: number) =>
-    console.log(`  ${name.padEnd(32)} ${rate.toFixed(0)} requests a second`);
-  console.log(`\nPOST /api/packs/solve, ${connections} connections, all three ranks`);
-  row('bare Express, the same bytes', reference);
-  row('solve', solved);
-  console.log(`  fraction ${(solved / reference).toFixed(3)}`);
+  const row = (name: string, rate: number) => [
+    name,
+    rate.toFixed(0),
+    (rate / reference).toFixed(3),
+  ];
+  printTable(
+    `POST /api/packs/solve, ${connections} connections, all three ranks`,
+    ['', 'requests a second', 'of the bare route'],
+    [
+      row('bare Express route, the same bytes', reference),
+      row('solve, 60 briefs over and over', again),
+      row('solve, every brief for the first time', fresh),
+    ],
+  );
 }
 
 function shopApp(deps: Deps): Express {
@@ -61,12 +75,15 @@ async function answerTo(url: string, brief: object): Promise<string> {
 }
 
 function requestFor(brief: object, k: number) {
-  const headers = { 'content-type': 'application/json', 'x-forwarded-for': `10.0.0.${k + 1}` };
+  const headers = {
+    'content-type': 'application/json',
+    'x-forwarded-for': `10.0.${k >> 8}.${k & 255}`,
+  };
   return { headers, body: JSON.stringify(brief) };
 }
 
-async function requestsPerSecond(url: string): Promise<number> {
-  const requests: Request[] = briefs.map((brief, k) => ({
+async function requestsPerSecond(url: string, asked: typeof briefs): Promise<number> {
+  const requests: Request[] = asked.map((brief, k) => ({
     method: 'POST',
     path: '/api/packs/solve',
     ...requestFor(brief, k),

@@ -1,0 +1,57 @@
+import type { SolveRequestInput } from '../../server/contracts/brief.ts';
+
+/** Briefs that differ in everything a brief can say, for promises to be held to. */
+export const variedBriefs: readonly SolveRequestInput[] = [
+  { target: { value: 90, unit: 'per_minute' } },
+  {
+    target: { value: 90, unit: 'per_minute' },
+    supply: { battery: 'TW-CELL-AA-2' },
+    rank: 'closest',
+  },
+  { target: { value: 1, unit: 'Hz' }, band: 0.02, rank: 'steadiest' },
+  { target: { value: 1, unit: 'Hz' }, band: 0.02, careLevel: 'bench-tuned' },
+  { target: { value: 1, unit: 'Hz' }, band: 0.01, careLevel: 'trimmer-fitted' },
+  { target: { value: 1, unit: 'Hz' }, band: 0.03, careLevel: 'lot-checked' },
+  { target: { value: 20, unit: 's' }, band: 0.1, rank: 'closest' },
+  { target: { value: 3, unit: 's' }, load: { kind: 'led', colour: 'green', amps: 0.005 } },
+  { target: { value: 2, unit: 'Hz' }, load: { kind: 'led', colour: 'blue', amps: 0.01 } },
+  { target: { value: 2, unit: 'Hz' }, duty: 0.25, band: 0.08 },
+  { target: { value: 5, unit: 'Hz' }, duty: 0.1, band: 0.15, rank: 'steadiest' },
+  { target: { value: 5, unit: 'Hz' }, duty: 0.1, band: 0.15, rank: 'closest' },
+  { target: { value: 40, unit: 'Hz' }, duty: 0.93, band: 0.15, rank: 'steadiest' },
+  { target: { value: 440, unit: 'Hz' }, rank: 'closest' },
+  { target: { value: 440, unit: 'Hz' }, band: 0.03 },
+  { target: { value: 1, unit: 'kHz' }, supply: { volts: 12 }, band: 0.06 },
+  { target: { value: 1, unit: 'kHz' }, supply: { volts: 12 }, rank: 'steadiest' },
+  { target: { value: 1, unit: 'kHz' }, mounting: 'surface-mount', band: 0.02 },
+  { target: { value: 1, unit: 'kHz' }, mounting: 'surface-mount', rank: 'closest' },
+  { target: { value: 3, unit: 'kHz' }, duty: 0.7, band: 0.05 },
+  { target: { value: 10, unit: 'kHz' }, ambient: { minCelsius: -20, maxCelsius: 70 } },
+  {
+    target: { value: 10, unit: 'kHz' },
+    ambient: { minCelsius: -20, maxCelsius: 70 },
+    rank: 'closest',
+  },
+  { target: { value: 32.768, unit: 'kHz' }, supply: { volts: 3.3 }, band: 0.02, rank: 'steadiest' },
+  {
+    target: { value: 32, unit: 'kHz' },
+    supply: { volts: 3.3 },
+    band: 0.03,
+    careLevel: 'bench-tuned',
+  },
+  { target: { value: 60, unit: 'kHz' }, band: 0.1, rank: 'closest' },
+  { target: { value: 100, unit: 'kHz' }, mounting: 'surface-mount', band: 0.06 },
+  { target: { value: 7, unit: 'Hz' }, supply: { battery: 'TW-CELL-AAA-3' }, quantity: 25 },
+  {
+    target: { value: 250, unit: 'ms' },
+    mounting: 'surface-mount',
+    load: { kind: 'led', colour: 'red' },
+  },
+  { target: { value: 120, unit: 'Hz' }, careLevel: 'lot-checked', band: 0.02, rank: 'closest' },
+  {
+    target: { value: 2.5, unit: 'kHz' },
+    band: 0.012,
+    careLevel: 'trimmer-fitted',
+    rank: 'steadiest',
+  },
+];
