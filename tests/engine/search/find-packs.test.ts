@@ -92,10 +92,10 @@ describe('findPacks', () => {
     it('does not refuse the large one for what stray capacitance does to the small one', () => {
       const film = workshop.capacitors.find(({ tolerance }) => tolerance === 0.01)!;
       const small = { ...film, id: 1, farads: 1e-10, priceMinor: 1 };
-      const large = { ...film, id: 2, farads: 1e-7, priceMinor: 50 };
-      const hertz = 900;
+      const large = { ...film, id: 2, farads: 1e-8, priceMinor: 50 };
+      const hertz = 5e3;
       const stock = { ...workshopWith(1), capacitors: [small, large] };
-      const brief = briefAt(hertz, { band: 0.03, minCelsius: 20, maxCelsius: 30 });
+      const brief = briefAt(hertz, { band: 0.02, minCelsius: 20, maxCelsius: 30 });
       const { packs } = findPacks(prepareShelf(stock), brief, 'best-value', 4);
       expect(packs[0]!.wins).toContain('best-value');
       expect(packs[0]!.frame.capacitor.id).toBe(2);
