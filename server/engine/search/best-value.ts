@@ -17,6 +17,7 @@ import type { PreparedShelf } from './prepared-shelf.ts';
 import { firstNotBelow } from './resistor-values.ts';
 import type { SearchBrief } from './shelf.ts';
 import { chosenParts, visitChoices } from './timing-choice.ts';
+import { firstShare, leastTolerance } from './least-tolerance.ts';
 import { mixedKinds, type TimingKind } from './timing-kinds.ts';
 
 /** A pack is best value only when at least this share of kits holds the band. */
@@ -40,6 +41,7 @@ export function findBestValue(
     Number.POSITIVE_INFINITY,
   );
   const kinds = mixedKinds(aimed[0]?.stock.offers ?? []);
+  const tolerance = kinds.reduce((least, kind) => Math.min(least, kind.tolerance), 1);
   const hopeless = rememberHopeless(brief);
   const queue = inOrder(
     aimed.filter((frame) => frame.distance <= -Math.log1p(-brief.band)),
@@ -52,8 +54,11 @@ export function findBestValue(
     const effects = frameEffects(frame, frame.idealOhms, brief).map(({ effect }) => effect);
     if (isTooWide(effects, brief)) continue;
     const spread = frameSpread(frame, frame.idealOhms, brief, effects);
-    if (mostOfKinds(spread, kinds, brief) < valueYield - yieldSlack) continue;
-    best = cheapestOfFrame(frame, spread, brief, shelf, best);
+    const window = widestWindow(spread, kinds, brief);
+    const half = -spread.sensitivity * tolerance * mixing;
+    const promising = promisingOffsets(spread.of, window, half);
+    if (promising === null) continue;
+    best = cheapestOfFrame({ frame, spread, window, promising }, brief, shelf, best);
   }
   return best;
 }
@@ -103,24 +108,50 @@ function bandWidth({ band }: SearchBrief): number {
   return Math.log((1 + band) / (1 - band));
 }
 
-/** The most that a timing resistor of any kind and any value could keep in the band. */
-function mostOfKinds(
-  { of, sensitivity, shifts }: FrameSpread,
+/** Limits of ln of the rate at 25 °C and the nominal supply within which a kit holds the band. */
+interface Window {
+  lower: number;
+  upper: number;
+}
+
+/** The widest window that a timing resistor of any kind leaves; each end by the kind that suits it. */
+function widestWindow(
+  { sensitivity, shifts }: FrameSpread,
   kinds: readonly TimingKind[],
   brief: SearchBrief,
-): number {
-  let best = 0;
-  for (const { tolerance, coefficientPerKelvin } of kinds) {
+): Window {
+  const window = { lower: Number.POSITIVE_INFINITY, upper: Number.NEGATIVE_INFINITY };
+  for (const { coefficientPerKelvin } of kinds) {
     const { up, down } = shiftRange(shifts, coefficientPerKelvin, sensitivity);
-    const width = bandWidth(brief) - (up - down);
-    if (width > 0) best = Math.max(best, mostWithin(of, width, -sensitivity * tolerance * mixing));
+    window.upper = Math.max(window.upper, Math.log(1 + brief.band) - up);
+    window.lower = Math.min(window.lower, Math.log(1 - brief.band) - down);
   }
-  return best;
+  return window;
 }
 
 /** Two like resistors together spread less than one; at best as one of this share of their tolerance. */
 const mixing = 0.5;
 const windowStep = 32;
+
+/**
+ * Between which nominal rates (ln over the target) a resistor that spreads by `half` could have enough
+ * kits in a window; null where none could.
+ */
+function promisingOffsets(of: Integrals, { lower, upper }: Window, half: number): Window | null {
+  let found: Window | null = null;
+  const step = windowStep * of.step;
+  for (let offset = lower - of.step; offset <= upper + of.step; offset += step) {
+    const share =
+      distributionWith(of, upper - offset, half, 0) - distributionWith(of, lower - offset, half, 0);
+    if (share < valueYield - scanSlack) continue;
+    if (found === null) found = { lower: offset - step, upper: offset + step };
+    else found.upper = offset + step;
+  }
+  return found;
+}
+
+/** The scan's steps are so wide that the best place may hold this much more than the best step. */
+const scanSlack = 0.01;
 
 /** The most that a window of a width can hold, wherever it lies, with one more uniform cause of ±`half`. */
 function mostWithin(of: Integrals, width: number, half: number): number {
@@ -133,9 +164,16 @@ function mostWithin(of: Integrals, width: number, half: number): number {
   return best;
 }
 
+/** A frame that may hold the band, with what bounds its packs. */
+interface PromisingFrame {
+  frame: AimedFrame;
+  spread: FrameSpread;
+  window: Window;
+  promising: Window;
+}
+
 function cheapestOfFrame(
-  frame: AimedFrame,
-  spread: FrameSpread,
+  { frame, spread, window, promising }: PromisingFrame,
   brief: SearchBrief,
   shelf: PreparedShelf,
   before: Candidate | null,
@@ -144,7 +182,6 @@ function cheapestOfFrame(
   const { stock, head, idealOhms } = frame;
   const { table } = stock;
   const leastPrices = cheapestOffers(frame);
-  const farthest = -Math.log1p(-brief.band) * 1.05;
   const visit = (k: number, offset: number) => {
     const secondAt = table.second[k]!;
     const least = leastPrices[table.first[k]!]! + (secondAt < 0 ? 0 : leastPrices[secondAt]!);
@@ -154,6 +191,11 @@ function cheapestOfFrame(
       // At the best price so far only a nearer pack is of use.
       if (room < 0 || (room === 0 && Math.abs(offset) > 1.2 * best.distance + 1e-9)) return;
     }
+    const half = -spread.sensitivity * mixing * leastTolerance(frame, k, firstShare(frame, k));
+    const most =
+      distributionWith(spread.of, window.upper - offset, half, 0) -
+      distributionWith(spread.of, window.lower - offset, half, 0);
+    if (most < valueYield - yieldSlack) return;
     visitChoices(stock, k, (first, second) => {
       const price = frame.priceMinor + first.priceMinor + (second?.priceMinor ?? 0);
       if (best !== null && price > best.priceMinor) return;
@@ -176,12 +218,12 @@ function cheapestOfFrame(
   for (let [down, up] = [start - 1, start]; down >= 0 || up < table.ohms.length;) {
     if (up < table.ohms.length) {
       const offset = spread.sensitivity * Math.log(table.ohms[up]! / idealOhms);
-      if (Math.abs(offset) > farthest) up = table.ohms.length;
+      if (offset < promising.lower) up = table.ohms.length;
       else visit(up++, offset);
     }
     if (down >= 0) {
       const offset = spread.sensitivity * Math.log(table.ohms[down]! / idealOhms);
-      if (Math.abs(offset) > farthest || table.ohms[down]! < head.minTimingOhms) down = -1;
+      if (offset > promising.upper || table.ohms[down]! < head.minTimingOhms) down = -1;
       else visit(down--, offset);
     }
   }

@@ -26,7 +26,13 @@ export interface AimedFrame extends Frame {
   distance: number;
 }
 
-/** Aims every head with every capacitor; see `AimedFrame`. Capacitors alike to the circuit share one aim. */
+/** Frames further off than half as fast again, or half as slow, are no answer where others are nearer. */
+const farthest = Math.log(1.5);
+
+/**
+ * Aims every head with every capacitor; see `AimedFrame`. Capacitors alike to the circuit share one
+ * aim. Where some frame comes within half as fast again, those that do not are left out.
+ */
 export function aimFrames(
   heads: readonly Head[],
   capacitors: readonly StockedCapacitor[],
@@ -34,14 +40,23 @@ export function aimFrames(
   brief: SearchBrief,
 ): AimedFrame[] {
   const groups = groupAlike(capacitors);
-  return heads.flatMap((head) => {
+  let nearest = Number.POSITIVE_INFINITY;
+  const aims = heads.map((head) => {
     const own = { ...stock, demand: head.demand };
-    const aimed: (Aim | undefined)[] = [];
-    return capacitors.map((capacitor, k): AimedFrame => {
-      const group = groups[k]!;
-      const aim = (aimed[group] ??= aimOne({ head, capacitor }, own, brief));
-      const { idealOhms, reaches, below, above, distance } = aim;
-      return {
+    const aimed: Aim[] = [];
+    capacitors.forEach((capacitor, k) => {
+      const aim = (aimed[groups[k]!] ??= aimOne({ head, capacitor }, own, brief));
+      nearest = Math.min(nearest, aim.distance);
+    });
+    return { head, own, aimed };
+  });
+  const limit = nearest <= farthest ? farthest : Number.POSITIVE_INFINITY;
+  const frames: AimedFrame[] = [];
+  for (const { head, own, aimed } of aims) {
+    capacitors.forEach((capacitor, k) => {
+      const { idealOhms, reaches, below, above, distance } = aimed[groups[k]!]!;
+      if (distance > limit) return;
+      frames.push({
         head,
         capacitor,
         idealOhms,
@@ -51,9 +66,10 @@ export function aimFrames(
         below,
         above,
         distance,
-      };
+      });
     });
-  });
+  }
+  return frames;
 }
 
 /** A number for each capacitor, the same for those of one value and leakage. */

@@ -221,7 +221,7 @@ export function integrals({ start, step, mass }: Density): Integrals {
 
 /**
  * Distribution function at `value` of the density plus up to two more uniform causes of ±`a` and
- * ±`b` (0 or more): 20 ns, by differences of the integrals.
+ * ±`b` (0 or more), by differences of the integrals.
  */
 export function distributionWith(of: Integrals, value: number, a: number, b: number): number {
   const [wide, narrow] = a > b ? [a, b] : [b, a];

@@ -96,7 +96,10 @@ function aimShelf(shelf: PreparedShelf, brief: SearchBrief) {
     shelf.shelf.capacitors.filter((part) => capacitorSuits(part, brief)),
   );
   const stock = { table: shelf.table, offers, quantity: brief.quantity };
-  return { aimed: aimFrames(headsFor(shelf, brief), capacitors, stock, brief), capacitors, offers };
+  const heads = headsFor(shelf, brief);
+  const combinations = heads.length * capacitors.length * shelf.table.ohms.length;
+  const aimed = aimFrames(heads, capacitors, stock, brief);
+  return { aimed, capacitors, offers, combinations };
 }
 
 /** Of capacitors that differ in nothing but price and stock, the cheapest, then the lowest id. */
@@ -132,8 +135,7 @@ function fittedPacks(
 }
 
 function searchPool(shelf: PreparedShelf, brief: SearchBrief): Pool {
-  const { aimed, capacitors, offers } = aimShelf(shelf, brief);
-  const combinations = aimed.length * shelf.table.ohms.length;
+  const { aimed, capacitors, offers, combinations } = aimShelf(shelf, brief);
   const fitted = fittedPacks(aimed, brief, shelf);
   if (fitted !== null) return poolOf(fitted, null, null, combinations, brief, shelf);
   const steered = steeredPacks(shelf, capacitors, offers, brief);
@@ -207,7 +209,7 @@ function leastEnd({ frame, timing }: Candidate, brief: SearchBrief): number {
   const { capacitor } = frame;
   if (timing.kind === 'steered') {
     const least = Math.min(timing.charge.tolerance, timing.discharge.tolerance);
-    return quickBound(frame, least) + Math.tanh(0.9 * supplyReach(frame, timing, brief));
+    return joined(quickBound(frame, least), 0.9 * supplyReach(frame, timing, brief));
   }
   const plain = conditionShifts(frame, timing.ohms, brief);
   const coefficient =
@@ -215,12 +217,17 @@ function leastEnd({ frame, timing }: Candidate, brief: SearchBrief): number {
       ? timingCoefficient(timing)
       : timing.fixed.temperatureCoefficientPerKelvin;
   const { up, down } = shiftRange(plain, coefficient, -1);
-  const drift = timing.kind === 'single' ? Math.tanh((0.9 * (up - down)) / 2) : 0;
   if (timing.kind === 'trimmed') {
     return 0.85 * (capacitor.temperatureSpread + settingError(timing.ohms, timing.trimmer));
   }
   const measured = { ...frame, capacitor: { ...capacitor, tolerance: brief.meterUncertainty } };
-  return drift + quickBound(measured, Math.min(tunedClassOf(timing), timing.first.tolerance));
+  const least = Math.min(tunedClassOf(timing), timing.first.tolerance);
+  return joined(quickBound(measured, least), (0.9 * (up - down)) / 2);
+}
+
+/** The worse end of a band whose half-width in ln is that of `bound` and `half` together. */
+function joined(bound: number, half: number): number {
+  return Math.tanh(Math.atanh(Math.min(bound, 0.999)) + half);
 }
 
 /** The winner of the asked rank first, then the other winners, then varied packs by the asked rank. */

@@ -101,24 +101,24 @@ const knownFew = new WeakMap<Head, HeadCorners>();
 export function fewCorners(head: Head, brief: SearchBrief): HeadCorners {
   let few = knownFew.get(head);
   if (!few) {
+    const celsius = extremeCelsius(brief);
+    const reduce = cornerReducer(head, brief);
     const all = comparatorCorners(head, brief);
-    const { celsius, slow, fast } = headCorners(head, brief);
-    const places = (wanted: (corner: HeadCorner) => boolean) =>
-      all.flatMap((corner, k) => (wanted(corner) ? [k] : []));
-    const slowPlaces = places(
+    const slow = all.filter(
       ({ outputFactor, offsetVolts, biasAmps }) =>
         outputFactor === 2 && offsetVolts! * biasAmps! > 0,
     );
-    const fastPlaces = places(
+    const fast = all.filter(
       ({ outputFactor, offsetVolts }) => outputFactor === 0.5 && offsetVolts === 0,
     );
-    const pick = (from: readonly PreparedSingle[], which: readonly number[]) =>
-      which.length === 0 ? from : which.map((k) => from[k]!);
-    few = {
-      celsius,
-      slow: slow.map((each) => pick(each, slowPlaces)),
-      fast: fast.map((each) => pick(each, fastPlaces)),
-    };
+    const at = (corner: Corner, chosen: readonly HeadCorner[]) =>
+      celsius.map((each) => {
+        const passive = passiveCorner(head, corner, each, usualSigns);
+        return (chosen.length === 0 ? all : chosen).map((one) =>
+          reduce(Object.assign(passive, one)),
+        );
+      });
+    few = { celsius, slow: at('slow', slow), fast: at('fast', fast) };
     knownFew.set(head, few);
   }
   return few;

@@ -15,6 +15,7 @@ import { inOrder } from './in-order.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
 import { firstNotBelow } from './resistor-values.ts';
 import type { SearchBrief, StockedResistor } from './shelf.ts';
+import { firstShare, leastTolerance } from './least-tolerance.ts';
 import { mixedKinds, type TimingKind } from './timing-kinds.ts';
 import { chosenParts, visitChoices, type SingleTimingParts } from './timing-choice.ts';
 
@@ -133,15 +134,20 @@ function reachOver(frame: AimedFrame, brief: SearchBrief, corners: HeadCorners):
     celsius: corners.celsius,
     slow,
     fast,
-    slowPower: (slow[0]! - slower) / Math.log1p(powerStep),
-    fastPower: (fast[0]! - faster) / Math.log1p(-powerStep),
+    slowPower: finiteOrOne((slow[0]! - slower) / Math.log1p(powerStep)),
+    fastPower: finiteOrOne((fast[0]! - faster) / Math.log1p(-powerStep)),
   };
 }
 
+/** A corner that stands still has no power; any will do, since its end is the worst there is. */
+function finiteOrOne(power: number): number {
+  return Number.isFinite(power) ? power : 1;
+}
+
 /** Estimates are this near to the band by the full model, as a fraction of the rate. */
-const estimateSlack = 4e-5;
+const estimateSlack = 4e-6;
 /** Once an estimate of a frame was put right by the full model, the others are this near. */
-const correctedSlack = 2e-6;
+const correctedSlack = 2e-7;
 
 function steadiestOfFrame(
   frame: AimedFrame,
@@ -231,37 +237,6 @@ function windowFor(reach: Reach, kinds: readonly TimingKind[], end: number): [nu
     to = Math.max(to, most);
   }
   return [from, to];
-}
-
-const knownTolerances = new WeakMap<object, Float64Array>();
-
-/** The least tolerance among each value's offers; ∞ for none. */
-function leastTolerances({ stock: { offers } }: AimedFrame): Float64Array {
-  let tolerances = knownTolerances.get(offers);
-  if (!tolerances) {
-    tolerances = Float64Array.from(offers, (parts) =>
-      parts.reduce((least, part) => Math.min(least, part.tolerance), Number.POSITIVE_INFINITY),
-    );
-    knownTolerances.set(offers, tolerances);
-  }
-  return tolerances;
-}
-
-/** The share of the first part in the relative change of entry `k`; 1 for one alone. */
-function firstShare({ stock: { table, offers } }: AimedFrame, k: number): number {
-  if (table.second[k]! < 0) return 1;
-  const ohms = table.ohms[k]!;
-  const first = offers[table.first[k]!]![0]?.ohms ?? ohms;
-  return table.parallel[k] === 1 ? ohms / first : first / ohms;
-}
-
-/** The least tolerance that parts for entry `k` can have together; ∞ where the shelf has none. */
-function leastTolerance(frame: AimedFrame, k: number, share: number): number {
-  const { table } = frame.stock;
-  const tolerances = leastTolerances(frame);
-  const first = tolerances[table.first[k]!]!;
-  const secondAt = table.second[k]!;
-  return secondAt < 0 ? first : share * first + (1 - share) * tolerances[secondAt]!;
 }
 
 /**

@@ -72,7 +72,7 @@ export function steeredCircuit(
 
 /** Steering resistors stay between these, where diode leakage and output resistance hardly matter. */
 const steeredOhms = { least: 2e3, most: 1e6 };
-const aimSteps = 6;
+const aimSteps = 24;
 
 /**
  * The steered packs that the rules allow: equal thresholds of the SKU nearest to the ideal, one for
@@ -89,6 +89,7 @@ export function steeredPacks(
   brief: SearchBrief,
 ): Candidate<SteeredTimingParts>[] {
   if (Math.abs(brief.duty - 0.5) < limits.steeredDutyDistance) return [];
+  if (brief.duty < limits.minDuty || brief.duty > limits.maxDuty) return [];
   const diodes = shelf.shelf.diodes.filter((part) => part.available >= 2 * brief.quantity);
   if (diodes.length === 0) return [];
   return firstSets(headsFor(shelf, { ...brief, duty: 0.5 })).flatMap((head) =>
@@ -200,7 +201,7 @@ function idealOhms(
     const [up, down] = [high / cycle.highSeconds, low / cycle.lowSeconds];
     chargeOhms *= up;
     dischargeOhms *= down;
-    if (Math.abs(up - 1) + Math.abs(down - 1) < 1e-3) break;
+    if (Math.abs(up - 1) + Math.abs(down - 1) < 1e-4) break;
   }
   if (outside(chargeOhms, 1) || outside(dischargeOhms, 1)) return null;
   return { chargeOhms, dischargeOhms };

@@ -126,9 +126,27 @@ export function chosenParts(
   };
 }
 
+const knownDeep = new WeakMap<Offers, Map<number, Uint8Array>>();
+
+/** Which values the shelf holds so deep that no pack of this quantity can run short of them. */
+function deepValues(offers: Offers, quantity: number): Uint8Array {
+  const kept = knownDeep.get(offers) ?? new Map<number, Uint8Array>();
+  knownDeep.set(offers, kept);
+  let deep = kept.get(quantity);
+  if (!deep) {
+    const isDeep = (part: StockedResistor) => part.available >= mostOfOne * quantity;
+    deep = Uint8Array.from(offers, (parts) => (parts.some(isDeep) ? 1 : 0));
+    kept.set(quantity, deep);
+  }
+  return deep;
+}
+
 /** Whether the shelf holds any choice for entry `k`. Quicker than finding the cheapest. */
 export function isMakeable(stock: TimingStock, k: number): boolean {
   const { table, offers, demand, quantity } = stock;
+  const deep = deepValues(offers, quantity);
+  const second = table.second[k]!;
+  if (deep[table.first[k]!] === 1 && (second < 0 || deep[second] === 1)) return true;
   const firstOffers = offers[table.first[k]!]!;
   if (firstOffers.length === 0) return false;
   const secondAt = table.second[k]!;

@@ -10,9 +10,20 @@ const mixSteps = 4;
 
 /**
  * The kinds of timing resistance that the shelf's resistors can form, singly or mixed by twos in
- * steps of a quarter; what lies between steps hardly differs.
+ * steps of a quarter; what lies between steps hardly differs. Kept with the offers.
  */
-export function mixedKinds(offers: Offers): TimingKind[] {
+export function mixedKinds(offers: Offers): readonly TimingKind[] {
+  let mixed = known.get(offers);
+  if (!mixed) {
+    mixed = mixKinds(offers);
+    known.set(offers, mixed);
+  }
+  return mixed;
+}
+
+const known = new WeakMap<Offers, readonly TimingKind[]>();
+
+function mixKinds(offers: Offers): TimingKind[] {
   const kinds = new Map<string, TimingKind>();
   for (const part of offers.flat()) {
     const { tolerance, temperatureCoefficientPerKelvin: coefficientPerKelvin } = part;

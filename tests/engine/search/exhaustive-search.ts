@@ -257,7 +257,7 @@ function lowestTiming(shelf: Shelf, { comparator, pullUp }: FrameParts, brief: S
  * the lowest supply over the larger resistor.
  */
 function everySteered(shelf: Shelf, brief: SearchBrief): Outcome[] {
-  if (Math.abs(brief.duty - 0.5) < 0.1) return [];
+  if (Math.abs(brief.duty - 0.5) < 0.1 || brief.duty < 0.05 || brief.duty > 0.95) return [];
   const diodes = shelf.diodes.filter((part) => part.available >= 2 * brief.quantity);
   const even = { ...brief, duty: 0.5 };
   const frames = everyFrame(shelf, even).filter((frame) => fixedOnTheShelf(frame, brief.quantity));
