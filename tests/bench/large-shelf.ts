@@ -127,13 +127,13 @@ function take<Item>(lines: Generator<Item>, count: number): Item[] {
 
 /**
  * An invented stock of `lines` lines for one mounting, the same every time: 88 of 100 lines are
- * resistors, the rest capacitors, with as many comparators as a shop of that size might keep (a few
- * dozen at most). Beyond some thousands, further lines repeat values at other prices and quantities,
+ * resistors, the rest capacitors, with as many comparators as a shop of that size might keep (eleven
+ * to nineteen). Beyond some thousands, further lines repeat values at other prices and quantities,
  * as bigger shops' lines do. A third of the lines is nearly sold out.
  */
 export function largeShelf(lines: number): Shelf {
   const random = createRandom(lines);
-  const comparators = Math.min(30, Math.round(Math.sqrt(lines) / 3));
+  const comparators = Math.round(4 * Math.log10(lines));
   const capacitors = Math.round(0.12 * lines);
   const numbered = <Part>(parts: Part[]) => parts.map((part, k) => ({ ...part, id: k + 1 }));
   return {

@@ -10,15 +10,21 @@ import {
   type Effect,
   type Integrals,
 } from './density.ts';
-import { guaranteedBand, isWithin } from './guaranteed-band.ts';
-import { frameEffects, shiftRange } from './kit-effects.ts';
+import { guaranteedBand } from './guaranteed-band.ts';
+import {
+  conditionShifts,
+  frameEffects,
+  shiftRange,
+  timingSensitivity,
+  type ConditionShift,
+} from './kit-effects.ts';
 import { frameSpread, kitYield, shareWithin, timingSpread, type FrameSpread } from './kit-yield.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
 import { firstNotBelow } from './resistor-values.ts';
 import type { SearchBrief } from './shelf.ts';
 import { chosenParts, visitChoices } from './timing-choice.ts';
 import { firstShare, leastTolerance } from './least-tolerance.ts';
-import { mixedKinds, type TimingKind } from './timing-kinds.ts';
+import { kindsNear, type TimingKind } from './timing-kinds.ts';
 
 /** A pack is best value only when at least this share of kits holds the band. */
 export const valueYield = 0.99;
@@ -40,8 +46,6 @@ export function findBestValue(
     (least, part) => Math.min(least, part.priceMinor),
     Number.POSITIVE_INFINITY,
   );
-  const kinds = mixedKinds(aimed[0]?.stock.offers ?? []);
-  const tolerance = kinds.reduce((least, kind) => Math.min(least, kind.tolerance), 1);
   const hopeless = rememberHopeless(brief);
   const queue = inOrder(
     aimed.filter((frame) => frame.distance <= -Math.log1p(-brief.band)),
@@ -52,24 +56,39 @@ export function findBestValue(
     if (best !== null && frame.priceMinor + cheapest > best.priceMinor) break;
     if (hopeless(frame)) continue;
     const effects = frameEffects(frame, frame.idealOhms, brief).map(({ effect }) => effect);
-    if (isTooWide(effects, brief)) continue;
+    const kinds = kindsNear(shelf.values, frame.stock.offers, frame.idealOhms);
+    const shifts = conditionShifts(frame, frame.idealOhms, brief);
+    const window = widestWindow(shifts, timingSensitivity(frame, frame.idealOhms), kinds, brief);
+    if (isTooWide(effects, window.upper - window.lower)) continue;
     const spread = frameSpread(frame, frame.idealOhms, brief, effects);
-    const window = widestWindow(spread, kinds, brief);
-    const half = -spread.sensitivity * tolerance * mixing;
+    const tightest = kinds.reduce((least, kind) => Math.min(least, kind.tolerance), 1);
+    const half = -spread.sensitivity * tightest * mixing;
     const promising = promisingOffsets(spread.of, window, half);
     if (promising === null) continue;
-    best = cheapestOfFrame({ frame, spread, window, promising }, brief, shelf, best);
+    best = cheapestOfFrame({ frame, spread, window, promising }, brief, best);
   }
   return best;
 }
 
-/** 99 % of a sum of uniform causes take at least this many standard deviations to either side. */
-const leastDeviations = 0.99 * Math.sqrt(3) * 0.95;
+/** Standard deviations to either side that 99 % of a single uniform cause take, and of a normal one. */
+const uniformDeviations = 0.99 * Math.sqrt(3);
+const normalDeviations = 2.576;
 
-/** True when the causes' standard deviation alone leaves too few kits in the band. */
-function isTooWide(effects: readonly Effect[], brief: SearchBrief): boolean {
-  const variance = effects.reduce((sum, effect) => sum + momentsOf(effect).variance, 0);
-  return leastDeviations * Math.sqrt(variance) > bandWidth(brief) / 2;
+/**
+ * True when the causes leave too few kits in the band, told from their moments alone: 99 % of a sum
+ * take the more standard deviations the nearer its kurtosis is to the normal's. Less than the truth
+ * for sums of two and more uniform causes, with 3 % to spare.
+ */
+function isTooWide(effects: readonly Effect[], room: number): boolean {
+  let [variance, squares] = [0, 0];
+  for (const effect of effects) {
+    const own = momentsOf(effect).variance;
+    variance += own;
+    squares += own * own;
+  }
+  const likeUniform = Math.min(1, squares / (variance * variance));
+  const deviations = normalDeviations + (uniformDeviations - normalDeviations) * likeUniform ** 0.7;
+  return 0.97 * deviations * Math.sqrt(variance) > room / 2;
 }
 
 /**
@@ -116,7 +135,8 @@ interface Window {
 
 /** The widest window that a timing resistor of any kind leaves; each end by the kind that suits it. */
 function widestWindow(
-  { sensitivity, shifts }: FrameSpread,
+  shifts: readonly ConditionShift[],
+  sensitivity: number,
   kinds: readonly TimingKind[],
   brief: SearchBrief,
 ): Window {
@@ -175,7 +195,6 @@ interface PromisingFrame {
 function cheapestOfFrame(
   { frame, spread, window, promising }: PromisingFrame,
   brief: SearchBrief,
-  shelf: PreparedShelf,
   before: Candidate | null,
 ): Candidate | null {
   let best = before;
@@ -205,10 +224,7 @@ function cheapestOfFrame(
       const candidate = formCandidate(frame, timing, brief);
       if (candidate === null || (best !== null && byValue(candidate, best) >= 0)) return;
       const actual = Math.log(candidate.frequencyHz / brief.targetHz);
-      if (
-        shareWithin(spread, timingSpread(timing, actual), brief) >= valueYield ||
-        (estimate < valueYield && isWithin(guaranteedBand(candidate, brief, shelf), brief))
-      ) {
+      if (shareWithin(spread, timingSpread(timing, actual), brief) >= valueYield) {
         best = candidate;
       }
     });

@@ -25,7 +25,7 @@ export interface PointEffect {
   weights: readonly number[];
 }
 
-const bins = 2048;
+const bins = 1024;
 /** Parabolas that turn inside −1…1 are cut into this many pieces of equal probability. */
 const pieces = 24;
 
@@ -141,28 +141,31 @@ export function addEffect(density: Density, effect: Effect): Density {
 function addBox(density: Density, from: number, to: number, tilt: number): Density {
   const { step, mass } = density;
   const n = mass.length;
-  const flat = Math.abs(tilt * (to - from)) < 1e-3;
-  const rate = flat ? 0 : tilt;
+  const rate = Math.abs(tilt * (to - from)) < 1e-3 ? 0 : tilt;
   const growth = Math.exp(-rate * step);
-  const sums = new Float64Array(n + 1);
+  // Bin k takes what lies between k + first and k + last of the old grid; beyond it the sums are flat.
+  const middle = Math.round((from + to) / 2 / step);
+  const first = middle - to / step + 0.5;
+  const last = middle - from / step + 0.5;
+  const pad = Math.ceil(Math.max(0, -first, last)) + 2;
+  const sums = new Float64Array(n + 2 * pad + 1);
   let weight = 1;
   for (let k = 0; k < n; k += 1) {
-    sums[k + 1] = sums[k]! + mass[k]! * weight;
+    sums[pad + k + 1] = sums[pad + k]! + mass[k]! * weight;
     weight *= growth;
   }
-  const sumBefore = (place: number) => {
-    if (place <= 0) return 0;
-    if (place >= n) return sums[n]!;
-    const whole = Math.floor(place);
-    return sums[whole]! + (place - whole) * (sums[whole + 1]! - sums[whole]!);
-  };
-  const middle = Math.round((from + to) / 2 / step);
-  const reach = [(middle * step - to) / step, (middle * step - from) / step] as const;
+  sums.fill(sums[pad + n]!, pad + n + 1);
+  const [firstWhole, lastWhole] = [Math.floor(first), Math.floor(last)];
+  const [firstPart, lastPart] = [first - firstWhole, last - lastWhole];
   const next = new Float64Array(n);
-  weight = 1;
   let total = 0;
+  weight = 1;
   for (let k = 0; k < n; k += 1) {
-    const value = (sumBefore(k + 0.5 + reach[1]) - sumBefore(k + 0.5 + reach[0])) / weight;
+    const i = pad + k + firstWhole;
+    const j = pad + k + lastWhole;
+    const low = sums[i]! + firstPart * (sums[i + 1]! - sums[i]!);
+    const high = sums[j]! + lastPart * (sums[j + 1]! - sums[j]!);
+    const value = (high - low) / weight;
     next[k] = value;
     total += value;
     weight *= growth;

@@ -261,7 +261,7 @@ function arrange(
 }
 
 /** How many packs beside the winners are looked at before the asked rank picks among them. */
-const variedLooked = 16;
+const variedLooked = 10;
 
 function orderFor(rank: Rank, brief: SearchBrief): (a: RankedPack, b: RankedPack) => number {
   if (rank === 'closest') return byCloseness;

@@ -16,7 +16,7 @@ import type { PreparedShelf } from './prepared-shelf.ts';
 import { firstNotBelow } from './resistor-values.ts';
 import type { SearchBrief, StockedResistor } from './shelf.ts';
 import { firstShare, leastTolerance } from './least-tolerance.ts';
-import { mixedKinds, type TimingKind } from './timing-kinds.ts';
+import { kindsNear, mixedKinds, type TimingKind } from './timing-kinds.ts';
 import { chosenParts, visitChoices, type SingleTimingParts } from './timing-choice.ts';
 
 /** A candidate with the worse end of its guaranteed band, as a fraction of the target. */
@@ -47,6 +47,8 @@ export function findSteadiest(
 ): Steady | null {
   const kinds = mixedKinds(aimed[0]?.stock.offers ?? []);
   const tolerance = kinds.reduce((least, kind) => Math.min(least, kind.tolerance), 1);
+  const kindsAt = ({ stock, idealOhms }: AimedFrame) =>
+    kindsNear(shelf.values, stock.offers, idealOhms);
   const queue = inOrder(
     aimed
       .filter((frame) => frame.distance < Number.POSITIVE_INFINITY)
@@ -63,11 +65,11 @@ export function findSteadiest(
     if (best !== null && batch[0]!.bound > best.end) break;
     const closer = batch
       .filter(({ bound }) => best === null || bound <= best.end)
-      .map(({ frame }) => ({ frame, bound: leastEnd(partialReach(frame, brief), kinds) }))
+      .map(({ frame }) => ({ frame, bound: leastEnd(partialReach(frame, brief), kindsAt(frame)) }))
       .sort((a, b) => a.bound - b.bound);
     for (const { frame, bound } of closer) {
       if (best !== null && bound - estimateSlack > best.end) break;
-      best = steadiestOfFrame(frame, brief, shelf, kinds, best);
+      best = steadiestOfFrame(frame, brief, shelf, kindsAt(frame), best);
     }
   }
   return best;
@@ -160,7 +162,7 @@ function steadiestOfFrame(
   const reach = reachOf(frame, brief);
   if (best !== null && leastEnd(reach, kinds) - estimateSlack > best.end) return best;
   const { table } = frame.stock;
-  const middle = frame.idealOhms * Math.exp(middleOf(reach));
+  const middle = frame.idealOhms * Math.exp(middleOf(reach, kinds));
   const start = firstNotBelow(table.ohms, Math.max(middle, frame.head.minTimingOhms));
   let [correction, slack] = [0, estimateSlack];
   const windowNow = () =>
@@ -192,9 +194,19 @@ function steadiestOfFrame(
   return best;
 }
 
-/** Where the resistance should lie, in ln from the ideal one, for both ends to be equally far. */
-function middleOf({ slow, fast }: Reach): number {
-  return (Math.max(...fast) + Math.min(...slow)) / 2;
+/** Where a resistor of the best kind should lie, in ln from the ideal value, for both ends to be equally far. */
+function middleOf(reach: Reach, kinds: readonly TimingKind[]): number {
+  let [least, middle] = [Number.POSITIVE_INFINITY, 0];
+  for (const kind of kinds) {
+    const [low, high] = endsOf(reach, kind);
+    if (high - low >= least) continue;
+    least = high - low;
+    const end = Math.tanh(least / 2);
+    middle =
+      (high - Math.log1p(end)) / reach.fastPower / 2 +
+      (low - Math.log1p(-end)) / reach.slowPower / 2;
+  }
+  return Number.isFinite(middle) ? middle : 0;
 }
 
 /** ln of the extreme rates with a resistor of a kind at the ideal value. */

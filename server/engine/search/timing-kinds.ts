@@ -1,3 +1,4 @@
+import type { ResistorValues } from './resistor-values.ts';
 import type { Offers } from './timing-choice.ts';
 
 /** A way a timing resistance can spread and drift. */
@@ -6,41 +7,85 @@ export interface TimingKind {
   coefficientPerKelvin: number;
 }
 
-const mixSteps = 4;
+/** Shares of the other part in a mixture of two kinds that are looked at. */
+const shares = [0.25, 0.5, 0.75] as const;
+const smallShares = [0.125, 0.25] as const;
+/** A part outside this factor of the whole resistance makes less than a quarter of it. */
+const nearFactor = 4;
 
-/**
- * The kinds of timing resistance that the shelf's resistors can form, singly or mixed by twos in
- * steps of a quarter; what lies between steps hardly differs. Kept with the offers.
- */
+/** The different kinds among some offers. */
+function kindsOf(offers: Offers): TimingKind[] {
+  const kinds = new Map<string, TimingKind>();
+  for (const parts of offers) {
+    for (const { tolerance, temperatureCoefficientPerKelvin: coefficientPerKelvin } of parts) {
+      kinds.set(`${tolerance} ${coefficientPerKelvin}`, { tolerance, coefficientPerKelvin });
+    }
+  }
+  return [...kinds.values()];
+}
+
+function mix(one: TimingKind, other: TimingKind, share: number): TimingKind {
+  const between = (a: number, b: number) => (1 - share) * a + share * b;
+  return {
+    tolerance: between(one.tolerance, other.tolerance),
+    coefficientPerKelvin: between(one.coefficientPerKelvin, other.coefficientPerKelvin),
+  };
+}
+
+/** All kinds singly, and every two mixed in quarters; what lies between hardly differs. */
+function mixAll(kinds: readonly TimingKind[]): TimingKind[] {
+  return kinds.flatMap((one, k) => [
+    one,
+    ...kinds.slice(k + 1).flatMap((other) => shares.map((share) => mix(one, other, share))),
+  ]);
+}
+
+const knownAll = new WeakMap<Offers, readonly TimingKind[]>();
+
+/** The kinds of timing resistance that all offers can form, singly or two mixed. Kept with the offers. */
 export function mixedKinds(offers: Offers): readonly TimingKind[] {
-  let mixed = known.get(offers);
+  let mixed = knownAll.get(offers);
   if (!mixed) {
-    mixed = mixKinds(offers);
-    known.set(offers, mixed);
+    mixed = mixAll(kindsOf(offers));
+    knownAll.set(offers, mixed);
   }
   return mixed;
 }
 
-const known = new WeakMap<Offers, readonly TimingKind[]>();
+const knownNear = new WeakMap<Offers, Map<number, readonly TimingKind[]>>();
 
-function mixKinds(offers: Offers): TimingKind[] {
-  const kinds = new Map<string, TimingKind>();
-  for (const part of offers.flat()) {
-    const { tolerance, temperatureCoefficientPerKelvin: coefficientPerKelvin } = part;
-    kinds.set(`${tolerance} ${coefficientPerKelvin}`, { tolerance, coefficientPerKelvin });
+/**
+ * The kinds that a timing resistance of about `ohms` can be of: singly or mixed by parts within a
+ * factor of four, which make a quarter of it or more, with a little of any other. Kept with the offers.
+ */
+export function kindsNear(
+  { ohms: values }: ResistorValues,
+  offers: Offers,
+  ohms: number,
+): readonly TimingKind[] {
+  const known = knownNear.get(offers) ?? new Map<number, readonly TimingKind[]>();
+  knownNear.set(offers, known);
+  const octave = Math.floor(Math.log2(ohms));
+  let kinds = known.get(octave);
+  if (!kinds) {
+    // The rate may be off by half as much again, and so the resistance.
+    const [from, to] = [2 ** octave / nearFactor / 1.6, 2 ** (octave + 1) * nearFactor * 1.6];
+    const near = kindsOf(offers.filter((_, k) => values[k]! >= from && values[k]! <= to));
+    const far = kindsOf(offers).filter(
+      (kind) =>
+        !near.some(
+          (one) =>
+            one.tolerance === kind.tolerance &&
+            one.coefficientPerKelvin === kind.coefficientPerKelvin,
+        ),
+    );
+    kinds = [
+      ...mixAll(near),
+      ...near.flatMap((one) =>
+        far.flatMap((other) => smallShares.map((share) => mix(one, other, share))),
+      ),
+    ];
+    known.set(octave, kinds);
   }
-  const all = [...kinds.values()];
-  return all.flatMap((one, k) => [
-    one,
-    ...all.slice(k + 1).flatMap((other) =>
-      Array.from({ length: mixSteps - 1 }, (_, step): TimingKind => {
-        const share = (step + 1) / mixSteps;
-        const mix = (a: number, b: number) => share * a + (1 - share) * b;
-        return {
-          tolerance: mix(one.tolerance, other.tolerance),
-          coefficientPerKelvin: mix(one.coefficientPerKelvin, other.coefficientPerKelvin),
-        };
-      }),
-    ),
-  ]);
+  return kinds;
 }
