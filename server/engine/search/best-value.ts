@@ -15,6 +15,7 @@ import {
   conditionShifts,
   frameEffects,
   shiftRange,
+  timingCoefficient,
   timingSensitivity,
   type ConditionShift,
 } from './kit-effects.ts';
@@ -22,7 +23,7 @@ import { frameSpread, kitYield, shareWithin, timingSpread, type FrameSpread } fr
 import type { PreparedShelf } from './prepared-shelf.ts';
 import { firstNotBelow } from './resistor-values.ts';
 import type { SearchBrief } from './shelf.ts';
-import { chosenParts, visitChoices } from './timing-choice.ts';
+import { chosenParts, visitChoices, type SingleTimingParts } from './timing-choice.ts';
 import { firstShare, leastTolerance } from './least-tolerance.ts';
 import { kindsNear, type TimingKind } from './timing-kinds.ts';
 
@@ -120,6 +121,21 @@ export function rememberHopeless(
     }
     return answer;
   };
+}
+
+/**
+ * False when a pack's causes, told from their moments alone, leave too few kits in the band beside
+ * what supply and temperature take of it.
+ */
+export function mayHold(
+  { frame, timing }: Candidate<SingleTimingParts>,
+  brief: SearchBrief,
+): boolean {
+  const effects = frameEffects(frame, timing.ohms, brief).map(({ effect }) => effect);
+  const shifts = conditionShifts(frame, timing.ohms, brief);
+  const kind = { tolerance: 0, coefficientPerKelvin: timingCoefficient(timing) };
+  const window = widestWindow(shifts, timingSensitivity(frame, timing.ohms), [kind], brief);
+  return window.upper > window.lower && !isTooWide(effects, window.upper - window.lower);
 }
 
 /** Width of the asked band in ln of the rate. */

@@ -1,7 +1,7 @@
 import type { Circuit } from '../circuit.ts';
 import { byCloseness, byValue, isSamePack, type Candidate } from './candidate.ts';
 import { aimFrames, closestByCapacitor, type AimedFrame } from './closest.ts';
-import { findBestValue, holdsBand, rememberHopeless, valueYield } from './best-value.ts';
+import { findBestValue, holdsBand, mayHold, rememberHopeless, valueYield } from './best-value.ts';
 import { guaranteedBand, worseEnd, type GuaranteedBand } from './guaranteed-band.ts';
 import { headCircuit, headsFor } from './heads.ts';
 import { insulationSiemens } from './aim.ts';
@@ -181,7 +181,10 @@ function cheapestThatHolds(
     if (before !== null && byValue(candidate, before) >= 0) return before;
     if (candidate.distance > -Math.log1p(-brief.band)) continue;
     const { frame, timing } = candidate;
-    if (timing.kind === 'single' && hopeless({ ...frame, idealOhms: timing.ohms })) continue;
+    if (timing.kind === 'single') {
+      if (hopeless({ ...frame, idealOhms: timing.ohms })) continue;
+      if (!mayHold({ ...candidate, timing }, brief)) continue;
+    }
     if (holdsBand(candidate, brief, shelf)) return candidate;
   }
   return before;

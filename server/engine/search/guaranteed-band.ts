@@ -1,4 +1,4 @@
-import { aimFrame, type Frame } from './aim.ts';
+import type { Frame } from './aim.ts';
 import type { Candidate } from './candidate.ts';
 import { atCorner, capacitanceAt, extremeRate, headCorners, type Corner } from './head-corners.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
@@ -53,19 +53,23 @@ function singleBand(frame: Frame, timing: SingleTimingParts, brief: SearchBrief)
 
 /**
  * With the very capacitor measured, its tolerance gives way to the meter's uncertainty, and the
- * resistor comes from the grid: any of its parts, half the widest gap off at most.
+ * resistor comes from the grid: any of its parts, half the widest gap off at most. Bias and leakage
+ * weigh more beside the large resistance of a small capacitor, output resistance and strays beside
+ * the small one of a large, so the band holds both ends of what the capacitor may read.
  */
 function tunedBand(frame: Frame, grid: TunedGrid, brief: SearchBrief): GuaranteedBand {
-  const measured = { ...frame.capacitor, tolerance: brief.meterUncertainty };
-  const { ohms } = aimFrame(frame, brief);
-  const band = bandOver({ ...frame, capacitor: measured }, brief, (sign, celsius) =>
-    grid.coefficientsPerKelvin.map((temperatureCoefficientPerKelvin) =>
-      atCorner(ohms, { tolerance: grid.tolerance, temperatureCoefficientPerKelvin }, sign, celsius),
-    ),
-  );
+  const { tolerance } = grid;
+  const bands = grid.readings.map(({ farads, ohms }) => {
+    const capacitor = { ...frame.capacitor, farads, tolerance: brief.meterUncertainty };
+    return bandOver({ ...frame, capacitor }, brief, (sign, celsius) =>
+      grid.coefficientsPerKelvin.map((temperatureCoefficientPerKelvin) =>
+        atCorner(ohms, { tolerance, temperatureCoefficientPerKelvin }, sign, celsius),
+      ),
+    );
+  });
   return {
-    minHz: band.minHz * Math.exp(-grid.halfGap),
-    maxHz: band.maxHz * Math.exp(grid.halfGap),
+    minHz: Math.min(...bands.map((band) => band.minHz)) * Math.exp(-grid.halfGap),
+    maxHz: Math.max(...bands.map((band) => band.maxHz)) * Math.exp(grid.halfGap),
   };
 }
 

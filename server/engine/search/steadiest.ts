@@ -1,6 +1,6 @@
 import type { Frame } from './aim.ts';
 import { byPriceThenIds, type Candidate } from './candidate.ts';
-import { formCandidate, type AimedFrame } from './closest.ts';
+import { closestOfFrame, formCandidate, type AimedFrame } from './closest.ts';
 import { guaranteedBand, worseEnd } from './guaranteed-band.ts';
 import {
   atCorner,
@@ -38,7 +38,8 @@ export function steadier(a: Steady | null, b: Steady | null): Steady | null {
  * The candidate whose guaranteed band has the least worse end, over every frame and every timing
  * resistance that the shelf holds; null when it holds none. Frames go by a lower bound of what they
  * can reach, and within a frame the walk outwards from the middle ends where even a
- * perfect resistor would be too far off, so nothing that could win is left out.
+ * perfect resistor would be too far off, so nothing that could win is left out. Only where a frame's
+ * kits stray by more than 30 % whatever the resistor, its nearest pack stands for all.
  */
 export function findSteadiest(
   aimed: readonly AimedFrame[],
@@ -47,8 +48,8 @@ export function findSteadiest(
 ): Steady | null {
   const kinds = mixedKinds(aimed[0]?.stock.offers ?? []);
   const tolerance = kinds.reduce((least, kind) => Math.min(least, kind.tolerance), 1);
-  const kindsAt = ({ stock, idealOhms }: AimedFrame) =>
-    kindsNear(shelf.values, stock.offers, idealOhms);
+  const kindsAt = ({ stock, idealOhms, reaches }: AimedFrame) =>
+    reaches ? kindsNear(shelf.values, stock.offers, idealOhms) : kinds;
   const queue = inOrder(
     aimed
       .filter((frame) => frame.distance < Number.POSITIVE_INFINITY)
@@ -151,6 +152,18 @@ const estimateSlack = 4e-6;
 /** Once an estimate of a frame was put right by the full model, the others are this near. */
 const correctedSlack = 2e-7;
 
+/** No pack that strays further is steady; of a frame that can do no better only the nearest is looked at. */
+const steadyEnd = 0.3;
+
+function nearestOfFrame(
+  frame: AimedFrame,
+  brief: SearchBrief,
+  shelf: PreparedShelf,
+): Steady | null {
+  const nearest = closestOfFrame(frame, brief);
+  return nearest && steadyOf(nearest, brief, shelf);
+}
+
 function steadiestOfFrame(
   frame: AimedFrame,
   brief: SearchBrief,
@@ -160,7 +173,9 @@ function steadiestOfFrame(
 ): Steady | null {
   let best = before;
   const reach = reachOf(frame, brief);
-  if (best !== null && leastEnd(reach, kinds) - estimateSlack > best.end) return best;
+  const least = leastEnd(reach, kinds);
+  if (best !== null && least - estimateSlack > best.end) return best;
+  if (!(least <= steadyEnd)) return steadier(best, nearestOfFrame(frame, brief, shelf));
   const { table } = frame.stock;
   const middle = frame.idealOhms * Math.exp(middleOf(reach, kinds));
   const start = firstNotBelow(table.ohms, Math.max(middle, frame.head.minTimingOhms));

@@ -79,12 +79,15 @@ export function kindsNear(
             one.coefficientPerKelvin === kind.coefficientPerKelvin,
         ),
     );
-    kinds = [
-      ...mixAll(near),
-      ...near.flatMap((one) =>
-        far.flatMap((other) => smallShares.map((share) => mix(one, other, share))),
-      ),
-    ];
+    kinds =
+      near.length === 0
+        ? mixedKinds(offers)
+        : [
+            ...mixAll(near),
+            ...near.flatMap((one) =>
+              far.flatMap((other) => smallShares.map((share) => mix(one, other, share))),
+            ),
+          ];
     known.set(octave, kinds);
   }
   return kinds;

@@ -17,6 +17,8 @@ export interface TunedGrid {
   halfGap: number;
   /** Root mean square of the distance to the nearest of the grid, in ln R. */
   rmsGap: number;
+  /** What the largest, the middle and the smallest capacitor read, in farads, and the ohms each asks for. */
+  readings: readonly { farads: number; ohms: number }[];
 }
 
 /** The tolerance classes that a tuned kit's resistors come from: 0.1 %, 1 %, and all there are. */
@@ -146,11 +148,10 @@ export function tunedGrid(
 ): TunedGrid | null {
   const { capacitor, head } = frame;
   const wide = (1 + capacitor.tolerance) * (1 + brief.meterUncertainty) - 1;
-  const needed = (share: number) =>
-    aimFrame(
-      { ...frame, capacitor: { ...capacitor, farads: capacitor.farads * (1 + share) } },
-      brief,
-    );
+  const needed = (share: number) => {
+    const farads = capacitor.farads * (1 + share);
+    return { farads, ...aimFrame({ ...frame, capacitor: { ...capacitor, farads } }, brief) };
+  };
   const [least, most] = [needed(wide), needed(-wide)];
   if (!least.reaches || !most.reaches) return null;
   const grid = classGrid(shelf, limit, head, brief.quantity);
@@ -165,6 +166,7 @@ export function tunedGrid(
     halfGap: widestGap(grid, from, to) / 2,
     // A point anywhere in a gap g is off its nearer end by g/√12 in the root mean square.
     rmsGap: span > 0 ? Math.sqrt((cubesBefore[to]! - cubesBefore[from]!) / span / 12) : 0,
+    readings: [least, needed(0), most],
   };
 }
 
