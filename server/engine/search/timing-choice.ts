@@ -161,3 +161,23 @@ export function isMakeable(stock: TimingStock, k: number): boolean {
   visitChoices(stock, k, () => (found = true));
   return found;
 }
+
+/** Places of all entries of the table that the shelf holds some choice for, ascending. */
+export function makeableEntries({ table, offers, demand, quantity }: TimingStock): number[] {
+  const once = Uint8Array.from(offers, (parts) =>
+    parts.some((part) => holdsMore(part, 1, demand, quantity)) ? 1 : 0,
+  );
+  const twice = Uint8Array.from(offers, (parts) => {
+    const single = parts.filter((part) => holdsMore(part, 1, demand, quantity));
+    return single.length > 1 || single.some((part) => holdsMore(part, 2, demand, quantity)) ? 1 : 0;
+  });
+  const found: number[] = [];
+  for (let k = 0; k < table.ohms.length; k += 1) {
+    const first = table.first[k]!;
+    const second = table.second[k]!;
+    if (second < 0 ? once[first] : second === first ? twice[first] : once[first]! & once[second]!) {
+      found.push(k);
+    }
+  }
+  return found;
+}

@@ -5,7 +5,12 @@ import type { PreparedShelf } from './prepared-shelf.ts';
 import { firstNotBelow, type ResistorValues } from './resistor-values.ts';
 import { limits } from './rules.ts';
 import type { SearchBrief, StockedResistor } from './shelf.ts';
-import { isMakeable, listOffers, type Offers, type SingleTimingParts } from './timing-choice.ts';
+import {
+  makeableEntries,
+  listOffers,
+  type Offers,
+  type SingleTimingParts,
+} from './timing-choice.ts';
 
 /** The stocked resistances that a tuned kit may take R4 from, once its capacitor is measured. */
 export interface TunedGrid {
@@ -92,9 +97,7 @@ function formGrid(
   demand: ResistorDemand,
   quantity: number,
 ): ClassGrid {
-  const stock = { table, offers, demand, quantity };
-  const makeable: number[] = [];
-  for (let k = 0; k < table.ohms.length; k += 1) if (isMakeable(stock, k)) makeable.push(k);
+  const makeable = makeableEntries({ table, offers, demand, quantity });
   const places = Int32Array.from(makeable);
   const ohms = Float64Array.from(makeable, (k) => table.ohms[k]!);
   const cubesBefore = new Float64Array(ohms.length + 1);
