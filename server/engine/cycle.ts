@@ -26,8 +26,8 @@ export interface Cycle {
   tauHighSeconds: number | null;
   tauLowSeconds: number | null;
   /**
-   * Least voltage left across a steering branch at a trip, in units of n·V_t; null when not
-   * steered. Under 5 the result is more than about 1e-5 off, and very sensitive to the diode.
+   * Least voltage left across a steering branch at a trip, less what the reversed diode's current
+   * drops across its own resistor, in units of n·V_t; null when not steered. Under 5 the result is more than about 1e-5 off, and very sensitive to the diode.
    */
   steeringHeadroom: number | null;
 }

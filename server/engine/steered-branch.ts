@@ -74,12 +74,21 @@ export function steeredBranch(
     settlingVolts: NaN,
     reachesTrip: tripAmps > 0 && netAmps(warm, path, tripAmps) > 0,
     tauSeconds: null,
-    headroom: tripAmps > 0 ? (sign * (openVolts - tripVolts)) / diode.emissionVolts : 0,
+    headroom: tripAmps > 0 ? headroomAt(sign * (openVolts - tripVolts), warm, diode, sign) : 0,
     ...steeredRun(warm, path),
     timingAmpsAt: (volts) => sign * (ampsAt(path, volts) + diode.saturationAmps),
     outputVoltsAt,
     referenceVoltsAt: (volts) => feedback * outputVoltsAt(volts) + biasVolts,
   };
+}
+
+/**
+ * Voltage left at the trip across the conducting branch, less what the reversed diode's current drops
+ * across its own resistor, over n·V_t: only with some of it left is that diode reversed at all.
+ */
+function headroomAt(volts: number, warm: WarmCircuit, diode: WarmDiode, sign: 1 | -1): number {
+  const otherOhms = sign > 0 ? warm.dischargeOhms : warm.chargeOhms;
+  return Math.max(0, volts - diode.saturationAmps * otherOhms) / diode.emissionVolts;
 }
 
 function voltsAt(path: Path, amps: number): number {
