@@ -2,14 +2,7 @@ import type { Frame } from './aim.ts';
 import { inOrder } from './in-order.ts';
 import { byValue, type Candidate } from './candidate.ts';
 import { formCandidate, type AimedFrame } from './closest.ts';
-import {
-  densityOfSum,
-  distributionWith,
-  integrals,
-  momentsOf,
-  type Effect,
-  type Integrals,
-} from './density.ts';
+import { densityOfSum, distributionWith, integrals, momentsOf, type Integrals } from './density.ts';
 import { guaranteedBand } from './guaranteed-band.ts';
 import {
   conditionShifts,
@@ -18,8 +11,16 @@ import {
   timingCoefficient,
   timingSensitivity,
   type ConditionShift,
+  type KitEffect,
 } from './kit-effects.ts';
-import { frameSpread, kitYield, shareWithin, timingSpread, type FrameSpread } from './kit-yield.ts';
+import {
+  frameSpread,
+  kitYield,
+  shareBetween,
+  shareWithin,
+  timingSpread,
+  type FrameSpread,
+} from './kit-yield.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
 import { firstNotBelow } from './resistor-values.ts';
 import type { SearchBrief } from './shelf.ts';
@@ -56,15 +57,14 @@ export function findBestValue(
   for (const frame of queue) {
     if (best !== null && frame.priceMinor + cheapest > best.priceMinor) break;
     if (hopeless(frame)) continue;
-    const effects = frameEffects(frame, frame.idealOhms, brief).map(({ effect }) => effect);
+    const effects = frameEffects(frame, frame.idealOhms, brief);
     const kinds = kindsNear(shelf.values, frame.stock.offers, frame.idealOhms);
     const shifts = conditionShifts(frame, frame.idealOhms, brief);
     const window = widestWindow(shifts, timingSensitivity(frame, frame.idealOhms), kinds, brief);
     if (isTooWide(effects, window.upper - window.lower)) continue;
     const spread = frameSpread(frame, frame.idealOhms, brief, effects);
     const tightest = kinds.reduce((least, kind) => Math.min(least, kind.tolerance), 1);
-    const half = -spread.sensitivity * tightest * mixing;
-    const promising = promisingOffsets(spread.of, window, half);
+    const promising = promisingOffsets(spread, window, tightest * mixing);
     if (promising === null) continue;
     best = cheapestOfFrame({ frame, spread, window, promising }, brief, best);
   }
@@ -80,9 +80,9 @@ const normalDeviations = 2.576;
  * take the more standard deviations the nearer its kurtosis is to the normal's. Less than the truth
  * for sums of two and more uniform causes, with 3 % to spare.
  */
-function isTooWide(effects: readonly Effect[], room: number): boolean {
+function isTooWide(effects: readonly KitEffect[], room: number): boolean {
   let [variance, squares] = [0, 0];
-  for (const effect of effects) {
+  for (const { effect } of effects) {
     const own = momentsOf(effect).variance;
     variance += own;
     squares += own * own;
@@ -131,7 +131,7 @@ export function mayHold(
   { frame, timing }: Candidate<SingleTimingParts>,
   brief: SearchBrief,
 ): boolean {
-  const effects = frameEffects(frame, timing.ohms, brief).map(({ effect }) => effect);
+  const effects = frameEffects(frame, timing.ohms, brief);
   const shifts = conditionShifts(frame, timing.ohms, brief);
   const kind = { tolerance: 0, coefficientPerKelvin: timingCoefficient(timing) };
   const window = widestWindow(shifts, timingSensitivity(frame, timing.ohms), [kind], brief);
@@ -167,18 +167,21 @@ function widestWindow(
 
 /** Two like resistors together spread less than one; at best as one of this share of their tolerance. */
 const mixing = 0.5;
-const windowStep = 32;
+const windowStep = 16;
 
 /**
  * Between which nominal rates (ln over the target) a resistor that spreads by `half` could have enough
  * kits in a window; null where none could.
  */
-function promisingOffsets(of: Integrals, { lower, upper }: Window, half: number): Window | null {
+function promisingOffsets(
+  { parts }: FrameSpread,
+  { lower, upper }: Window,
+  half: number,
+): Window | null {
   let found: Window | null = null;
-  const step = windowStep * of.step;
-  for (let offset = lower - of.step; offset <= upper + of.step; offset += step) {
-    const share =
-      distributionWith(of, upper - offset, half, 0) - distributionWith(of, lower - offset, half, 0);
+  const step = windowStep * parts[0]!.of.step;
+  for (let offset = lower - step; offset <= upper + step; offset += step) {
+    const share = shareBetween(parts, lower - offset, upper - offset, [half, 0]);
     if (share < valueYield - scanSlack) continue;
     if (found === null) found = { lower: offset - step, upper: offset + step };
     else found.upper = offset + step;
@@ -226,10 +229,9 @@ function cheapestOfFrame(
       // At the best price so far only a nearer pack is of use.
       if (room < 0 || (room === 0 && Math.abs(offset) > 1.2 * best.distance + 1e-9)) return;
     }
-    const half = -spread.sensitivity * mixing * leastTolerance(frame, k, firstShare(frame, k));
-    const most =
-      distributionWith(spread.of, window.upper - offset, half, 0) -
-      distributionWith(spread.of, window.lower - offset, half, 0);
+    const half = mixing * leastTolerance(frame, k, firstShare(frame, k));
+    const [lower, upper] = [window.lower - offset, window.upper - offset];
+    const most = shareBetween(spread.parts, lower, upper, [half, 0]);
     if (most < valueYield - yieldSlack) return;
     visitChoices(stock, k, (first, second) => {
       const price = frame.priceMinor + first.priceMinor + (second?.priceMinor ?? 0);

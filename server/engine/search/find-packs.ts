@@ -4,6 +4,7 @@ import { aimFrames, closestByCapacitor, type AimedFrame } from './closest.ts';
 import { findBestValue, holdsBand, mayHold, rememberHopeless, valueYield } from './best-value.ts';
 import { guaranteedBand, worseEnd, type GuaranteedBand } from './guaranteed-band.ts';
 import { headCircuit, headsFor } from './heads.ts';
+import { inOrder } from './in-order.ts';
 import { insulationSiemens } from './aim.ts';
 import { conditionShifts, shiftRange, timingCoefficient } from './kit-effects.ts';
 import { kitYield, type KitYield } from './kit-yield.ts';
@@ -76,6 +77,10 @@ export function findPacks(
 /** The steadiest pack alone, with its promise; null when nothing on the shelf can run the brief. */
 export function findSteadiestPack(shelf: PreparedShelf, brief: SearchBrief): RankedPack | null {
   const { aimed, capacitors, offers } = aimShelf(shelf, brief);
+  if (brief.care === 'trimmer-fitted') {
+    const trimmed = steadiestTrimmed(aimed, brief, shelf);
+    return trimmed && { ...promise(trimmed.candidate, brief, shelf), wins: ['steadiest'] };
+  }
   const fitted = fittedPacks(aimed, brief, shelf);
   const steadiest =
     fitted === null
@@ -87,6 +92,35 @@ export function findSteadiestPack(shelf: PreparedShelf, brief: SearchBrief): Ran
         )
       : steadiestOf(fitted, null, brief, shelf);
   return steadiest && { ...promise(steadiest.candidate, brief, shelf), wins: ['steadiest'] };
+}
+
+/** The steadiest trimmed pack alone: frames go by what supply, drift and dielectric leave at least. */
+function steadiestTrimmed(
+  aimed: readonly AimedFrame[],
+  brief: SearchBrief,
+  shelf: PreparedShelf,
+): Steady | null {
+  const parts = [...shelf.shelf.resistors, ...shelf.shelf.trimmers];
+  const coefficients = [...new Set(parts.map((part) => part.temperatureCoefficientPerKelvin))];
+  const boundOf = (frame: AimedFrame) => {
+    const shifts = conditionShifts(frame, frame.idealOhms, brief);
+    const widths = coefficients.map((coefficient) => {
+      const { up, down } = shiftRange(shifts, coefficient, -1);
+      return up - down;
+    });
+    return 0.85 * frame.capacitor.temperatureSpread + 0.4 * Math.min(...widths);
+  };
+  const queue = inOrder(
+    aimed.filter(({ reaches }) => reaches).map((frame) => ({ frame, bound: boundOf(frame) })),
+    ({ bound }) => bound,
+  );
+  let best: Steady | null = null;
+  for (const { frame, bound } of queue) {
+    if (best !== null && bound > best.end) break;
+    const pack = trimmedPack(frame, brief, shelf);
+    if (pack) best = steadier(best, steadyOf(pack, brief, shelf));
+  }
+  return best;
 }
 
 /** Every frame of the shelf, aimed at the target. */

@@ -13,6 +13,8 @@ export type Cause = 'thresholds' | 'timing' | 'capacitor' | 'stray' | 'comparato
 export interface KitEffect {
   cause: Cause;
   effect: Effect;
+  /** True for the comparator's delays, which change what the other causes weigh. */
+  isDelay?: boolean;
 }
 
 /** A head reduced at both ends and in the middle of one figure's range. */
@@ -22,6 +24,7 @@ interface HeadEnds {
   /** Null where the nominal circuit lies in the middle. */
   middle: PreparedSingle | null;
   high: PreparedSingle;
+  isDelay?: boolean;
 }
 
 const knownEnds = new WeakMap<Head, readonly HeadEnds[]>();
@@ -58,7 +61,7 @@ function listEnds(head: Head, brief: SearchBrief): HeadEnds[] {
     along('comparator', (u) => ({ offsetVolts: u * maxOffsetVolts })),
     along('comparator', (u) => ({ biasAmps: u * maxInputBiasAmps })),
     along('comparator', (u) => ({ outputFactor: 1.25 + 0.75 * u })),
-    along('comparator', (u) => delaysAt(head, u)),
+    { ...along('comparator', (u) => delaysAt(head, u)), isDelay: true },
   ];
   if (brief.load !== null && !buffered) {
     const { minForwardVolts: least, maxForwardVolts: most } = brief.load;
@@ -70,13 +73,37 @@ function listEnds(head: Head, brief: SearchBrief): HeadEnds[] {
 }
 
 /** Both delays between half the typical one (u = −1) and the maximum (u = 1). */
-function delaysAt({ comparator: part }: Head, u: number): HeadCorner {
+function delaysAt(
+  { comparator: part }: Head,
+  u: number,
+): { delayLowHighSeconds: number; delayHighLowSeconds: number } {
   const share = (u + 1) / 2;
   const at = (typical: number) => (1 - share) * (typical / 2) + share * part.maxDelaySeconds;
   return {
     delayLowHighSeconds: at(part.delayLowHighSeconds),
     delayHighLowSeconds: at(part.delayHighLowSeconds),
   };
+}
+
+/** The delays' range in thirds, by their middles: u from −1 (least) to 1 (most). */
+export const delayThirds = [-2 / 3, 0, 2 / 3] as const;
+
+const knownDelayed = new WeakMap<Head, readonly Head[]>();
+
+/** A head with the delays in the middle of each third of their range. */
+export function delayedHeads(head: Head, brief: SearchBrief): readonly Head[] {
+  let heads = knownDelayed.get(head);
+  if (!heads) {
+    const reduce = cornerReducer(head, brief);
+    heads = delayThirds.map((u): Head => {
+      const { delayLowHighSeconds, delayHighLowSeconds } = delaysAt(head, u);
+      const comparator = { ...head.comparator, delayLowHighSeconds, delayHighLowSeconds };
+      const prepared = reduce({ delayLowHighSeconds, delayHighLowSeconds });
+      return { ...head, comparator, prepared };
+    });
+    knownDelayed.set(head, heads);
+  }
+  return heads;
 }
 
 /** A circuit that does not oscillate at an end counts as this much slow. */
@@ -96,8 +123,9 @@ export function frameEffects(frame: Frame, ohms: number, brief: SearchBrief): Ki
     const period = periodWith(prepared, ohms, farads, leakage, capacitor.leakageAmps);
     return period > 0 ? nominal - Math.log(period) : stopped;
   };
-  const ends = headEnds(head, brief).map(({ cause, low, middle, high }): KitEffect => ({
+  const ends = headEnds(head, brief).map(({ cause, low, middle, high, isDelay }): KitEffect => ({
     cause,
+    isDelay: isDelay === true,
     effect: {
       kind: 'uniform',
       low: logWith(low, capacitor.farads),
@@ -137,7 +165,12 @@ function capacitorEffect(
   const { tolerance, deviation } = capacitor;
   if (brief.care === 'bench-tuned') return uniform(logAt, brief.meterUncertainty);
   if (deviation === null || deviation <= 0) return uniform(logAt, tolerance);
-  const points = Array.from({ length: normalPoints }, (_, k) => (2 * k + 1) / normalPoints - 1);
+  // Beyond four standard deviations there is nothing to count.
+  const reach = Math.min(1, (4 * deviation) / tolerance);
+  const points = Array.from(
+    { length: normalPoints },
+    (_, k) => reach * ((2 * k + 1) / normalPoints - 1),
+  );
   const weights = points.map((u) => Math.exp(-(((u * tolerance) / deviation) ** 2) / 2));
   const total = weights.reduce((sum, weight) => sum + weight, 0);
   return {

@@ -4,18 +4,22 @@ import {
   densityOfSum,
   distributionWith,
   integrals,
+  rangeOf,
   type Effect,
   type Integrals,
 } from './density.ts';
 import { isWithin, type GuaranteedBand } from './guaranteed-band.ts';
 import {
   conditionShifts,
+  delayedHeads,
+  delayThirds,
   frameEffects,
   shiftRange,
   timingCoefficient,
   timingSensitivity,
   timingShares,
   type ConditionShift,
+  type KitEffect,
 } from './kit-effects.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
 import type { SearchBrief } from './shelf.ts';
@@ -36,27 +40,64 @@ const methodError = 1e-3;
 
 /** How the kits of a frame differ before its timing parts are chosen; see `frameEffects`. */
 export interface FrameSpread {
-  /** Distribution of all effects together, in ln of the rate. */
-  of: Integrals;
+  /** Distributions of all effects together in ln of the rate, to be averaged. */
+  parts: readonly SpreadPart[];
+  /** d ln f / d ln R4 of the nominal circuit. */
   sensitivity: number;
   shifts: readonly ConditionShift[];
 }
 
+interface SpreadPart {
+  weight: number;
+  of: Integrals;
+  sensitivity: number;
+}
+
+/** Delays that move the rate by less than this do not change what the other causes weigh. */
+const smallDelay = 0.004;
+
 /**
- * The spread of a frame at about the timing resistance that meets the target; `effects` are its
- * `frameEffects` there, worked out when left out.
+ * The spread of a frame at about the timing resistance that meets the target. Where the comparator's
+ * delays count, the other causes weigh less the longer they are, so each third of their range is
+ * taken by itself.
+ * `all` are the frame's `frameEffects` there, worked out when left out.
  */
 export function frameSpread(
   frame: Frame,
   idealOhms: number,
   brief: SearchBrief,
-  effects: readonly Effect[] = frameEffects(frame, idealOhms, brief).map(({ effect }) => effect),
+  all: readonly KitEffect[] = frameEffects(frame, idealOhms, brief),
 ): FrameSpread {
-  return {
-    of: integrals(densityOfSum(effects)),
-    sensitivity: timingSensitivity(frame, idealOhms),
-    shifts: conditionShifts(frame, idealOhms, brief),
-  };
+  const sensitivity = timingSensitivity(frame, idealOhms);
+  const shifts = conditionShifts(frame, idealOhms, brief);
+  const delay = all.find(({ isDelay }) => isDelay);
+  const [least, most] = delay ? rangeOf(delay.effect) : [0, 0];
+  if (most - least < smallDelay) {
+    const of = integrals(densityOfSum(all.map(({ effect }) => effect)));
+    return { parts: [{ weight: 1, of, sensitivity }], sensitivity, shifts };
+  }
+  const parts = delayedHeads(frame.head, brief).map((head, k): SpreadPart => {
+    const own = { ...frame, head };
+    const effects = frameEffects(own, idealOhms, brief)
+      .filter(({ isDelay }) => !isDelay)
+      .map(({ effect }) => effect);
+    const third = partOf(delay!.effect, delayThirds[k]! - 1 / 3, delayThirds[k]! + 1 / 3);
+    return {
+      weight: 1 / delayThirds.length,
+      of: integrals(densityOfSum([...effects, third])),
+      sensitivity: timingSensitivity(own, idealOhms),
+    };
+  });
+  return { parts, sensitivity, shifts };
+}
+
+/** The part of an effect between two values of its u, as an effect of its own. */
+function partOf(effect: Effect, from: number, to: number): Effect {
+  if (effect.kind === 'points') return effect;
+  const slope = (effect.high - effect.low) / 2;
+  const bend = (effect.high + effect.low) / 2 - effect.middle;
+  const at = (u: number) => effect.middle + slope * u + bend * u * u;
+  return { kind: 'uniform', low: at(from), middle: at((from + to) / 2), high: at(to) };
 }
 
 /** What timing parts add to a frame's spread. */
@@ -80,19 +121,33 @@ export function timingSpread(timing: SingleTimingParts, offset: number): TimingS
 
 /** Share of kits in the band with a frame's and a timing's spread together. */
 export function shareWithin(
-  { of, sensitivity, shifts }: FrameSpread,
+  { parts, sensitivity, shifts }: FrameSpread,
   { offset, halves, coefficientPerKelvin }: TimingSpread,
   brief: SearchBrief,
 ): number {
-  const [first, second] = halves;
-  // ln(1 + t·u) lies t²/6 below zero in the mean.
-  const middle = offset - (sensitivity * (first ** 2 + second ** 2)) / 6;
   const { up, down } = shiftRange(shifts, coefficientPerKelvin, sensitivity);
-  const upper = Math.log(1 + brief.band) - up - middle;
-  const lower = Math.log(1 - brief.band) - down - middle;
+  const upper = Math.log(1 + brief.band) - up - offset;
+  const lower = Math.log(1 - brief.band) - down - offset;
   if (!(upper > lower)) return 0;
-  const [a, b] = [-sensitivity * first, -sensitivity * second];
-  const share = distributionWith(of, upper, a, b) - distributionWith(of, lower, a, b);
+  return shareBetween(parts, lower, upper, halves);
+}
+
+/** Share of a spread's kits between two values of ln of the rate, with timing parts of these halves. */
+export function shareBetween(
+  parts: readonly SpreadPart[],
+  lower: number,
+  upper: number,
+  [first, second]: readonly [number, number],
+): number {
+  let share = 0;
+  for (const { weight, of, sensitivity } of parts) {
+    // ln(1 + t·u) lies t²/6 below zero in the mean.
+    const mean = -(sensitivity * (first ** 2 + second ** 2)) / 6;
+    const [a, b] = [-sensitivity * first, -sensitivity * second];
+    share +=
+      weight *
+      (distributionWith(of, upper - mean, a, b) - distributionWith(of, lower - mean, a, b));
+  }
   return Math.min(1, Math.max(0, share));
 }
 
@@ -141,7 +196,8 @@ function steeredShare(
   const of = integrals(densityOfSum(effects));
   const shifts = steeredShifts(candidate, brief);
   const none = { offset, halves: [0, 0] as const, coefficientPerKelvin: 0 };
-  return shareWithin({ of, sensitivity: -1, shifts }, none, brief);
+  const parts = [{ weight: 1, of, sensitivity: -1 }];
+  return shareWithin({ parts, sensitivity: -1, shifts }, none, brief);
 }
 
 const evenly = (half: number): Effect => ({ kind: 'uniform', low: -half, middle: 0, high: half });
@@ -157,9 +213,10 @@ function trimmedShare(
     share * fixed.temperatureCoefficientPerKelvin +
     (1 - share) * trimmer.temperatureCoefficientPerKelvin;
   const effects = [evenly(settingError(ohms, trimmer)), evenly(frame.capacitor.temperatureSpread)];
+  const sensitivity = timingSensitivity(frame, ohms);
   const spread = {
-    of: integrals(densityOfSum(effects)),
-    sensitivity: timingSensitivity(frame, ohms),
+    parts: [{ weight: 1, of: integrals(densityOfSum(effects)), sensitivity }],
+    sensitivity,
     shifts: conditionShifts(frame, ohms, brief),
   };
   return shareWithin(spread, { offset: 0, halves: [0, 0], coefficientPerKelvin }, brief);

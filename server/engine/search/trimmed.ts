@@ -76,6 +76,7 @@ function cornerOhms(
     const rate = corner === 'slow' ? Math.min(...rates) : Math.max(...rates);
     if (!(rate > 0)) return null;
     ohms *= rate / brief.targetHz;
+    if (Math.abs(rate / brief.targetHz - 1) < 1e-9) break;
   }
   return ohms;
 }
