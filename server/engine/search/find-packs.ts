@@ -9,7 +9,7 @@ import { insulationSiemens } from './aim.ts';
 import { conditionShifts, shiftRange, timingCoefficient } from './kit-effects.ts';
 import { kitYield, type KitYield } from './kit-yield.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
-import { capacitorSuits } from './rules.ts';
+import { capacitorSuits, limits } from './rules.ts';
 import type { SearchBrief, StockedCapacitor } from './shelf.ts';
 import { findSteadiest, quickBound, steadier, steadyOf, type Steady } from './steadiest.ts';
 import { steeredCircuit, steeredPacks, steeredValues, supplyReach } from './steered.ts';
@@ -94,31 +94,44 @@ export function findSteadiestPack(shelf: PreparedShelf, brief: SearchBrief): Ran
   return steadiest && { ...promise(steadiest.candidate, brief, shelf), wins: ['steadiest'] };
 }
 
-/** The steadiest trimmed pack alone: frames go by what supply, drift and dielectric leave at least. */
+/** Trimmed packs of the steadiest frames differ by their settings alone; so many are looked at. */
+const trimmedLooked = 24;
+
+/**
+ * A steady trimmed pack alone: of the frames that supply, drift and dielectric leave the least, the
+ * steadiest of the first two dozen packs.
+ */
 function steadiestTrimmed(
   aimed: readonly AimedFrame[],
   brief: SearchBrief,
   shelf: PreparedShelf,
 ): Steady | null {
-  const parts = [...shelf.shelf.resistors, ...shelf.shelf.trimmers];
+  const fixed = shelf.shelf.resistors.filter(
+    (part) => part.tolerance <= limits.thresholdTolerance * (1 + 1e-9),
+  );
+  const parts = [...fixed, ...shelf.shelf.trimmers];
   const coefficients = [...new Set(parts.map((part) => part.temperatureCoefficientPerKelvin))];
   const boundOf = (frame: AimedFrame) => {
     const shifts = conditionShifts(frame, frame.idealOhms, brief);
-    const widths = coefficients.map((coefficient) => {
+    // Set at 25 °C, a kit is as far off as it drifts to either side.
+    const ends = coefficients.map((coefficient) => {
       const { up, down } = shiftRange(shifts, coefficient, -1);
-      return up - down;
+      return Math.max(up, -down);
     });
-    return 0.85 * frame.capacitor.temperatureSpread + 0.4 * Math.min(...widths);
+    return 0.85 * frame.capacitor.temperatureSpread + 0.95 * Math.min(...ends);
   };
   const queue = inOrder(
     aimed.filter(({ reaches }) => reaches).map((frame) => ({ frame, bound: boundOf(frame) })),
     ({ bound }) => bound,
   );
   let best: Steady | null = null;
+  let looked = 0;
   for (const { frame, bound } of queue) {
-    if (best !== null && bound > best.end) break;
+    if (best !== null && (bound > best.end || looked >= trimmedLooked)) break;
     const pack = trimmedPack(frame, brief, shelf);
-    if (pack) best = steadier(best, steadyOf(pack, brief, shelf));
+    if (pack === null) continue;
+    looked += 1;
+    best = steadier(best, steadyOf(pack, brief, shelf));
   }
   return best;
 }
