@@ -68,3 +68,50 @@ export function makeableKits(
     ...merged.map(({ partId, quantity }) => Math.floor(availableOf(partId) / quantity)),
   );
 }
+
+/** Pieces of one lot that are kept for an order; `picked` of them are in its tray. */
+export interface KeptPieces {
+  id: number;
+  lotId: number;
+  partId: number;
+  quantity: number;
+  picked: number;
+}
+
+/** What changes when parts take the place of others: what goes back and what is wanted instead. */
+export function exchangeOf(
+  from: readonly number[],
+  to: readonly number[],
+): { back: number[]; wanted: PartDemand[] } {
+  const wanted = [...to];
+  const back = from.filter((partId) => {
+    const at = wanted.indexOf(partId);
+    if (at >= 0) wanted.splice(at, 1);
+    return at < 0;
+  });
+  return { back, wanted: mergeDemands(wanted.map((partId) => ({ partId, quantity: 1 }))) };
+}
+
+/**
+ * Takes single pieces off what is kept for an order: of lots with a piece not yet in the tray first,
+ * then of the newest. Gives the lots that changed, at their new counts, and the lots whose piece has to
+ * come out of the tray. Throws when the order has no such piece.
+ */
+export function giveBack<Lot extends KeptPieces>(
+  partIds: readonly number[],
+  kept: readonly Lot[],
+): { changed: Lot[]; fromTray: Lot[] } {
+  const now = new Map(kept.map((lot) => [lot.id, lot]));
+  const fromTray: Lot[] = [];
+  for (const partId of partIds) {
+    const isOpen = (lot: Lot) => Number(lot.picked < lot.quantity);
+    const [lot] = [...now.values()]
+      .filter((one) => one.partId === partId && one.quantity > 0)
+      .sort((a, b) => isOpen(b) - isOpen(a) || b.lotId - a.lotId);
+    if (!lot) throw new Error(`The order keeps no piece of part ${partId}.`);
+    if (lot.picked === lot.quantity) fromTray.push(lot);
+    const quantity = lot.quantity - 1;
+    now.set(lot.id, { ...lot, quantity, picked: Math.min(lot.picked, quantity) });
+  }
+  return { changed: [...now.values()].filter((lot) => !kept.includes(lot)), fromTray };
+}

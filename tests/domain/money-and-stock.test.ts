@@ -4,7 +4,14 @@ import { careLevels } from '../../server/contracts/brief.ts';
 import { money, taxWithin, withTax } from '../../server/domain/money.ts';
 import { kitPrice, shareOut } from '../../server/domain/price.ts';
 import { shipBy } from '../../server/domain/ship-by.ts';
-import { allocate, makeableKits, mergeDemands, type LotStock } from '../../server/domain/stock.ts';
+import {
+  allocate,
+  exchangeOf,
+  giveBack,
+  makeableKits,
+  mergeDemands,
+  type LotStock,
+} from '../../server/domain/stock.ts';
 
 const cents = fc.integer({ min: 0, max: 1_000_000 });
 const rate = fc.integer({ min: 0, max: 5000 });
@@ -209,5 +216,42 @@ describe('shipBy', () => {
     ['the last evening of a year', '2026-12-31T20:00:00Z', '2027-01-01T16:00:00Z'],
   ])('for %s is the next time the parcels leave', (_, paid, leaves) => {
     expect(shipBy(new Date(paid)).toISOString()).toBe(new Date(leaves).toISOString());
+  });
+});
+
+describe('exchangeOf', () => {
+  it('gives back and wants only what differs, piece by piece', () => {
+    expect(exchangeOf([7, 7], [7, 9])).toEqual({
+      back: [7],
+      wanted: [{ partId: 9, quantity: 1 }],
+    });
+    expect(exchangeOf([7], [5, 5])).toEqual({ back: [7], wanted: [{ partId: 5, quantity: 2 }] });
+    expect(exchangeOf([3, 4], [4, 3])).toEqual({ back: [], wanted: [] });
+  });
+});
+
+describe('giveBack', () => {
+  const lot = (id: number, quantity: number, picked: number) => ({
+    id,
+    lotId: 10 * id,
+    partId: 7,
+    quantity,
+    picked,
+  });
+
+  it('takes a piece that is not in the tray yet before one that is', () => {
+    const { changed, fromTray } = giveBack([7], [lot(1, 2, 1), lot(2, 3, 3)]);
+    expect(changed).toEqual([lot(1, 1, 1)]);
+    expect(fromTray).toEqual([]);
+  });
+
+  it('says from which lot a piece must come out of the tray, the newest first', () => {
+    const kept = [lot(1, 1, 1), lot(2, 1, 1)];
+    expect(giveBack([7], kept)).toEqual({ changed: [lot(2, 0, 0)], fromTray: [kept[1]] });
+    expect(giveBack([7, 7], kept).changed).toEqual([lot(1, 0, 0), lot(2, 0, 0)]);
+  });
+
+  it('throws for a piece that the order does not have', () => {
+    expect(() => giveBack([7, 7], [lot(1, 1, 0)])).toThrow(/keeps no piece/);
   });
 });
