@@ -6,6 +6,7 @@ import * as paymentsAndMail from './0005-payments-and-mail.ts';
 import * as catalogueRevision from './0006-catalogue-revision.ts';
 import * as stockNotices from './0007-stock-notices.ts';
 import * as careLevels from './0008-care-levels.ts';
+import * as tunings from './0009-tunings.ts';
 
 /** Every migration in order; the stored name never changes once it has run anywhere. */
 export const migrations = [
@@ -17,4 +18,5 @@ export const migrations = [
   { name: '0006-catalogue-revision', ...catalogueRevision },
   { name: '0007-stock-notices', ...stockNotices },
   { name: '0008-care-levels', ...careLevels },
+  { name: '0009-tunings', ...tunings },
 ];

@@ -661,6 +661,36 @@ CREATE TABLE public.tax_rates (
     CONSTRAINT tax_rates_basis_points_check CHECK (((basis_points >= 0) AND (basis_points <= 5000)))
 );
 
+CREATE TABLE public.tunings (
+    id bigint NOT NULL,
+    order_line_id uuid NOT NULL,
+    unit integer NOT NULL,
+    farads double precision NOT NULL,
+    meter_uncertainty double precision NOT NULL,
+    first_part_id integer NOT NULL,
+    second_part_id integer,
+    joined text,
+    promise jsonb NOT NULL,
+    circuit jsonb NOT NULL,
+    stands boolean DEFAULT true NOT NULL,
+    tuned_by uuid,
+    tuned_at timestamp with time zone NOT NULL,
+    CONSTRAINT tunings_farads_check CHECK ((farads > (0)::double precision)),
+    CONSTRAINT tunings_joined_check CHECK ((joined = ANY (ARRAY['series'::text, 'parallel'::text]))),
+    CONSTRAINT tunings_meter_uncertainty_check CHECK ((meter_uncertainty >= (0)::double precision)),
+    CONSTRAINT tunings_two_are_joined CHECK (((second_part_id IS NULL) = (joined IS NULL))),
+    CONSTRAINT tunings_unit_check CHECK (((unit >= 1) AND (unit <= 500)))
+);
+
+ALTER TABLE public.tunings ALTER COLUMN id ADD GENERATED ALWAYS AS IDENTITY (
+    SEQUENCE NAME public.tunings_id_seq
+    START WITH 1
+    INCREMENT BY 1
+    NO MINVALUE
+    NO MAXVALUE
+    CACHE 1
+);
+
 CREATE TABLE public.unserved_briefs (
     id bigint NOT NULL,
     at timestamp with time zone DEFAULT now() NOT NULL,
@@ -832,6 +862,12 @@ ALTER TABLE ONLY public.stock_ledger
 ALTER TABLE ONLY public.tax_rates
     ADD CONSTRAINT tax_rates_pkey PRIMARY KEY (country);
 
+ALTER TABLE ONLY public.tunings
+    ADD CONSTRAINT tunings_pkey PRIMARY KEY (id);
+
+ALTER TABLE ONLY public.tunings
+    ADD CONSTRAINT tunings_unit_once UNIQUE (order_line_id, unit);
+
 ALTER TABLE ONLY public.unserved_briefs
     ADD CONSTRAINT unserved_briefs_pkey PRIMARY KEY (id);
 
@@ -985,3 +1021,15 @@ ALTER TABLE ONLY public.stock_ledger
 
 ALTER TABLE ONLY public.stock_ledger
     ADD CONSTRAINT stock_ledger_order_id_fkey FOREIGN KEY (order_id) REFERENCES public.orders(id);
+
+ALTER TABLE ONLY public.tunings
+    ADD CONSTRAINT tunings_first_part_id_fkey FOREIGN KEY (first_part_id) REFERENCES public.parts(id);
+
+ALTER TABLE ONLY public.tunings
+    ADD CONSTRAINT tunings_order_line_id_fkey FOREIGN KEY (order_line_id) REFERENCES public.order_lines(id);
+
+ALTER TABLE ONLY public.tunings
+    ADD CONSTRAINT tunings_second_part_id_fkey FOREIGN KEY (second_part_id) REFERENCES public.parts(id);
+
+ALTER TABLE ONLY public.tunings
+    ADD CONSTRAINT tunings_tuned_by_fkey FOREIGN KEY (tuned_by) REFERENCES public.users(id);

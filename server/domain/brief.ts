@@ -172,7 +172,8 @@ function resolveLed(
   return { led };
 }
 
-function toSearch(
+/** A resolved brief as the search is asked it; `led` is the LED of the pack, null for a clock. */
+export function toSearch(
   brief: ResolvedBrief,
   led: PartOf<'led'> | null,
   { meterUncertainty }: Bench,

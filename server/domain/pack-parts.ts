@@ -1,5 +1,6 @@
 import type { Marking, PackPart, PackRole } from '../contracts/packs.ts';
 import { chipCode, e96Code } from '../engine/chip-code.ts';
+import type { Circuit } from '../engine/circuit.ts';
 import { capacitorCode } from '../engine/capacitor-code.ts';
 import { resistorBands } from '../engine/resistor-bands.ts';
 import { formatFarads, formatOhms } from '../engine/si-format.ts';
@@ -124,4 +125,14 @@ export function toPackPart(role: PackRole, part: CataloguePart): PackPart {
 /** Sorts parts the way a bill of materials lists them. */
 export function inBillOrder<Item extends { role: PackRole }>(parts: readonly Item[]): Item[] {
   return [...parts].sort((a, b) => roleOrder.indexOf(a.role) - roleOrder.indexOf(b.role));
+}
+
+/** How R4A and R4B of a pack are joined, told by the whole resistance of its circuit; null for one R4. */
+export function joinOf(
+  parts: readonly PackPart[],
+  { timing }: Circuit,
+): 'series' | 'parallel' | null {
+  const [first, second] = ['R4A', 'R4B'].map((role) => parts.find((part) => part.role === role));
+  if (!first?.ohms || !second?.ohms || timing.kind !== 'single') return null;
+  return timing.ohms > Math.max(first.ohms, second.ohms) ? 'series' : 'parallel';
 }

@@ -5,6 +5,7 @@ export const permissionTable = {
   'bench.see': ['packer', 'owner'],
   'bench.claim': ['packer', 'owner'],
   'bench.pick': ['packer', 'owner'],
+  'bench.tune': ['packer', 'owner'],
   'bench.ship': ['packer', 'owner'],
   'desk.see': ['owner'],
   'desk.change-price': ['owner'],

@@ -1,5 +1,5 @@
 import { Router, type Request } from 'express';
-import { pickRequestSchema, shipRequestSchema } from '../contracts/bench.ts';
+import { pickRequestSchema, readingRequestSchema, shipRequestSchema } from '../contracts/bench.ts';
 import { pageQuerySchema } from '../contracts/common.ts';
 import type { Deps } from '../ports.ts';
 import type { Packer } from '../use-cases/bench-order.ts';
@@ -9,6 +9,7 @@ import { packOrder } from '../use-cases/pack-order.ts';
 import { releaseOrder } from '../use-cases/release-order.ts';
 import { shipOrder } from '../use-cases/ship-order.ts';
 import { tickPick } from '../use-cases/tick-pick.ts';
+import { tuneKit } from '../use-cases/tune-kit.ts';
 import { viewBenchOrder } from '../use-cases/view-bench-order.ts';
 import { idempotent } from './idempotent.ts';
 import { guard, requireSignedIn } from './visitor.ts';
@@ -41,6 +42,15 @@ export function benchRoutes(deps: Deps): Router {
   router.post('/orders/:ref/picks', guard('bench.pick'), async (req, res) => {
     res.json(await tickPick(deps, packer(req), refOf(req), pickRequestSchema.parse(req.body)));
   });
+
+  router.post(
+    '/orders/:ref/readings',
+    guard('bench.tune'),
+    idempotent(deps, async (req) => ({
+      status: 200,
+      body: await tuneKit(deps, packer(req), refOf(req), readingRequestSchema.parse(req.body)),
+    })),
+  );
 
   router.post('/orders/:ref/pack', guard('bench.pick'), async (req, res) => {
     res.json(await packOrder(deps, packer(req), refOf(req)));

@@ -5,6 +5,8 @@ import {
   benchOrderSchema,
   pickRequestSchema,
   queuePageSchema,
+  readingRequestSchema,
+  readingResponseSchema,
   shipRequestSchema,
 } from '../contracts/bench.ts';
 import { solveRequestSchema } from '../contracts/brief.ts';
@@ -232,6 +234,14 @@ export const calls: readonly Call[] = [
     role: 'bench',
     body: pickRequestSchema,
     answer: benchOrderSchema,
+  },
+  {
+    method: 'post',
+    path: '/api/bench/orders/{ref}/readings',
+    summary: 'Tune a kit to its measured capacitor (accepts Idempotency-Key)',
+    role: 'bench',
+    body: readingRequestSchema,
+    answer: readingResponseSchema,
   },
   {
     method: 'post',

@@ -1,4 +1,4 @@
-import type { LotShare, LotStock } from '../domain/stock.ts';
+import type { KeptPieces, LotShare, LotStock } from '../domain/stock.ts';
 import type { Database } from './connection.ts';
 
 export interface LotRow extends LotStock {
@@ -74,6 +74,28 @@ export async function holdShares(
       state: 'held',
     })),
   );
+}
+
+/** Keeps further pieces for an order that is being picked. The lots must be locked. */
+export async function keepMore(
+  db: Database,
+  orderId: number,
+  shares: readonly LotShare[],
+): Promise<void> {
+  for (const { lotId, quantity } of shares) {
+    await db('reservations')
+      .insert({ order_id: orderId, lot_id: lotId, quantity, state: 'allocated' })
+      .onConflict(['order_id', 'lot_id'])
+      .merge({ quantity: db.raw('reservations.quantity + excluded.quantity') });
+  }
+}
+
+/** Sets how many pieces of some lots are kept for an order and in its tray; none kept drops the pick. */
+export async function setKept(db: Database, lots: readonly KeptPieces[]): Promise<void> {
+  for (const { id, quantity, picked } of lots) {
+    const own = db('reservations').where({ id });
+    await (quantity === 0 ? own.delete() : own.update({ quantity, picked }));
+  }
 }
 
 /** Drops an order's released reservations, so that it can be promised parts again. */

@@ -5,12 +5,14 @@ import type { Deps } from '../ports.ts';
 import { findOrder, linesOfOrders, partsOfOrder } from '../store/orders.ts';
 import { findShipment } from '../store/shipments.ts';
 import { findParts } from '../store/parts.ts';
-import { countryName } from '../store/settings.ts';
+import { countryName, shopSettings } from '../store/settings.ts';
 import { picksOfOrder } from '../store/stock.ts';
+import { tuningsOfOrder } from '../store/tunings.ts';
 import type { Packer } from './bench-order.ts';
 import { Refusal } from './refusal.ts';
+import { lineTuning, rolesOfPart } from './view-tuning.ts';
 
-/** One order as the bench sees it: the walk in bin order, the lines, the label. */
+/** One order as the bench sees it: the walk in bin order, the lines with their readings, the label. */
 export async function viewBenchOrder(
   deps: Pick<Deps, 'db'>,
   packer: Packer,
@@ -21,10 +23,12 @@ export async function viewBenchOrder(
   if (order === null || !known.includes(order.status)) {
     throw new Refusal('not-found', `The bench has no order ${ref}.`);
   }
-  const [picks, lines, needs, shipment] = await Promise.all([
+  const [picks, lines, needs, tunings, settings, shipment] = await Promise.all([
     picksOfOrder(deps.db, order.id),
     linesOfOrders(deps.db, [order.id]),
     partsOfOrder(deps.db, order.id),
+    tuningsOfOrder(deps.db, order.id),
+    shopSettings(deps.db),
     findShipment(deps.db, order.id),
   ]);
   const parts = new Map(
@@ -35,6 +39,7 @@ export async function viewBenchOrder(
       )
     ).map((part) => [part.id, part]),
   );
+  const inHand = { lines, needs, tunings, picks, parts };
   return {
     ref: order.ref,
     status: order.status,
@@ -49,6 +54,7 @@ export async function viewBenchOrder(
       quantity: line.quantity,
       parts: inBillOrder(line.parts),
       cautions: line.cautions.map((caution) => caution.text),
+      tuning: lineTuning(line, inHand, settings),
     })),
     picks: picks.map((pick) => {
       const part = parts.get(pick.partId)!;
@@ -60,9 +66,7 @@ export async function viewBenchOrder(
         label: labelOf(part),
         marking: markingOf(part),
         kind: part.kind,
-        roles: [
-          ...new Set(needs.filter((need) => need.partId === part.id).map((need) => need.role)),
-        ],
+        roles: rolesOfPart(pick.partId, inHand),
         quantity: pick.quantity,
         picked: pick.picked,
       };

@@ -1,6 +1,7 @@
 import type { BuildSheet } from '../contracts/orders.ts';
 import { expectedReadings } from '../domain/build-readings.ts';
 import { buildSteps } from '../domain/build-steps.ts';
+import { joinOf } from '../domain/pack-parts.ts';
 import { drawSchematic } from '../domain/schematic.ts';
 import type { Deps } from '../ports.ts';
 import { linesOfOrders, type OrderLineRow } from '../store/orders.ts';
@@ -37,7 +38,7 @@ export function buildSheetOf(ref: string, line: OrderLineRow): BuildSheet {
     parts,
     drawing: drawSchematic({
       parts,
-      join: joinOf(line),
+      join: joinOf(parts, circuit),
       timingOhms: timing.kind === 'single' ? timing.ohms : null,
       buffered,
       supplyLabel: brief.supply.label,
@@ -52,12 +53,4 @@ export function buildSheetOf(ref: string, line: OrderLineRow): BuildSheet {
     readings: expectedReadings(circuit, parts, rate),
     cautions: line.cautions,
   };
-}
-
-/** Whether two timing resistors add (series) or not, told by the circuit's resistance. */
-function joinOf(line: OrderLineRow): 'series' | 'parallel' | null {
-  const second = line.parts.find((part) => part.role === 'R4B');
-  const first = line.parts.find((part) => part.role === 'R4A');
-  if (!second?.ohms || !first?.ohms || line.circuit.timing.kind !== 'single') return null;
-  return line.circuit.timing.ohms > Math.max(first.ohms, second.ohms) ? 'series' : 'parallel';
 }

@@ -47,6 +47,7 @@ describe('may', () => {
     'bench.see': 'packer owner',
     'bench.claim': 'packer owner',
     'bench.pick': 'packer owner',
+    'bench.tune': 'packer owner',
     'bench.ship': 'packer owner',
     'desk.see': 'owner',
     'desk.change-price': 'owner',

@@ -25,8 +25,10 @@ beforeAll(async () => {
   visits.guest = shop.visit();
   visits.owner = await signIn(shop, 'owner');
   visits.packer = await signIn(shop, 'packer');
-  const { ref } = await paidOrder(shop);
-  await visits.packer.post(`/api/bench/orders/${ref}/claim`).expect(200);
+  const tuned = { ...clockBrief, careLevel: 'bench-tuned' as const };
+  const { ref } = await paidOrder(shop, shop.visit(), tuned);
+  const claimed = await visits.packer.post(`/api/bench/orders/${ref}/claim`).expect(200);
+  const lineId = claimed.body.lines[0].id;
   await putIn(visits.guest);
   const part = (await visits.owner.get('/api/desk/parts?pageSize=1')).body.items[0];
   const { packs } = await solve(visits.guest, clockBrief);
@@ -48,6 +50,7 @@ beforeAll(async () => {
       acknowledgements: ['flash'],
     },
     '/api/bench/orders/{ref}/picks': { id: '1', quantity: 1 },
+    '/api/bench/orders/{ref}/readings': { lineId, unit: 1, farads: 8.2e-7 },
     '/api/bench/orders/{ref}/ship': { carrier: 'Quay Post', tracking: 'QP1' },
     '/api/desk/parts/{id}/price': { unitPrice: { amount: 5, currency: 'EUR' }, reason: 'why not' },
     '/api/desk/parts/{id}/stock': { lotId: '1', onHand: 5, reason: 'counted', note: 'counted' },
