@@ -11,6 +11,8 @@ import type { PackChoice } from './pack-choice.ts';
 
 /** Digits that a reading is shown with: a bench meter's. */
 const readingDigits = 5;
+/** Digits of a limit that a reading is held against. */
+export const limitDigits = 4;
 
 /** Roles of the timing resistance, one alone or two joined. */
 export const timingRoles: readonly PackRole[] = ['R4', 'R4A', 'R4B'];
@@ -54,9 +56,9 @@ export function readingRange(
   };
 }
 
-/** A reading in words: "818.2 nF". */
-export function readingWords(farads: number): string {
-  return formatFarads(farads, readingDigits);
+/** A reading in words, "818.23 nF"; a limit for readings with fewer digits. */
+export function readingWords(farads: number, digits = readingDigits): string {
+  return formatFarads(farads, digits);
 }
 
 /** Parts as a kit sees them that gives back its own pieces: those count as unreserved. */

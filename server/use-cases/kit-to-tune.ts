@@ -1,7 +1,7 @@
 import { isKind, type CataloguePart } from '../domain/catalogue.ts';
 import type { PackChoice } from '../domain/pack-choice.ts';
 import { joinOf, labelOf } from '../domain/pack-parts.ts';
-import { readingRange, readingWords, timingRoles } from '../domain/tuning.ts';
+import { limitDigits, readingRange, readingWords, timingRoles } from '../domain/tuning.ts';
 import type { Database } from '../store/connection.ts';
 import { linesOfOrders, partsOfOrder, type OrderLineRow } from '../store/orders.ts';
 import { findParts } from '../store/parts.ts';
@@ -75,7 +75,7 @@ export function requirePlausible(
   const { least, most } = readingRange(part.facts, settings);
   if (reading.farads >= least && reading.farads <= most) return;
   const message =
-    `C1 should be ${labelOf(part)}, which reads ${readingWords(least)} to ${readingWords(most)}; ` +
+    `C1 should be ${labelOf(part)}, which reads ${readingWords(least, limitDigits)} to ${readingWords(most, limitDigits)}; ` +
     `this one reads ${readingWords(reading.farads)}. Check that it is the right part and that the ` +
     'meter is zeroed, or take another one.';
   throw new Refusal('implausible-reading', message, [{ path: 'farads', message }]);

@@ -3,7 +3,7 @@ import type { PackRole } from '../contracts/packs.ts';
 import type { Bench } from '../domain/brief.ts';
 import { isKind, type CataloguePart } from '../domain/catalogue.ts';
 import { labelOf, toPackPart } from '../domain/pack-parts.ts';
-import { readingRange, readingWords, timingRoles } from '../domain/tuning.ts';
+import { limitDigits, readingRange, readingWords, timingRoles } from '../domain/tuning.ts';
 import type { OrderLineRow } from '../store/orders.ts';
 import type { PickRow } from '../store/stock.ts';
 import type { TuningRow } from '../store/tunings.ts';
@@ -35,8 +35,8 @@ export function lineTuning(
   });
   return {
     capacitor: labelOf(part),
-    from: readingWords(least),
-    to: readingWords(most),
+    from: readingWords(least, limitDigits),
+    to: readingWords(most, limitDigits),
     sold: line.promise,
     units,
   };

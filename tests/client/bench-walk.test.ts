@@ -2,13 +2,16 @@ import { describe, expect, it } from 'vitest';
 import { shipByWords, timeLeftWords } from '../../client/features/bench/ship-by.ts';
 import {
   lastStop,
+  nextKit,
   nextStop,
+  picksWith,
   readScan,
   stageOf,
+  walkablePicks,
   withPicked,
 } from '../../client/features/bench/walk.ts';
 import { noBreak } from '../../client/lib/spaces.ts';
-import { sampleOrder, samplePick } from './bench-samples.ts';
+import { sampleOrder, samplePick, sampleTuned, sampleTunedOrder } from './bench-samples.ts';
 
 const plain = (text: string) => text.replaceAll(noBreak, ' ');
 
@@ -91,15 +94,59 @@ describe('readScan', () => {
 
 describe('stageOf', () => {
   const allTaken = sampleOrder().picks.map((pick) => ({ ...pick, picked: pick.quantity }));
+  const allButTiming = allTaken.map((pick) => (pick.id === '2' ? { ...pick, picked: 0 } : pick));
   it.each([
     ['unclaimed', sampleOrder({ status: 'paid', claimedBy: null, mine: false })],
     ['elsewhere', sampleOrder({ claimedBy: 'Maud Tarrow', mine: false })],
     ['walk', sampleOrder()],
+    ['walk', sampleTunedOrder([null])],
+    ['tune', sampleTunedOrder([null], { picks: allButTiming })],
+    ['walk', sampleTunedOrder([sampleTuned()], { picks: allButTiming })],
+    ['bag', sampleTunedOrder([sampleTuned()], { picks: allTaken })],
     ['bag', sampleOrder({ picks: allTaken })],
     ['ship', sampleOrder({ status: 'packed', picks: allTaken })],
     ['shipped', sampleOrder({ status: 'shipped', picks: allTaken })],
   ])('is %s', (stage, order) => {
     expect(stageOf(order)).toBe(stage);
+  });
+});
+
+describe('the walk of a bench-tuned order', () => {
+  it('leaves R4 alone until every capacitor is measured', () => {
+    const ids = (order: ReturnType<typeof sampleOrder>) => walkablePicks(order).map(({ id }) => id);
+    expect(ids(sampleTunedOrder([sampleTuned(), null]))).toEqual(['1', '3']);
+    expect(ids(sampleTunedOrder([sampleTuned()]))).toEqual(['1', '2', '3']);
+    expect(ids(sampleOrder())).toEqual(['1', '2', '3']);
+  });
+  it('takes a resistor that is R1 as well as R4 at once', () => {
+    const picks = [samplePick({ id: '1', roles: ['R1', 'R4'] })];
+    expect(walkablePicks(sampleTunedOrder([null], { picks }))).toHaveLength(1);
+  });
+  it('measures the kits in turn', () => {
+    expect(nextKit(sampleTunedOrder([sampleTuned(), null, null]))?.unit).toBe(2);
+    expect(nextKit(sampleTunedOrder([sampleTuned()]))).toBeNull();
+    expect(nextKit(sampleOrder())).toBeNull();
+  });
+});
+
+describe('picksWith', () => {
+  const [part] = sampleTuned().take;
+  if (part === undefined) throw new Error('The sample takes one resistor.');
+
+  it('adds what was taken to what lies in the tray', () => {
+    const picks = [samplePick({ id: '2', quantity: 3, picked: 1 })];
+    expect(picksWith(sampleOrder({ picks }), [part])).toEqual([{ id: '2', quantity: 2 }]);
+    expect(picksWith(sampleOrder({ picks }), [part, part])).toEqual([{ id: '2', quantity: 3 }]);
+  });
+  it('goes on in the next lot where one is used up, and never beyond what is wanted', () => {
+    const picks = [
+      samplePick({ id: '2', quantity: 1 }),
+      samplePick({ id: '4', quantity: 1, lot: '2609-B' }),
+    ];
+    expect(picksWith(sampleOrder({ picks }), [part, part, part])).toEqual([
+      { id: '2', quantity: 1 },
+      { id: '4', quantity: 1 },
+    ]);
   });
 });
 

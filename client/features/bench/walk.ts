@@ -1,8 +1,8 @@
-import type { BenchOrder, Pick } from '../../../server/contracts/bench.ts';
+import type { BenchOrder, Pick, Take } from '../../../server/contracts/bench.ts';
 import type { PackPart } from '../../../server/contracts/packs.ts';
 import type { DrawablePart } from '../../ui/part-drawing.tsx';
 
-export type Stage = 'unclaimed' | 'elsewhere' | 'walk' | 'bag' | 'ship' | 'shipped';
+export type Stage = 'unclaimed' | 'elsewhere' | 'walk' | 'tune' | 'bag' | 'ship' | 'shipped';
 
 export function isTaken(pick: Pick): boolean {
   return pick.picked >= pick.quantity;
@@ -14,7 +14,50 @@ export function stageOf(order: BenchOrder): Stage {
   if (order.claimedBy === null || order.status === 'paid') return 'unclaimed';
   if (!order.mine) return 'elsewhere';
   if (order.status === 'packed') return 'ship';
-  return order.picks.every(isTaken) ? 'bag' : 'walk';
+  if (walkablePicks(order).some((pick) => !isTaken(pick))) return 'walk';
+  return nextKit(order) === null ? 'bag' : 'tune';
+}
+
+type Line = BenchOrder['lines'][number];
+
+/** One kit under the meter. */
+export interface Kit {
+  line: Line;
+  unit: number;
+}
+
+/** The first kit that still has to be tuned; null when there is none. */
+export function nextKit(order: BenchOrder): Kit | null {
+  for (const line of order.lines) {
+    const open = line.tuning?.units.find((kit) => kit.farads === null);
+    if (open !== undefined) return { line, unit: open.unit };
+  }
+  return null;
+}
+
+export function isTimingRole(role: string): boolean {
+  return ['R4', 'R4A', 'R4B'].includes(role);
+}
+
+/** The stops to make now: which R4 to take shows only when the capacitors are measured. */
+export function walkablePicks(order: BenchOrder): Pick[] {
+  if (nextKit(order) === null) return order.picks;
+  return order.picks.filter(({ roles }) => roles.length === 0 || !roles.every(isTimingRole));
+}
+
+/** What the tray holds once these parts are taken, stop by stop. */
+export function picksWith(
+  order: BenchOrder,
+  parts: readonly Take[],
+): { id: string; quantity: number }[] {
+  const more = new Map<Pick, number>();
+  for (const part of parts) {
+    const stop = order.picks.find(
+      (pick) => pick.sku === part.sku && pick.picked + (more.get(pick) ?? 0) < pick.quantity,
+    );
+    if (stop !== undefined) more.set(stop, (more.get(stop) ?? 0) + 1);
+  }
+  return [...more].map(([pick, pieces]) => ({ id: pick.id, quantity: pick.picked + pieces }));
 }
 
 /** The next stop to make: the first open one after the given stop, then from the start again. */
@@ -70,7 +113,12 @@ export function readScan(text: string, stop: Pick, picks: readonly Pick[]): Scan
 /** The pick with what the lines know of its looks. */
 export function drawableOf(pick: Pick, lines: BenchOrder['lines']): DrawablePart {
   const looks: PackPart | undefined = lines
-    .flatMap((line) => line.parts)
+    .flatMap((line) => [...line.parts, ...takenParts(line)])
     .find((part) => part.sku === pick.sku);
   return { ...looks, kind: pick.kind, marking: pick.marking };
+}
+
+/** The timing parts of the kits of a line that are tuned. */
+function takenParts({ tuning }: Line): Take[] {
+  return tuning?.units.flatMap((kit) => (kit.farads === null ? [] : kit.take)) ?? [];
 }

@@ -8,8 +8,12 @@ import {
 } from '@tanstack/react-query';
 import type { QueryClient } from '@tanstack/react-query';
 import { useRef } from 'react';
-import { benchOrderSchema } from '../../../../server/contracts/bench.ts';
-import type { BenchOrder, ShipRequest } from '../../../../server/contracts/bench.ts';
+import { benchOrderSchema, readingResponseSchema } from '../../../../server/contracts/bench.ts';
+import type {
+  BenchOrder,
+  ReadingRequest,
+  ShipRequest,
+} from '../../../../server/contracts/bench.ts';
 import { newIdempotencyKey, request } from '../../../lib/http.ts';
 import type { RequestOptions } from '../../../lib/http.ts';
 import { ConnectionError, isProblem } from '../../../lib/problem-error.ts';
@@ -20,12 +24,16 @@ const refreshMs = 15_000;
 const retryMs = 2000;
 const retriesOfAPick = 30;
 const retriesOfAParcel = 5;
+const retriesOfAReading = 5;
 
 export type Move = 'claim' | 'release' | 'pack';
 
+function addressOf(ref: string, rest: string): string {
+  return `/api/bench/orders/${encodeURIComponent(ref)}${rest}`;
+}
+
 function call(ref: string, rest: string, options: RequestOptions = {}) {
-  const path = `/api/bench/orders/${encodeURIComponent(ref)}${rest}`;
-  return request(benchOrderSchema, path, options);
+  return request(benchOrderSchema, addressOf(ref, rest), options);
 }
 
 function benchOrderOptions(ref: string) {
@@ -110,6 +118,24 @@ export function useHeldPicks(ref: string): number {
     select: (mutation) => mutation.state.failureCount,
   });
   return failures.some((count) => count > 0) ? failures.length : 0;
+}
+
+/** Sends a capacitor's reading; the answer says which R4 to take, and holds the order as it is then. */
+export function useReading(ref: string) {
+  const client = useQueryClient();
+  return useMutation({
+    scope: { id: `bench-${ref}` },
+    networkMode: 'always',
+    retry: (failures, error) => failures < retriesOfAReading && isWorthRepeating(error),
+    retryDelay: retryMs,
+    mutationFn: ({ key, ...body }: ReadingRequest & { key: string }) =>
+      request(readingResponseSchema, addressOf(ref, '/readings'), {
+        method: 'POST',
+        body,
+        idempotencyKey: key,
+      }),
+    onSuccess: ({ order }) => keep(client, order),
+  });
 }
 
 /** Sends the parcel on its way, under one key for one parcel as it is written down. */

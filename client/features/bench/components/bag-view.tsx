@@ -6,6 +6,8 @@ import { Notice } from '../../../ui/notice.tsx';
 import { PartsTable } from '../../../ui/parts-table.tsx';
 import { useFocusOnArrival } from '../use-focus-on-arrival.ts';
 import { useMove } from '../api/bench-order.ts';
+import { isTimingRole } from '../walk.ts';
+import { KitsOfLine } from './tuned-kits.tsx';
 
 /** All is in the tray: what goes into each bag, what must be printed on it, and closing it. */
 export function BagView({ order }: { order: BenchOrder }) {
@@ -55,6 +57,8 @@ export function BagView({ order }: { order: BenchOrder }) {
 
 function BagContents(props: { line: BenchOrder['lines'][number]; orderRef: string }) {
   const { line } = props;
+  const isTuned = line.tuning !== null;
+  const parts = isTuned ? line.parts.filter(({ role }) => !isTimingRole(role)) : line.parts;
   return (
     <div className="border-t-2 border-ink pt-3">
       <p className="hidden text-title font-heavy print:block">{props.orderRef}</p>
@@ -65,8 +69,9 @@ function BagContents(props: { line: BenchOrder['lines'][number]; orderRef: strin
         </p>
       </div>
       <div className="mt-2">
-        <PartsTable parts={line.parts} caption={`Parts in each bag of ${props.orderRef}`} />
+        <PartsTable parts={parts} caption={`Parts in each bag of ${props.orderRef}`} />
       </div>
+      {isTuned && <KitsOfLine line={line} />}
       {line.cautions.length > 0 && (
         <Notice tone="caution" className="mt-4" title="Printed on the bag">
           <ul className="space-y-1">

@@ -73,6 +73,7 @@ function Stage({ order }: { order: BenchOrder }) {
     case 'elsewhere':
       return <ClaimView order={order} />;
     case 'walk':
+    case 'tune':
     case 'bag':
       return <WalkView order={order} bag={<BagView order={order} />} />;
     case 'ship':

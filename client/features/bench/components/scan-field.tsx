@@ -1,31 +1,7 @@
 import { clsx } from 'clsx';
-import { useEffect, useId, useRef, useState } from 'react';
-import type { RefObject } from 'react';
-
-/** A key that a scanner sends, wherever the focus is, belongs into the field. */
-function isForTheField(event: KeyboardEvent): boolean {
-  if (event.ctrlKey || event.metaKey || event.altKey || event.isComposing) return false;
-  if (!/^[a-z0-9-]$/i.test(event.key)) return false;
-  const { target } = event;
-  return !(target instanceof HTMLElement) || target.closest('input, textarea, select') === null;
-}
-
-function useAlwaysFocused(): RefObject<HTMLInputElement | null> {
-  const field = useRef<HTMLInputElement>(null);
-  useEffect(() => {
-    // After the frame: a page that was just arrived at gives the focus to its main part first.
-    const frame = requestAnimationFrame(() => field.current?.focus({ preventScroll: true }));
-    const catchKey = (event: KeyboardEvent) => {
-      if (isForTheField(event)) field.current?.focus({ preventScroll: true });
-    };
-    document.addEventListener('keydown', catchKey);
-    return () => {
-      cancelAnimationFrame(frame);
-      document.removeEventListener('keydown', catchKey);
-    };
-  }, []);
-  return field;
-}
+import { useId, useState } from 'react';
+import { useAlwaysFocused } from '../use-always-focused.ts';
+import { WrongSign } from './wrong-sign.tsx';
 
 /** A code that was not taken: another part's, or one that does not say enough. */
 export interface Refused {
@@ -98,18 +74,5 @@ export function ScanField(props: {
         </p>
       )}
     </form>
-  );
-}
-
-function WrongSign() {
-  return (
-    <svg aria-hidden="true" viewBox="0 0 20 20" className="mt-1 size-5 shrink-0">
-      <path
-        d="M3 3L17 17M17 3L3 17"
-        className="stroke-brick"
-        strokeWidth="4"
-        strokeLinecap="round"
-      />
-    </svg>
   );
 }

@@ -11,10 +11,14 @@ import type { Refused } from './scan-field.tsx';
 
 const largeClass = 'min-h-20 text-title max-sm:w-full sm:min-w-88';
 
+const lastWords = { meter: 'Took it, on to the meter', bag: 'Took it, close the bag' };
+
 export interface StopViewProps {
   stop: Pick;
   order: BenchOrder;
   next: Pick | null;
+  /** What follows the last stop. */
+  after: 'meter' | 'bag';
   undo: Pick | null;
   onTake: () => void;
   onPutBack: (stop: Pick) => void;
@@ -46,7 +50,7 @@ export function StopView(props: StopViewProps) {
         {done ? (
           <>
             <Button size="bench" className={largeClass} onClick={props.onGoOn}>
-              {props.next === null ? 'On to the bag' : `On to ${props.next.bin}`}
+              {props.next === null ? `On to the ${props.after}` : `On to ${props.next.bin}`}
             </Button>
             <Button
               size="bench"
@@ -59,7 +63,7 @@ export function StopView(props: StopViewProps) {
           </>
         ) : (
           <Button size="bench" className={largeClass} onClick={props.onTake}>
-            {props.next === null ? 'Took it, close the bag' : 'Took it, next stop'}
+            {props.next === null ? lastWords[props.after] : 'Took it, next stop'}
           </Button>
         )}
         {props.undo !== null && <Undo stop={props.undo} onUndo={props.onPutBack} />}

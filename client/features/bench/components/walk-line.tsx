@@ -13,18 +13,21 @@ export interface WalkLineProps {
   current: string | null;
   /** The last stop of every walk: the bench itself, where the bag is closed and sent. */
   end: 'ahead' | 'bag' | 'ship' | 'done';
+  /** Where the meter stands in the walk; left out where no kit is tuned. */
+  tune?: State | undefined;
+  onTune?: () => void;
   onChoose?: (id: string) => void;
 }
 
 /** The walk as a vertical line: what is done, where one stands, what is to come. */
-export function WalkLine({ picks, current, end, onChoose }: WalkLineProps) {
+export function WalkLine({ picks, current, end, tune, onTune, onChoose }: WalkLineProps) {
   const list = useRef<HTMLOListElement>(null);
   useEffect(() => {
     const stop = list.current?.querySelector<HTMLElement>('[aria-current]');
     const frame = list.current?.parentElement;
     if (!stop || !frame) return;
     frame.scrollTo({ top: stop.offsetTop - (frame.clientHeight - stop.offsetHeight) / 2 });
-  }, [current, end]);
+  }, [current, end, tune]);
   const bagState: State = end === 'bag' ? 'now' : end === 'ahead' ? 'ahead' : 'done';
   const shipState: State = end === 'ship' ? 'now' : end === 'done' ? 'done' : 'ahead';
   return (
@@ -42,6 +45,15 @@ export function WalkLine({ picks, current, end, onChoose }: WalkLineProps) {
           />
         );
       })}
+      {tune !== undefined && (
+        <Stop
+          state={tune}
+          head="Tune"
+          words="measure C1, take R4"
+          isTaken={tune === 'done'}
+          onChoose={onTune}
+        />
+      )}
       <Stop state={bagState} head="Bag" words="contents, label" isTaken={bagState === 'done'} />
       <Stop
         state={shipState}
