@@ -23,7 +23,13 @@ export default defineConfig({
   server: {
     // The style sheets and marks live beside the client's own folder.
     fs: { allow: [root] },
-    proxy: { '/api': process.env.TOCKWELL_API_URL ?? 'http://127.0.0.1:4311' },
+    // The host stays as the page named it: the server takes changes from its own origin only.
+    proxy: {
+      '/api': {
+        target: process.env.TOCKWELL_API_URL ?? 'http://127.0.0.1:4311',
+        changeOrigin: false,
+      },
+    },
   },
   test: {
     root,
