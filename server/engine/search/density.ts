@@ -257,3 +257,24 @@ function at({ start, step, once, twice, thrice }: Integrals, table: Float64Array
   if (table === twice) return twice[whole]! + rest * (once[whole]! + (rest * level) / 2);
   return thrice[whole]! + rest * (twice[whole]! + (rest / 2) * (once[whole]! + (rest * level) / 3));
 }
+
+/**
+ * Distribution function at `value` of a density plus −`power`·ln(1 + t·u), u uniform in −1…1: what a
+ * part of tolerance t does that the rate goes with the −`power` of. Where `distributionWith` takes
+ * ln(1 + t·u) as uniform, this counts its density, which rises as 1 + x, to first order: the rest is
+ * t³/6.
+ */
+export function distributionWithPart(
+  of: Integrals,
+  value: number,
+  t: number,
+  power: number,
+): number {
+  const [low, high] = [Math.log1p(-t), Math.log1p(t)];
+  const upTo = (x: number) => {
+    const z = power * x;
+    const twice = at(of, of.twice, value + z);
+    return twice / power + (z * twice - at(of, of.thrice, value + z)) / power ** 2;
+  };
+  return (upTo(high) - upTo(low)) / (high - low + (high ** 2 - low ** 2) / 2);
+}

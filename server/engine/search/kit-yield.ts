@@ -3,6 +3,7 @@ import type { Candidate, SteeredTimingParts, TrimmedTimingParts } from './candid
 import {
   densityOfSum,
   distributionWith,
+  distributionWithPart,
   integrals,
   rangeOf,
   type Effect,
@@ -132,6 +133,15 @@ export function shareWithin(
   return shareBetween(parts, lower, upper, halves);
 }
 
+/** A tolerance from which it counts that ln(1 + t·u) is not quite uniform. */
+const skewedFrom = 0.02;
+
+/** What a wide part's skew adds to a distribution that takes it as uniform. */
+function skewOf(of: Integrals, value: number, tolerance: number, power: number): number {
+  const uniform = distributionWith(of, value - (power * tolerance ** 2) / 6, power * tolerance, 0);
+  return distributionWithPart(of, value, tolerance, power) - uniform;
+}
+
 /** Share of a spread's kits between two values of ln of the rate, with timing parts of these halves. */
 export function shareBetween(
   parts: readonly SpreadPart[],
@@ -144,9 +154,12 @@ export function shareBetween(
     // ln(1 + t·u) lies t²/6 below zero in the mean.
     const mean = -(sensitivity * (first ** 2 + second ** 2)) / 6;
     const [a, b] = [-sensitivity * first, -sensitivity * second];
-    share +=
-      weight *
-      (distributionWith(of, upper - mean, a, b) - distributionWith(of, lower - mean, a, b));
+    const wider = Math.max(first, second);
+    const below = (value: number) => {
+      const plain = distributionWith(of, value - mean, a, b);
+      return wider < skewedFrom ? plain : plain + skewOf(of, value, wider, -sensitivity);
+    };
+    share += weight * (below(upper) - below(lower));
   }
   return Math.min(1, Math.max(0, share));
 }
