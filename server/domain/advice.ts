@@ -192,14 +192,25 @@ function adviseOnWide(
   };
   const mounting = brief.mounting === 'through-hole' ? 'surface-mount' : 'through-hole';
   return [
-    ...strongerCare(brief.careLevel).flatMap((careLevel) =>
-      consider('care-level', careWords[careLevel]!, { careLevel }),
-    ),
+    ...adviseOnStrongerCare(brief, consider),
     ...consider('mounting', `With ${mounting} parts`, { mounting }),
     ...adviseOnAmbient(brief, consider),
     ...(brief.quantity > 1 ? consider('quantity', 'For a single kit', { quantity: 1 }) : []),
     ...adviseOnBand(now),
   ];
+}
+
+type Consider = (code: string, what: string, change: Partial<ResolvedBrief>) => Advice[];
+
+/** Stronger care levels up to the first with which every kit holds the band; more care costs more. */
+function adviseOnStrongerCare(brief: ResolvedBrief, consider: Consider): Advice[] {
+  const advice: Advice[] = [];
+  for (const careLevel of strongerCare(brief.careLevel)) {
+    const found = consider('care-level', careWords[careLevel]!, { careLevel });
+    advice.push(...found);
+    if (found.some(({ worseEnd: end }) => end !== null && end <= brief.band)) break;
+  }
+  return advice;
 }
 
 const careOrder: readonly CareLevel[] = [
@@ -215,10 +226,7 @@ function strongerCare(careLevel: CareLevel): CareLevel[] {
 
 const roomCelsius = { minCelsius: 15, maxCelsius: 30 };
 
-function adviseOnAmbient(
-  { ambient }: ResolvedBrief,
-  consider: (code: string, what: string, change: Partial<ResolvedBrief>) => Advice[],
-): Advice[] {
+function adviseOnAmbient({ ambient }: ResolvedBrief, consider: Consider): Advice[] {
   const narrower = {
     minCelsius: Math.max(ambient.minCelsius, roomCelsius.minCelsius),
     maxCelsius: Math.min(ambient.maxCelsius, roomCelsius.maxCelsius),

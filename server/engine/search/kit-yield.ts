@@ -36,8 +36,11 @@ export interface KitYield {
   yieldStandardError: number;
 }
 
-/** Largest difference seen against a hundred thousand kits by the full model, as a share. */
-const methodError = 1e-3;
+/**
+ * Standard error of the method, as a share: against a hundred thousand kits by the full model most
+ * packs are within 1e-3, the worst seen, with a wide R4 on much input bias, was off by 5e-3.
+ */
+const methodError = 2e-3;
 
 /** How the kits of a frame differ before its timing parts are chosen; see `frameEffects`. */
 export interface FrameSpread {
@@ -168,7 +171,7 @@ export function shareBetween(
  * Share of kits that stay within ± band of the target over the whole ambient range and from the
  * lowest to the highest supply: the distribution of the sum of all effects between the band's limits
  * less what the conditions add. Effects count as independent and as adding up in ln of the rate,
- * which holds to 1e-3 of the share (`npm run bench` shows it against the full model). Exactly 1 where
+ * which holds to about 2e-3 of the share (`npm run bench` shows it against the full model). Exactly 1 where
  * the guaranteed band lies inside the asked one, 0 where a kit may stop.
  */
 export function kitYield(
