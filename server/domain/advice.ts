@@ -1,7 +1,8 @@
 import type { CareLevel, ResolvedBrief } from '../contracts/brief.ts';
 import type { Advice } from '../contracts/packs.ts';
 import { valueYield } from '../engine/search/best-value.ts';
-import type { FoundPacks, RankedPack } from '../engine/search/find-packs.ts';
+import type { FoundPacks } from '../engine/search/find-packs.ts';
+import type { RankedPack } from '../engine/search/promise.ts';
 import { worseEnd } from '../engine/search/guaranteed-band.ts';
 import { limits } from '../engine/search/rules.ts';
 import { celsiusRange, percent, plusMinus, rateWords, targetHertz } from './wording.ts';

@@ -1,6 +1,7 @@
 import { aimFrame, framePeriod, type Frame } from '../engine/search/aim.ts';
 import type { Candidate, TimingParts } from '../engine/search/candidate.ts';
 import { completeHead } from '../engine/search/heads.ts';
+import { joinedOhms } from '../engine/search/resistor-values.ts';
 import { buffersLoad } from '../engine/search/rules.ts';
 import type { SearchBrief, StockedCapacitor, StockedResistor } from '../engine/search/shelf.ts';
 import { steeredCycle, steeredValues } from '../engine/search/steered.ts';
@@ -105,10 +106,7 @@ function timingOf(
   }
   const second = resistorOf(parts, ids.R4B);
   if (second === null) return { kind: 'single', ohms: first.ohms, first, second, join: null };
-  const ohms =
-    join === 'parallel'
-      ? (first.ohms * second.ohms) / (first.ohms + second.ohms)
-      : first.ohms + second.ohms;
+  const ohms = joinedOhms(first.ohms, second.ohms, join === 'parallel');
   return { kind: 'single', ohms, first, second, join: join ?? 'series' };
 }
 

@@ -1,6 +1,6 @@
 import type { PackRole } from '../contracts/packs.ts';
 import type { TimingParts } from '../engine/search/candidate.ts';
-import type { RankedPack } from '../engine/search/find-packs.ts';
+import type { RankedPack } from '../engine/search/promise.ts';
 import type { BriefInHand } from './brief.ts';
 import { partsOf, type CataloguePart, type PartOf } from './catalogue.ts';
 import type { PartDemand } from './stock.ts';

@@ -1,4 +1,4 @@
-import type { RankedPack } from '../engine/search/find-packs.ts';
+import type { RankedPack } from '../engine/search/promise.ts';
 import { limits } from '../engine/search/rules.ts';
 import type { SearchBrief } from '../engine/search/shelf.ts';
 import { formatFarads, formatOhms } from '../engine/si-format.ts';

@@ -2,7 +2,7 @@ import type { PackPromise } from '../contracts/packs.ts';
 import type { ResolvedBrief } from '../contracts/brief.ts';
 import { averageSupplyAmps } from '../engine/supply-current.ts';
 import { analyseCycle } from '../engine/cycle.ts';
-import type { RankedPack } from '../engine/search/find-packs.ts';
+import type { RankedPack } from '../engine/search/promise.ts';
 import { formatSi } from '../engine/si-format.ts';
 import { figuresFor, percent, plusMinus, rateWords, significant } from './wording.ts';
 

@@ -13,7 +13,7 @@ import { packNotes, whyTopology } from '../domain/pack-notes.ts';
 import { makeableKits } from '../domain/stock.ts';
 import { analyseCycle } from '../engine/cycle.ts';
 import { pulseStrip } from '../engine/pulse-strip.ts';
-import { promise, type RankedPack } from '../engine/search/find-packs.ts';
+import { promise, type RankedPack } from '../engine/search/promise.ts';
 import type { CareLevel, ParsedBrief } from '../contracts/brief.ts';
 import { homeTerms, type ShopSettings } from '../store/settings.ts';
 import type { Deps, Signer } from '../ports.ts';

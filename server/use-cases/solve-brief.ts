@@ -8,12 +8,8 @@ import {
   missingAccessory,
   type Accessories,
 } from '../domain/pack-choice.ts';
-import {
-  findPacks,
-  findSteadiestPack,
-  type FoundPacks,
-  type RankedPack,
-} from '../engine/search/find-packs.ts';
+import { findPacks, findSteadiestPack, type FoundPacks } from '../engine/search/find-packs.ts';
+import type { RankedPack } from '../engine/search/promise.ts';
 import type { Deps, Signer } from '../ports.ts';
 import { assess, openPackBook, type PackBook } from './pack-book.ts';
 import { Refusal } from './refusal.ts';

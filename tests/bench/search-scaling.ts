@@ -4,29 +4,14 @@ import { findPacks } from '../../server/engine/search/find-packs.ts';
 import { headsFor, type Head } from '../../server/engine/search/heads.ts';
 import { prepareShelf, type PreparedShelf } from '../../server/engine/search/prepared-shelf.ts';
 import { capacitorSuits } from '../../server/engine/search/rules.ts';
-import type { SearchBrief } from '../../server/engine/search/shelf.ts';
 import { isMakeable, listOffers } from '../../server/engine/search/timing-choice.ts';
+import { briefAt } from '../engine/search/workshop-shelf.ts';
 import { largeShelf } from './large-shelf.ts';
 import { printTable, quantile, timed } from './tables.ts';
 
 const limitsMs: Record<number, number> = { 10_000: 50, 50_000: 250 };
 
-function clockBrief(targetHz: number): SearchBrief {
-  return {
-    targetHz,
-    duty: 0.5,
-    supplyVolts: 5,
-    minSupplyVolts: 4.75,
-    maxSupplyVolts: 5.25,
-    band: 0.05,
-    minCelsius: 0,
-    maxCelsius: 40,
-    quantity: 1,
-    load: null,
-    care: 'as-stocked',
-    meterUncertainty: 0.0025,
-  };
-}
+const clockBrief = (targetHz: number) => briefAt(targetHz, { meterUncertainty: 0.0025 });
 
 /** Counts how often a head's circuit is evaluated, by a field that every evaluation reads once. */
 function countEvaluations(heads: readonly Head[]): () => number {

@@ -5,7 +5,8 @@ import type { CataloguePart } from '../../server/domain/catalogue.ts';
 import { choiceOf, chooseAccessories, type PackChoice } from '../../server/domain/pack-choice.ts';
 import { inBillOrder, toPackPart } from '../../server/domain/pack-parts.ts';
 import { shelfOf } from '../../server/domain/shelf.ts';
-import { findPacks, type Rank, type RankedPack } from '../../server/engine/search/find-packs.ts';
+import { findPacks } from '../../server/engine/search/find-packs.ts';
+import type { Rank, RankedPack } from '../../server/engine/search/promise.ts';
 import { prepareShelf } from '../../server/engine/search/prepared-shelf.ts';
 import {
   battery,

@@ -9,7 +9,7 @@ import {
 } from '../../server/domain/order-mail.ts';
 import { promiseOf } from '../../server/domain/promise.ts';
 import { causesSentence } from '../../server/domain/spread-causes.ts';
-import type { RankedPack } from '../../server/engine/search/find-packs.ts';
+import type { RankedPack } from '../../server/engine/search/promise.ts';
 import { spreadCauses } from '../../server/engine/search/kit-causes.ts';
 import { blinker, find, rolesOf } from './found-packs.ts';
 import { board, capacitor, comparator, diode, resistor, trimmer } from './sample-catalogue.ts';

@@ -1,7 +1,8 @@
 import { solveRequestSchema, type SolveRequestInput } from '../../server/contracts/brief.ts';
 import { resolveBrief } from '../../server/domain/brief.ts';
 import type { CataloguePart } from '../../server/domain/catalogue.ts';
-import { findPacks, type RankedPack } from '../../server/engine/search/find-packs.ts';
+import { findPacks } from '../../server/engine/search/find-packs.ts';
+import type { RankedPack } from '../../server/engine/search/promise.ts';
 import type { PreparedShelf } from '../../server/engine/search/prepared-shelf.ts';
 import type { SearchBrief } from '../../server/engine/search/shelf.ts';
 import type { ShopSettings } from '../../server/store/settings.ts';

@@ -1,6 +1,6 @@
 import { createCircuit, type Circuit } from '../../server/engine/circuit.ts';
 import { createNormal } from '../../server/engine/random.ts';
-import type { RankedPack } from '../../server/engine/search/find-packs.ts';
+import type { RankedPack } from '../../server/engine/search/promise.ts';
 import type { PreparedShelf } from '../../server/engine/search/prepared-shelf.ts';
 import type {
   SearchBrief,

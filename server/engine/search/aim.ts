@@ -14,6 +14,16 @@ export function insulationSiemens({ insulationSeconds, farads }: StockedCapacito
   return insulationSeconds === null ? 0 : farads / insulationSeconds;
 }
 
+/** The capacitor as the circuit has it: its middle value, or `farads`, with its leakage. */
+export function circuitCapacitor(part: StockedCapacitor, farads: number = part.farads) {
+  const siemens = insulationSiemens(part);
+  return {
+    farads,
+    leakageOhms: siemens > 0 ? 1 / siemens : null,
+    leakageAmps: part.leakageAmps,
+  };
+}
+
 /** Nominal period in seconds of a frame with a timing resistance; NaN when it does not oscillate. */
 export function framePeriod({ head, capacitor }: Frame, timingOhms: number): number {
   return periodWith(

@@ -5,12 +5,11 @@ import { formCandidate, type AimedFrame } from './closest.ts';
 import { densityOfSum, distributionWith, integrals, momentsOf, type Integrals } from './density.ts';
 import { guaranteedBand } from './guaranteed-band.ts';
 import {
-  conditionShifts,
   frameEffects,
+  frameMoves,
   shiftRange,
   timingCoefficient,
-  timingSensitivity,
-  type ConditionShift,
+  type FrameMoves,
   type KitEffect,
 } from './kit-effects.ts';
 import {
@@ -24,7 +23,8 @@ import {
 import type { PreparedShelf } from './prepared-shelf.ts';
 import { firstNotBelow } from './resistor-values.ts';
 import type { SearchBrief } from './shelf.ts';
-import { chosenParts, visitChoices, type SingleTimingParts } from './timing-choice.ts';
+import { keptWith } from './kept-with.ts';
+import { chosenParts, visitChoices, type Offers, type SingleTimingParts } from './timing-choice.ts';
 import { firstShare, leastTolerance } from './least-tolerance.ts';
 import { kindsNear, type TimingKind } from './timing-kinds.ts';
 
@@ -57,12 +57,11 @@ export function findBestValue(
   for (const frame of queue) {
     if (best !== null && frame.priceMinor + cheapest > best.priceMinor) break;
     if (hopeless(frame)) continue;
-    const effects = frameEffects(frame, frame.idealOhms, brief);
+    const moves = frameMoves(frame, frame.idealOhms, brief);
     const kinds = kindsNear(shelf.values, frame.stock.offers, frame.idealOhms);
-    const shifts = conditionShifts(frame, frame.idealOhms, brief);
-    const window = widestWindow(shifts, timingSensitivity(frame, frame.idealOhms), kinds, brief);
-    if (isTooWide(effects, window.upper - window.lower)) continue;
-    const spread = frameSpread(frame, frame.idealOhms, brief, effects);
+    const window = widestWindow(moves, kinds, brief);
+    if (isTooWide(moves.effects, window.upper - window.lower)) continue;
+    const spread = frameSpread(frame, frame.idealOhms, brief, moves);
     const tightest = kinds.reduce((least, kind) => Math.min(least, kind.tolerance), 1);
     const promising = promisingOffsets(spread, window, tightest * mixing);
     if (promising === null) continue;
@@ -115,7 +114,7 @@ export function rememberHopeless(
       const effects = frameEffects(frame, frame.idealOhms, brief)
         .filter(({ cause }) => cause === 'capacitor' || cause === 'thresholds')
         .map(({ effect }) => effect);
-      const most = mostWithin(integrals(densityOfSum(effects)), bandWidth(brief), 0);
+      const most = mostWithin(integrals(densityOfSum(effects)), bandWidth(brief));
       answer = most < valueYield - yieldSlack;
       known.set(key, answer);
     }
@@ -131,11 +130,10 @@ export function mayHold(
   { frame, timing }: Candidate<SingleTimingParts>,
   brief: SearchBrief,
 ): boolean {
-  const effects = frameEffects(frame, timing.ohms, brief);
-  const shifts = conditionShifts(frame, timing.ohms, brief);
+  const moves = frameMoves(frame, timing.ohms, brief);
   const kind = { tolerance: 0, coefficientPerKelvin: timingCoefficient(timing) };
-  const window = widestWindow(shifts, timingSensitivity(frame, timing.ohms), [kind], brief);
-  return window.upper > window.lower && !isTooWide(effects, window.upper - window.lower);
+  const window = widestWindow(moves, [kind], brief);
+  return window.upper > window.lower && !isTooWide(moves.effects, window.upper - window.lower);
 }
 
 /** Width of the asked band in ln of the rate. */
@@ -151,8 +149,7 @@ interface Window {
 
 /** The widest window that a timing resistor of any kind leaves; each end by the kind that suits it. */
 function widestWindow(
-  shifts: readonly ConditionShift[],
-  sensitivity: number,
+  { shifts, sensitivity }: FrameMoves,
   kinds: readonly TimingKind[],
   brief: SearchBrief,
 ): Window {
@@ -192,12 +189,12 @@ function promisingOffsets(
 /** The scan's steps are so wide that the best place may hold this much more than the best step. */
 const scanSlack = 0.01;
 
-/** The most that a window of a width can hold, wherever it lies, with one more uniform cause of ±`half`. */
-function mostWithin(of: Integrals, width: number, half: number): number {
+/** The most that a window of a width can hold, wherever it lies. */
+function mostWithin(of: Integrals, width: number): number {
   let best = 0;
   for (let k = 0; k < of.once.length; k += windowStep) {
     const to = of.start + k * of.step;
-    const share = distributionWith(of, to, half, 0) - distributionWith(of, to - width, half, 0);
+    const share = distributionWith(of, to, 0, 0) - distributionWith(of, to - width, 0, 0);
     if (share > best) best = share;
   }
   return best;
@@ -219,10 +216,10 @@ function cheapestOfFrame(
   let best = before;
   const { stock, head, idealOhms } = frame;
   const { table } = stock;
-  const leastPrices = cheapestOffers(frame);
+  const prices = leastPrices(stock.offers);
   const visit = (k: number, offset: number) => {
     const secondAt = table.second[k]!;
-    const least = leastPrices[table.first[k]!]! + (secondAt < 0 ? 0 : leastPrices[secondAt]!);
+    const least = prices[table.first[k]!]! + (secondAt < 0 ? 0 : prices[secondAt]!);
     if (least === Number.POSITIVE_INFINITY) return;
     if (best !== null) {
       const room = best.priceMinor - frame.priceMinor - least;
@@ -264,17 +261,10 @@ function cheapestOfFrame(
   return best;
 }
 
-const knownPrices = new WeakMap<object, Float64Array>();
-
 /** The least price of each value's offers; ∞ for none. */
-function cheapestOffers({ stock: { offers } }: AimedFrame): Float64Array {
-  let prices = knownPrices.get(offers);
-  if (!prices) {
-    prices = Float64Array.from(offers, (parts) => parts[0]?.priceMinor ?? Number.POSITIVE_INFINITY);
-    knownPrices.set(offers, prices);
-  }
-  return prices;
-}
+const leastPrices = keptWith((offers: Offers) =>
+  Float64Array.from(offers, (parts) => parts[0]?.priceMinor ?? Number.POSITIVE_INFINITY),
+);
 
 /** Whether at least 99 % of a candidate's kits hold the band, as its promise says. */
 export function holdsBand(candidate: Candidate, brief: SearchBrief, shelf: PreparedShelf): boolean {

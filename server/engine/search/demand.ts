@@ -2,7 +2,8 @@ import type { StockedResistor } from './shelf.ts';
 
 /**
  * What a pack already takes of a few resistors before R4 is chosen: the three thresholds, a pull-up,
- * an LED resistor, the pair of idle sections. At most six entries, so a plain list is searched faster than a map.
+ * an LED resistor, the pair of idle sections. At most six entries, so a plain list is searched faster
+ * than a map.
  */
 export interface ResistorDemand {
   ids: number[];
@@ -21,6 +22,17 @@ export function demandOf(parts: readonly (StockedResistor | null)[]): ResistorDe
     } else demand.counts[at]! += 1;
   }
   return demand;
+}
+
+/** The same demand with one more piece of a part. */
+export function withOneMore(
+  { ids, counts }: ResistorDemand,
+  part: StockedResistor,
+): ResistorDemand {
+  const at = ids.indexOf(part.id);
+  return at < 0
+    ? { ids: [...ids, part.id], counts: [...counts, 1] }
+    : { ids, counts: counts.map((count, k) => (k === at ? count + 1 : count)) };
 }
 
 function taken(demand: ResistorDemand, id: number): number {

@@ -1,35 +1,17 @@
-import type { Circuit } from '../circuit.ts';
+import { findBestValue, valueYield } from './best-value.ts';
 import { byCloseness, byValue, isSamePack, type Candidate } from './candidate.ts';
-import { aimFrames, closestByCapacitor, type AimedFrame } from './closest.ts';
-import { findBestValue, holdsBand, mayHold, rememberHopeless, valueYield } from './best-value.ts';
-import { guaranteedBand, worseEnd, type GuaranteedBand } from './guaranteed-band.ts';
-import { headCircuit, headsFor } from './heads.ts';
-import { inOrder } from './in-order.ts';
-import { insulationSiemens } from './aim.ts';
-import { conditionShifts, shiftRange, timingCoefficient } from './kit-effects.ts';
-import { kitYield, type KitYield } from './kit-yield.ts';
+import { aimFrames, closestByCapacitor } from './closest.ts';
+import { fittedPacks, steadiestTrimmed } from './fitted-packs.ts';
+import { worseEnd } from './guaranteed-band.ts';
+import { headsFor } from './heads.ts';
+import { cheapestThatHolds, steadiestOf } from './listed-packs.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
-import { capacitorSuits, limits } from './rules.ts';
+import { promise, type Rank, type RankedPack } from './promise.ts';
+import { capacitorSuits } from './rules.ts';
 import type { SearchBrief, StockedCapacitor } from './shelf.ts';
-import { findSteadiest, quickBound, steadier, steadyOf, type Steady } from './steadiest.ts';
-import { steeredCircuit, steeredPacks, steeredValues, supplyReach } from './steered.ts';
-import { isEqualDuty } from './threshold-sets.ts';
+import { findSteadiest, type Steady } from './steadiest.ts';
+import { steeredPacks } from './steered.ts';
 import { listOffers } from './timing-choice.ts';
-import { settingError, trimmedPack } from './trimmed.ts';
-import { tunedClassOf } from './tuned-grid.ts';
-import { tunedPacks } from './tuned.ts';
-
-export type Rank = 'closest' | 'best-value' | 'steadiest';
-export type Topology = 'equal-thresholds' | 'shifted-thresholds' | 'steered';
-
-/** A candidate with its promise. */
-export interface RankedPack extends Candidate, KitYield {
-  circuit: Circuit;
-  guaranteed: GuaranteedBand;
-  topology: Topology;
-  /** The ranks for which this pack is the first of all. */
-  wins: Rank[];
-}
 
 /** What the search found, best first by the asked rank. */
 export interface FoundPacks {
@@ -94,48 +76,6 @@ export function findSteadiestPack(shelf: PreparedShelf, brief: SearchBrief): Ran
   return steadiest && { ...promise(steadiest.candidate, brief, shelf), wins: ['steadiest'] };
 }
 
-/** Trimmed packs of the steadiest frames differ by their settings alone; so many are looked at. */
-const trimmedLooked = 24;
-
-/**
- * A steady trimmed pack alone: of the frames that supply, drift and dielectric leave the least, the
- * steadiest of the first two dozen packs.
- */
-function steadiestTrimmed(
-  aimed: readonly AimedFrame[],
-  brief: SearchBrief,
-  shelf: PreparedShelf,
-): Steady | null {
-  const fixed = shelf.shelf.resistors.filter(
-    (part) => part.tolerance <= limits.thresholdTolerance * (1 + 1e-9),
-  );
-  const parts = [...fixed, ...shelf.shelf.trimmers];
-  const coefficients = [...new Set(parts.map((part) => part.temperatureCoefficientPerKelvin))];
-  const boundOf = (frame: AimedFrame) => {
-    const shifts = conditionShifts(frame, frame.idealOhms, brief);
-    // Set at 25 °C, a kit is as far off as it drifts to either side.
-    const ends = coefficients.map((coefficient) => {
-      const { up, down } = shiftRange(shifts, coefficient, -1);
-      return Math.max(up, -down);
-    });
-    return 0.85 * frame.capacitor.temperatureSpread + 0.95 * Math.min(...ends);
-  };
-  const queue = inOrder(
-    aimed.filter(({ reaches }) => reaches).map((frame) => ({ frame, bound: boundOf(frame) })),
-    ({ bound }) => bound,
-  );
-  let best: Steady | null = null;
-  let looked = 0;
-  for (const { frame, bound } of queue) {
-    if (best !== null && (bound > best.end || looked >= trimmedLooked)) break;
-    const pack = trimmedPack(frame, brief, shelf);
-    if (pack === null) continue;
-    looked += 1;
-    best = steadier(best, steadyOf(pack, brief, shelf));
-  }
-  return best;
-}
-
 /** Every frame of the shelf, aimed at the target. */
 function aimShelf(shelf: PreparedShelf, brief: SearchBrief) {
   const offers = listOffers(shelf.values, brief.quantity);
@@ -168,17 +108,6 @@ function cheapestAlike(capacitors: readonly StockedCapacitor[]): StockedCapacito
     }
   }
   return [...best.values()];
-}
-
-/** The packs of care levels that fit the timing to each kit; null for those that do not. */
-function fittedPacks(
-  aimed: readonly AimedFrame[],
-  brief: SearchBrief,
-  shelf: PreparedShelf,
-): Candidate[] | null {
-  if (brief.care === 'bench-tuned') return tunedPacks(aimed, brief, shelf);
-  if (brief.care !== 'trimmer-fitted') return null;
-  return aimed.flatMap((frame) => (frame.reaches ? (trimmedPack(frame, brief, shelf) ?? []) : []));
 }
 
 function searchPool(shelf: PreparedShelf, brief: SearchBrief): Pool {
@@ -214,70 +143,6 @@ function poolOf(
     steadiest: steadiestOf(others, steadiest, brief, shelf),
     considered,
   };
-}
-
-/** The cheapest of a list that holds the band and is cheaper than the best so far. */
-function cheapestThatHolds(
-  list: readonly Candidate[],
-  before: Candidate | null,
-  brief: SearchBrief,
-  shelf: PreparedShelf,
-): Candidate | null {
-  const hopeless = rememberHopeless(brief);
-  for (const candidate of [...list].sort(byValue)) {
-    if (before !== null && byValue(candidate, before) >= 0) return before;
-    if (candidate.distance > -Math.log1p(-brief.band)) continue;
-    const { frame, timing } = candidate;
-    if (timing.kind === 'single') {
-      if (hopeless({ ...frame, idealOhms: timing.ohms })) continue;
-      if (!mayHold({ ...candidate, timing }, brief)) continue;
-    }
-    if (holdsBand(candidate, brief, shelf)) return candidate;
-  }
-  return before;
-}
-
-function steadiestOf(
-  list: readonly Candidate[],
-  before: Steady | null,
-  brief: SearchBrief,
-  shelf: PreparedShelf,
-): Steady | null {
-  const queue = list
-    .map((candidate) => ({ candidate, bound: leastEnd(candidate, brief) }))
-    .sort((a, b) => a.bound - b.bound);
-  let best = before;
-  for (const { candidate, bound } of queue) {
-    if (best !== null && bound > best.end) break;
-    best = steadier(best, steadyOf(candidate, brief, shelf));
-  }
-  return best;
-}
-
-/** Less than the worse end of a candidate: its tolerances, and nearly all of its drift. */
-function leastEnd({ frame, timing }: Candidate, brief: SearchBrief): number {
-  const { capacitor } = frame;
-  if (timing.kind === 'steered') {
-    const least = Math.min(timing.charge.tolerance, timing.discharge.tolerance);
-    return joined(quickBound(frame, least), 0.9 * supplyReach(frame, timing, brief));
-  }
-  const plain = conditionShifts(frame, timing.ohms, brief);
-  const coefficient =
-    timing.kind === 'single'
-      ? timingCoefficient(timing)
-      : timing.fixed.temperatureCoefficientPerKelvin;
-  const { up, down } = shiftRange(plain, coefficient, -1);
-  if (timing.kind === 'trimmed') {
-    return 0.85 * (capacitor.temperatureSpread + settingError(timing.ohms, timing.trimmer));
-  }
-  const measured = { ...frame, capacitor: { ...capacitor, tolerance: brief.meterUncertainty } };
-  const least = Math.min(tunedClassOf(timing), timing.first.tolerance);
-  return joined(quickBound(measured, least), (0.9 * (up - down)) / 2);
-}
-
-/** The worse end of a band whose half-width in ln is that of `bound` and `half` together. */
-function joined(bound: number, half: number): number {
-  return Math.tanh(Math.atanh(Math.min(bound, 0.999)) + half);
 }
 
 /** The winner of the asked rank first, then the other winners, then varied packs by the asked rank. */
@@ -321,48 +186,4 @@ function orderFor(rank: Rank, brief: SearchBrief): (a: RankedPack, b: RankedPack
   return (a, b) =>
     holds(b) - holds(a) ||
     (holds(a) === 1 ? byValue(a, b) : b.yieldWithinBand - a.yieldWithinBand || byValue(a, b));
-}
-
-/** Adds the promise to a candidate: its nominal circuit, guaranteed band and yield. */
-export function promise(
-  candidate: Candidate,
-  brief: SearchBrief,
-  shelf: PreparedShelf,
-): RankedPack {
-  const guaranteed = guaranteedBand(candidate, brief, shelf);
-  return {
-    ...candidate,
-    ...kitYield(candidate, brief, shelf, guaranteed),
-    circuit: candidateCircuit(candidate, brief),
-    guaranteed,
-    topology: topologyOf(candidate, brief),
-    wins: [],
-  };
-}
-
-/** The nominal circuit of a candidate at 25 °C and the nominal supply. */
-export function candidateCircuit({ frame, timing }: Candidate, brief: SearchBrief): Circuit {
-  if (timing.kind === 'steered') {
-    return steeredCircuit(frame, timing.diode, steeredValues(timing, frame), brief);
-  }
-  const { head, capacitor } = frame;
-  const circuit = headCircuit(head, brief);
-  const siemens = insulationSiemens(capacitor);
-  return {
-    ...circuit,
-    timing: { kind: 'single', ohms: timing.ohms },
-    capacitor: {
-      ...circuit.capacitor,
-      farads: capacitor.farads,
-      leakageOhms: siemens > 0 ? 1 / siemens : null,
-      leakageAmps: capacitor.leakageAmps,
-    },
-  };
-}
-
-function topologyOf({ timing, frame }: Candidate, brief: SearchBrief): Topology {
-  if (timing.kind === 'steered') return 'steered';
-  const { r1, r2, r3 } = frame.head.thresholds;
-  const equal = r1.id === r2.id && r2.id === r3.id;
-  return equal && isEqualDuty(brief.duty) ? 'equal-thresholds' : 'shifted-thresholds';
 }

@@ -2,6 +2,7 @@ import type { Frame } from './aim.ts';
 import type { Candidate } from './candidate.ts';
 import { atCorner, capacitanceAt, extremeRate, headCorners, type Corner } from './head-corners.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
+import { joinedOhms } from './resistor-values.ts';
 import type { SearchBrief } from './shelf.ts';
 import { steeredBand } from './steered-band.ts';
 import type { SingleTimingParts } from './timing-choice.ts';
@@ -39,12 +40,14 @@ export function guaranteedBand(
 }
 
 /** Timing resistance at its corner, in ohms; two parts keep their own tolerances and coefficients. */
-export function timingAt(timing: SingleTimingParts, sign: number, celsius: number): number {
-  const { first, second, join } = timing;
+export function timingAt(
+  { first, second, join }: Pick<SingleTimingParts, 'first' | 'second' | 'join'>,
+  sign: number,
+  celsius: number,
+): number {
   const a = atCorner(first.ohms, first, sign, celsius);
   if (second === null) return a;
-  const b = atCorner(second.ohms, second, sign, celsius);
-  return join === 'parallel' ? (a * b) / (a + b) : a + b;
+  return joinedOhms(a, atCorner(second.ohms, second, sign, celsius), join === 'parallel');
 }
 
 function singleBand(frame: Frame, timing: SingleTimingParts, brief: SearchBrief): GuaranteedBand {

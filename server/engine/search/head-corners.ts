@@ -1,5 +1,6 @@
 import { periodWith, type PreparedSingle } from '../prepared-single.ts';
 import { insulationSiemens } from './aim.ts';
+import { keptWith } from './kept-with.ts';
 import { cornerReducer, type Head, type HeadCorner } from './heads.ts';
 import { limits } from './rules.ts';
 import type { SearchBrief, StockedCapacitor } from './shelf.ts';
@@ -28,13 +29,21 @@ export function extremeCelsius({ minCelsius, maxCelsius }: SearchBrief): number[
   return [...new Set([minCelsius, middle, maxCelsius])];
 }
 
+/** The ends of the supply, once where it has but one. */
+export function supplyEnds({ minSupplyVolts, maxSupplyVolts }: SearchBrief): number[] {
+  return [...new Set([minSupplyVolts, maxSupplyVolts])];
+}
+
 /** What moves a part's value. */
 export interface Spreading {
   tolerance: number;
   temperatureCoefficientPerKelvin: number;
 }
 
-/** Value of a stocked part at a corner: its tolerance holds at 25 °C, and it drifts from there. */
+/**
+ * Value of a stocked part at a corner: its tolerance holds at 25 °C, and it drifts from there. With
+ * `sign` 0 the middle of its tolerance.
+ */
 export function atCorner(
   value: number,
   { tolerance, temperatureCoefficientPerKelvin }: Spreading,
@@ -64,64 +73,54 @@ export interface HeadCorners {
   fast: readonly (readonly PreparedSingle[])[];
 }
 
-const known = new WeakMap<Head, HeadCorners>();
-
 /**
  * The corners of a head: supply from empty to fresh, output resistance from half to twice the
  * typical, delay from half the typical to the maximum, bias and offset from none to the maximum with
  * either sign, LED voltage. The rate is monotone in R1–R3 (model section 6), so those stand at one
- * corner each: fastest at R1−, R2−, R3+; but see `thresholdSigns`. It is not monotone in offset and bias, so each corner holds
- * the undisturbed middle and all four signs (model section 8.5). Kept with the head.
+ * corner each: fastest at R1−, R2−, R3+; but see `thresholdSigns`. It is not monotone in offset and
+ * bias, so each corner holds the undisturbed middle and all four signs (model section 8.5). Kept with
+ * the head.
  */
-export function headCorners(head: Head, brief: SearchBrief): HeadCorners {
-  let corners = known.get(head);
-  if (!corners) {
-    const celsius = extremeCelsius(brief);
-    const reduce = cornerReducer(head, brief);
-    const combinations = comparatorCorners(head, brief);
-    const at = (corner: Corner) =>
-      celsius.map((each) =>
-        thresholdSigns(head).flatMap((signs) => {
-          const passive = passiveCorner(head, corner, each, signs);
-          return combinations.map((one) => reduce(Object.assign(passive, one)));
-        }),
-      );
-    corners = { celsius, slow: at('slow'), fast: at('fast') };
-    known.set(head, corners);
-  }
-  return corners;
-}
-
-const knownFew = new WeakMap<Head, HeadCorners>();
+export const headCorners = keptWith((head: Head, brief: SearchBrief): HeadCorners => {
+  const combinations = comparatorCorners(head, brief);
+  return reduceCorners(head, brief, thresholdSigns(head), () => combinations);
+});
 
 /**
  * Some of a head's corners, for bounds from below: slow with offset and bias pulling one way and much
  * output resistance, fast undisturbed with little, at both ends of the supply. Kept with the head.
  */
-export function fewCorners(head: Head, brief: SearchBrief): HeadCorners {
-  let few = knownFew.get(head);
-  if (!few) {
-    const celsius = extremeCelsius(brief);
-    const reduce = cornerReducer(head, brief);
-    const all = comparatorCorners(head, brief);
-    const slow = all.filter(
-      ({ outputFactor, offsetVolts, biasAmps }) =>
-        outputFactor === 2 && offsetVolts! * biasAmps! > 0,
+export const fewCorners = keptWith((head: Head, brief: SearchBrief): HeadCorners => {
+  const all = comparatorCorners(head, brief);
+  const slow = all.filter(
+    ({ outputFactor, offsetVolts, biasAmps }) => outputFactor === 2 && offsetVolts! * biasAmps! > 0,
+  );
+  const fast = all.filter(
+    ({ outputFactor, offsetVolts }) => outputFactor === 0.5 && offsetVolts === 0,
+  );
+  return reduceCorners(head, brief, [usualSigns], (corner) => {
+    const chosen = corner === 'slow' ? slow : fast;
+    return chosen.length === 0 ? all : chosen;
+  });
+});
+
+/** Reduces a head at its corners, each stand of R1–R3 with each of the comparator's corners. */
+function reduceCorners(
+  head: Head,
+  brief: SearchBrief,
+  stands: readonly Signs[],
+  combinations: (corner: Corner) => readonly HeadCorner[],
+): HeadCorners {
+  const celsius = extremeCelsius(brief);
+  const reduce = cornerReducer(head, brief);
+  const at = (corner: Corner) =>
+    celsius.map((each) =>
+      stands.flatMap((signs) => {
+        const passive = passiveCorner(head, corner, each, signs);
+        return combinations(corner).map((one) => reduce(Object.assign(passive, one)));
+      }),
     );
-    const fast = all.filter(
-      ({ outputFactor, offsetVolts }) => outputFactor === 0.5 && offsetVolts === 0,
-    );
-    const at = (corner: Corner, chosen: readonly HeadCorner[]) =>
-      celsius.map((each) => {
-        const passive = passiveCorner(head, corner, each, usualSigns);
-        return (chosen.length === 0 ? all : chosen).map((one) =>
-          reduce(Object.assign(passive, one)),
-        );
-      });
-    few = { celsius, slow: at('slow', slow), fast: at('fast', fast) };
-    knownFew.set(head, few);
-  }
-  return few;
+  return { celsius, slow: at('slow'), fast: at('fast') };
 }
 
 const disturbances = [
@@ -175,8 +174,7 @@ export function comparatorCorners(head: Head, brief: SearchBrief): HeadCorner[] 
   const { maxOffsetVolts, maxInputBiasAmps } = head.comparator;
   const lit = brief.load !== null && !head.buffered ? brief.load : null;
   const forward = lit ? [...new Set([lit.minForwardVolts, lit.maxForwardVolts])] : [undefined];
-  const supplies = [...new Set([brief.minSupplyVolts, brief.maxSupplyVolts])];
-  return supplies.flatMap((supplyVolts) =>
+  return supplyEnds(brief).flatMap((supplyVolts) =>
     forward.flatMap((forwardVolts) =>
       [0.5, 2].flatMap((outputFactor) =>
         disturbances.map(([offset, bias]): HeadCorner => ({

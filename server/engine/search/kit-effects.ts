@@ -1,7 +1,8 @@
 import { periodWith, type PreparedSingle } from '../prepared-single.ts';
 import { framePeriod, insulationSiemens, type Frame } from './aim.ts';
 import type { Effect, UniformEffect } from './density.ts';
-import { drift, extremeCelsius, logDrift } from './head-corners.ts';
+import { atCorner, extremeCelsius, logDrift, supplyEnds } from './head-corners.ts';
+import { keptWith } from './kept-with.ts';
 import { cornerReducer, type Head, type HeadCorner } from './heads.ts';
 import { limits } from './rules.ts';
 import type { SearchBrief, StockedCapacitor, StockedResistor } from './shelf.ts';
@@ -27,18 +28,7 @@ interface HeadEnds {
   isDelay?: boolean;
 }
 
-const knownEnds = new WeakMap<Head, readonly HeadEnds[]>();
-
-function headEnds(head: Head, brief: SearchBrief): readonly HeadEnds[] {
-  let ends = knownEnds.get(head);
-  if (!ends) {
-    ends = listEnds(head, brief);
-    knownEnds.set(head, ends);
-  }
-  return ends;
-}
-
-function listEnds(head: Head, brief: SearchBrief): HeadEnds[] {
+const headEnds = keptWith((head: Head, brief: SearchBrief): readonly HeadEnds[] => {
   const { thresholds, buffered } = head;
   const { maxOffsetVolts, maxInputBiasAmps } = head.comparator;
   const reduce = cornerReducer(head, brief);
@@ -70,10 +60,10 @@ function listEnds(head: Head, brief: SearchBrief): HeadEnds[] {
     );
   }
   return ends;
-}
+});
 
 /** Both delays between half the typical one (u = −1) and the maximum (u = 1). */
-function delaysAt(
+export function delaysAt(
   { comparator: part }: Head,
   u: number,
 ): { delayLowHighSeconds: number; delayHighLowSeconds: number } {
@@ -88,26 +78,17 @@ function delaysAt(
 /** The delays' range in thirds, by their middles: u from −1 (least) to 1 (most). */
 export const delayThirds = [-2 / 3, 0, 2 / 3] as const;
 
-const knownDelayed = new WeakMap<Head, readonly Head[]>();
-
 /** A head with the delays in the middle of each third of their range. */
-export function delayedHeads(head: Head, brief: SearchBrief): readonly Head[] {
-  let heads = knownDelayed.get(head);
-  if (!heads) {
-    const reduce = cornerReducer(head, brief);
-    heads = delayThirds.map((u): Head => {
-      const { delayLowHighSeconds, delayHighLowSeconds } = delaysAt(head, u);
-      const comparator = { ...head.comparator, delayLowHighSeconds, delayHighLowSeconds };
-      const prepared = reduce({ delayLowHighSeconds, delayHighLowSeconds });
-      return { ...head, comparator, prepared };
-    });
-    knownDelayed.set(head, heads);
-  }
-  return heads;
-}
+export const delayedHeads = keptWith((head: Head, brief: SearchBrief): readonly Head[] => {
+  const reduce = cornerReducer(head, brief);
+  return delayThirds.map((u): Head => {
+    const delays = delaysAt(head, u);
+    return { ...head, comparator: { ...head.comparator, ...delays }, prepared: reduce(delays) };
+  });
+});
 
 /** A circuit that does not oscillate at an end counts as this much slow. */
-const stopped = -50;
+export const stopped = -50;
 
 /**
  * What makes the kits of a frame differ, apart from the timing resistance: each independent, in ln of
@@ -208,23 +189,16 @@ interface Condition {
   prepared: PreparedSingle;
 }
 
-const knownConditions = new WeakMap<Head, readonly Condition[]>();
-
 /**
  * Shifts at both ends of the supply and the extreme temperatures against the nominal circuit; −∞
  * where the circuit stops.
  */
 export function conditionShifts(frame: Frame, ohms: number, brief: SearchBrief): ConditionShift[] {
   const { head, capacitor } = frame;
-  let conditions = knownConditions.get(head);
-  if (!conditions) {
-    conditions = reduceConditions(head, brief);
-    knownConditions.set(head, conditions);
-  }
   const nominal = Math.log(framePeriod(frame, ohms));
   const leakage = insulationSiemens(capacitor);
-  return conditions.map(({ volts, celsius, prepared }) => {
-    const farads = capacitor.farads * drift(capacitor.temperatureCoefficientPerKelvin, celsius);
+  return headConditions(head, brief).map(({ volts, celsius, prepared }) => {
+    const farads = atCorner(capacitor.farads, capacitor, 0, celsius);
     const period = periodWith(prepared, ohms, farads, leakage, capacitor.leakageAmps);
     return {
       volts,
@@ -234,24 +208,27 @@ export function conditionShifts(frame: Frame, ohms: number, brief: SearchBrief):
   });
 }
 
-function reduceConditions(head: Head, brief: SearchBrief): Condition[] {
-  const { r1, r2, r3 } = head.thresholds;
-  const warm = ({ ohms, temperatureCoefficientPerKelvin }: StockedResistor, celsius: number) =>
-    ohms * drift(temperatureCoefficientPerKelvin, celsius);
-  const supplies = [...new Set([brief.minSupplyVolts, brief.maxSupplyVolts])];
+const headConditions = keptWith((head: Head, brief: SearchBrief): readonly Condition[] => {
   const reduce = cornerReducer(head, brief);
+  return conditionsOf(brief).map(({ volts, celsius }) => ({
+    volts,
+    celsius,
+    prepared: reduce({ supplyVolts: volts, ...warmThresholds(head, celsius) }),
+  }));
+});
+
+/** Every pair of an extreme temperature and an end of the supply. */
+export function conditionsOf(brief: SearchBrief): { volts: number; celsius: number }[] {
   return extremeCelsius(brief).flatMap((celsius) =>
-    supplies.map((supplyVolts) => ({
-      volts: supplyVolts,
-      celsius,
-      prepared: reduce({
-        supplyVolts,
-        r1Ohms: warm(r1, celsius),
-        r2Ohms: warm(r2, celsius),
-        r3Ohms: warm(r3, celsius),
-      }),
-    })),
+    supplyEnds(brief).map((volts) => ({ volts, celsius })),
   );
+}
+
+/** R1–R3 in ohms at the middle of their tolerance and a temperature. */
+export function warmThresholds({ thresholds }: Head, celsius: number): HeadCorner {
+  const warm = (part: StockedResistor) => atCorner(part.ohms, part, 0, celsius);
+  const { r1, r2, r3 } = thresholds;
+  return { r1Ohms: warm(r1), r2Ohms: warm(r2), r3Ohms: warm(r3) };
 }
 
 /** Drift of the timing parts together, as a coefficient per kelvin. */
@@ -277,4 +254,21 @@ export function shiftRange(
     down = Math.min(down, moved);
   }
   return { up, down };
+}
+
+/** All that moves the kits of a frame at a timing resistance, each by its own part. */
+export interface FrameMoves {
+  effects: readonly KitEffect[];
+  /** d ln f / d ln R4. */
+  sensitivity: number;
+  shifts: readonly ConditionShift[];
+}
+
+/** Works out a frame's effects, sensitivity and condition shifts at a timing resistance in ohms. */
+export function frameMoves(frame: Frame, ohms: number, brief: SearchBrief): FrameMoves {
+  return {
+    effects: frameEffects(frame, ohms, brief),
+    sensitivity: timingSensitivity(frame, ohms),
+    shifts: conditionShifts(frame, ohms, brief),
+  };
 }

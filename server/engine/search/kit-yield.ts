@@ -15,12 +15,13 @@ import {
   delayedHeads,
   delayThirds,
   frameEffects,
+  frameMoves,
   shiftRange,
   timingCoefficient,
   timingSensitivity,
   timingShares,
   type ConditionShift,
-  type KitEffect,
+  type FrameMoves,
 } from './kit-effects.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
 import type { SearchBrief } from './shelf.ts';
@@ -63,17 +64,15 @@ const smallDelay = 0.004;
 /**
  * The spread of a frame at about the timing resistance that meets the target. Where the comparator's
  * delays count, the other causes weigh less the longer they are, so each third of their range is
- * taken by itself.
- * `all` are the frame's `frameEffects` there, worked out when left out.
+ * taken by itself. `moves` are the frame's `frameMoves` there, worked out when left out.
  */
 export function frameSpread(
   frame: Frame,
   idealOhms: number,
   brief: SearchBrief,
-  all: readonly KitEffect[] = frameEffects(frame, idealOhms, brief),
+  moves: FrameMoves = frameMoves(frame, idealOhms, brief),
 ): FrameSpread {
-  const sensitivity = timingSensitivity(frame, idealOhms);
-  const shifts = conditionShifts(frame, idealOhms, brief);
+  const { effects: all, sensitivity, shifts } = moves;
   const delay = all.find(({ isDelay }) => isDelay);
   const [least, most] = delay ? rangeOf(delay.effect) : [0, 0];
   if (most - least < smallDelay) {

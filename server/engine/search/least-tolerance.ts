@@ -1,18 +1,13 @@
 import type { AimedFrame } from './closest.ts';
-
-const knownTolerances = new WeakMap<object, Float64Array>();
+import { keptWith } from './kept-with.ts';
+import type { Offers } from './timing-choice.ts';
 
 /** The least tolerance among each value's offers; ∞ for none. */
-function leastTolerances({ stock: { offers } }: AimedFrame): Float64Array {
-  let tolerances = knownTolerances.get(offers);
-  if (!tolerances) {
-    tolerances = Float64Array.from(offers, (parts) =>
-      parts.reduce((least, part) => Math.min(least, part.tolerance), Number.POSITIVE_INFINITY),
-    );
-    knownTolerances.set(offers, tolerances);
-  }
-  return tolerances;
-}
+const leastTolerances = keptWith((offers: Offers) =>
+  Float64Array.from(offers, (parts) =>
+    parts.reduce((least, part) => Math.min(least, part.tolerance), Number.POSITIVE_INFINITY),
+  ),
+);
 
 /** The share of the first part in the relative change of entry `k`; 1 for one alone. */
 export function firstShare({ stock: { table, offers } }: AimedFrame, k: number): number {
@@ -24,8 +19,8 @@ export function firstShare({ stock: { table, offers } }: AimedFrame, k: number):
 
 /** The least tolerance that parts for entry `k` can have together; ∞ where the shelf has none. */
 export function leastTolerance(frame: AimedFrame, k: number, share: number): number {
-  const { table } = frame.stock;
-  const tolerances = leastTolerances(frame);
+  const { table, offers } = frame.stock;
+  const tolerances = leastTolerances(offers);
   const first = tolerances[table.first[k]!]!;
   const secondAt = table.second[k]!;
   return secondAt < 0 ? first : share * first + (1 - share) * tolerances[secondAt]!;

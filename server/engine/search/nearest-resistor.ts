@@ -6,7 +6,7 @@ import type { StockedResistor } from './shelf.ts';
  * the lower price, then to the lower id.
  */
 export function nearestResistor(
-  { ohms, parts }: ResistorValues,
+  { ohms, parts }: Pick<ResistorValues, 'ohms' | 'parts'>,
   idealOhms: number,
   passes: (part: StockedResistor) => boolean,
 ): StockedResistor | null {

@@ -82,7 +82,8 @@ export function formTimingTable(values: ResistorValues): TimingTable {
     const first = Math.floor((code >> 1) / (n + 1));
     const place = (code >> 1) - first * (n + 1);
     const second = place === n ? -1 : place;
-    const ohms = formed(values.ohms[first]!, second < 0 ? NaN : values.ohms[second]!, parallel);
+    const alone = values.ohms[first]!;
+    const ohms = second < 0 ? alone : joinedOhms(alone, values.ohms[second]!, parallel === 1);
     let at = k;
     // The keys are sorted by their upper bits only; what those don't tell apart is put in order here.
     for (; at > 0 && table.ohms[at - 1]! > ohms; at -= 1) copyEntry(table, at - 1, at);
@@ -126,16 +127,16 @@ function sortedKeys({ ohms, pairs }: ResistorValues): Float64Array {
     if (pairs[i] === 0) continue;
     for (let j = i; j < n; j += 1) {
       if (pairs[j] === 0) continue;
-      add(ohms[i]! + ohms[j]!, 2 * (row + j));
-      add(formed(ohms[i]!, ohms[j]!, 1), 2 * (row + j) + 1);
+      add(joinedOhms(ohms[i]!, ohms[j]!, false), 2 * (row + j));
+      add(joinedOhms(ohms[i]!, ohms[j]!, true), 2 * (row + j) + 1);
     }
   }
   return keys.slice(0, count).sort();
 }
 
-function formed(first: number, second: number, parallel: number): number {
-  if (Number.isNaN(second)) return first;
-  return parallel === 1 ? (first * second) / (first + second) : first + second;
+/** Resistance of two resistors side by side (`parallel`) or one after the other, in the unit given. */
+export function joinedOhms(first: number, second: number, parallel: boolean): number {
+  return parallel ? (first * second) / (first + second) : first + second;
 }
 
 function copyEntry(table: TimingTable, from: number, to: number): void {

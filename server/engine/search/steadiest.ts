@@ -1,9 +1,8 @@
 import type { Frame } from './aim.ts';
 import { byPriceThenIds, type Candidate } from './candidate.ts';
 import { closestOfFrame, formCandidate, type AimedFrame } from './closest.ts';
-import { guaranteedBand, worseEnd } from './guaranteed-band.ts';
+import { guaranteedBand, timingAt, worseEnd } from './guaranteed-band.ts';
 import {
-  atCorner,
   capacitanceAt,
   extremeRate,
   fewCorners,
@@ -14,7 +13,7 @@ import {
 import { inOrder } from './in-order.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
 import { firstNotBelow } from './resistor-values.ts';
-import type { SearchBrief, StockedResistor } from './shelf.ts';
+import type { SearchBrief } from './shelf.ts';
 import { firstShare, leastTolerance } from './least-tolerance.ts';
 import { kindsNear, mixedKinds, type TimingKind } from './timing-kinds.ts';
 import { chosenParts, visitChoices, type SingleTimingParts } from './timing-choice.ts';
@@ -194,9 +193,10 @@ function steadiestOfFrame(
       visitChoices(frame.stock, k, (first, second) => {
         const tolerance = share * first.tolerance + (1 - share) * (second?.tolerance ?? 0);
         if (tolerance > most) return;
-        const end = estimatedEnd(frame, reach, k, first, second);
+        const timing = chosenParts(table, k, { first, second });
+        const end = estimatedEnd(frame, reach, timing);
         if (best !== null && end + correction - slack > best.end) return;
-        const found = assess(frame, chosenParts(table, k, { first, second }), brief, shelf);
+        const found = assess(frame, timing, brief, shelf);
         if (found === null) return;
         [correction, slack] = [found.end - end, correctedSlack];
         const better = steadier(best, found);
@@ -279,36 +279,20 @@ function mostTolerance(reach: Reach, away: number, end: number): number {
   return Math.min(Math.expm1(slow), -Math.expm1(-fast)) * 1.05 + 1e-5;
 }
 
-/** Worse end of a choice for entry `k`, from the reach of its frame and the choice's own corners. */
+/** Worse end of timing parts, from the reach of their frame and the parts' own corners. */
 function estimatedEnd(
-  { stock: { table }, idealOhms }: AimedFrame,
+  { idealOhms }: AimedFrame,
   { celsius, slow, fast, slowPower, fastPower }: Reach,
-  k: number,
-  first: StockedResistor,
-  second: StockedResistor | null,
+  timing: SingleTimingParts,
 ): number {
   let [low, high] = [Number.POSITIVE_INFINITY, Number.NEGATIVE_INFINITY];
-  const parallel = table.parallel[k] === 1;
   for (let t = 0; t < celsius.length; t += 1) {
-    const most = ohmsAt(first, second, parallel, 1, celsius[t]!);
-    const least = ohmsAt(first, second, parallel, -1, celsius[t]!);
+    const most = timingAt(timing, 1, celsius[t]!);
+    const least = timingAt(timing, -1, celsius[t]!);
     low = Math.min(low, slow[t]! - slowPower * Math.log(most / idealOhms));
     high = Math.max(high, fast[t]! - fastPower * Math.log(least / idealOhms));
   }
   return Math.max(Math.expm1(high), -Math.expm1(low));
-}
-
-function ohmsAt(
-  first: StockedResistor,
-  second: StockedResistor | null,
-  parallel: boolean,
-  sign: number,
-  celsius: number,
-): number {
-  const a = atCorner(first.ohms, first, sign, celsius);
-  if (second === null) return a;
-  const b = atCorner(second.ohms, second, sign, celsius);
-  return parallel ? (a * b) / (a + b) : a + b;
 }
 
 function assess(

@@ -5,13 +5,19 @@ import {
   atCorner,
   capacitanceAt,
   comparatorCorners,
-  drift,
   extremeCelsius,
   passiveCorner,
   type Corner,
 } from './head-corners.ts';
 import type { Head, HeadCorner } from './heads.ts';
-import type { ConditionShift, KitEffect } from './kit-effects.ts';
+import {
+  conditionsOf,
+  delaysAt,
+  stopped,
+  warmThresholds,
+  type ConditionShift,
+  type KitEffect,
+} from './kit-effects.ts';
 import { limits } from './rules.ts';
 import type { SearchBrief, StockedResistor } from './shelf.ts';
 import { steeredCycle, steeredValues, type SteeredValues } from './steered.ts';
@@ -80,9 +86,6 @@ function drainFactors(
   return { least: Math.min(1, ...factors), most: Math.max(1, ...factors) };
 }
 
-/** A circuit that does not oscillate at an end counts as this much slow. */
-const stopped = -50;
-
 /** What makes the kits of a steered pack differ, as `frameEffects` and `timingEffects` together. */
 export function steeredEffects(candidate: SteeredCandidate, brief: SearchBrief): KitEffect[] {
   const { frame, timing } = candidate;
@@ -107,8 +110,6 @@ export function steeredEffects(candidate: SteeredCandidate, brief: SearchBrief):
   const { capacitor } = frame;
   const capacity = (tolerance: number) =>
     along((u) => logAt({ farads: within(capacitor.farads, tolerance)(u) }));
-  const delay = (typical: number, u: number) =>
-    ((1 - u) / 2) * (typical / 2) + ((1 + u) / 2) * part.maxDelaySeconds;
   const effects: [KitEffect['cause'], UniformEffect][] = [
     ['thresholds', threshold('r1Ohms', thresholds.r1)],
     ['thresholds', threshold('r2Ohms', thresholds.r2)],
@@ -130,18 +131,7 @@ export function steeredEffects(candidate: SteeredCandidate, brief: SearchBrief):
     ['comparator', along((u) => logAt({}, { offsetVolts: u * part.maxOffsetVolts }))],
     ['comparator', along((u) => biased(candidate, u * part.maxInputBiasAmps, brief))],
     ['comparator', along((u) => logAt({}, { outputFactor: 1.25 + 0.75 * u }))],
-    [
-      'comparator',
-      along((u) =>
-        logAt(
-          {},
-          {
-            delayLowHighSeconds: delay(part.delayLowHighSeconds, u),
-            delayHighLowSeconds: delay(part.delayHighLowSeconds, u),
-          },
-        ),
-      ),
-    ],
+    ['comparator', along((u) => logAt({}, delaysAt(frame.head, u)))],
   ];
   return effects.map(([cause, effect]) => ({ cause, effect }));
 }
@@ -162,31 +152,19 @@ export function steeredShifts(candidate: SteeredCandidate, brief: SearchBrief): 
   const { frame, timing } = candidate;
   const nominal = { ...steeredValues(timing, frame), drained: false };
   const dryHz = steeredCycle(frame, timing.diode, nominal, brief)?.frequencyHz ?? NaN;
-  const { r1, r2, r3 } = frame.head.thresholds;
   const { capacitor } = frame;
-  const warm = (part: StockedResistor, celsius: number) =>
-    part.ohms * drift(part.temperatureCoefficientPerKelvin, celsius);
-  const supplies = [...new Set([brief.minSupplyVolts, brief.maxSupplyVolts])];
-  return extremeCelsius(brief).flatMap((celsius) =>
-    supplies.map((supplyVolts) => {
-      const values = {
-        ...nominal,
-        chargeOhms: warm(timing.charge, celsius),
-        dischargeOhms: warm(timing.discharge, celsius),
-        farads: capacitor.farads * drift(capacitor.temperatureCoefficientPerKelvin, celsius),
-        celsius,
-      };
-      const cycle = steeredCycle(frame, timing.diode, values, brief, {
-        supplyVolts,
-        r1Ohms: warm(r1, celsius),
-        r2Ohms: warm(r2, celsius),
-        r3Ohms: warm(r3, celsius),
-      });
-      return {
-        volts: supplyVolts,
-        celsius,
-        shift: cycle === null ? Number.NEGATIVE_INFINITY : Math.log(cycle.frequencyHz / dryHz),
-      };
-    }),
-  );
+  const warm = (part: StockedResistor, celsius: number) => atCorner(part.ohms, part, 0, celsius);
+  return conditionsOf(brief).map(({ volts, celsius }) => {
+    const values = {
+      ...nominal,
+      chargeOhms: warm(timing.charge, celsius),
+      dischargeOhms: warm(timing.discharge, celsius),
+      farads: atCorner(capacitor.farads, capacitor, 0, celsius),
+      celsius,
+    };
+    const corner = { supplyVolts: volts, ...warmThresholds(frame.head, celsius) };
+    const cycle = steeredCycle(frame, timing.diode, values, brief, corner);
+    const shift = cycle === null ? Number.NEGATIVE_INFINITY : Math.log(cycle.frequencyHz / dryHz);
+    return { volts, celsius, shift };
+  });
 }

@@ -1,14 +1,14 @@
 import type { Circuit } from '../circuit.ts';
 import { analyseCycle, type Cycle } from '../cycle.ts';
 import { warmDiode } from '../warm-circuit.ts';
-import { insulationSiemens, type Frame } from './aim.ts';
+import { circuitCapacitor, type Frame } from './aim.ts';
 import type { Candidate, SteeredTimingParts } from './candidate.ts';
-import { demandOf, holdsMore } from './demand.ts';
+import { holdsMore, withOneMore, type ResistorDemand } from './demand.ts';
 import { headCircuit, headsFor, type Head, type HeadCorner } from './heads.ts';
+import { nearestResistor } from './nearest-resistor.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
-import { firstNotBelow } from './resistor-values.ts';
 import { limits } from './rules.ts';
-import type { SearchBrief, StockedCapacitor, StockedDiode, StockedResistor } from './shelf.ts';
+import type { SearchBrief, StockedCapacitor, StockedDiode } from './shelf.ts';
 import type { Offers } from './timing-choice.ts';
 
 /** What a steered circuit has besides its head; ohms and farads as they are at `celsius`. */
@@ -46,7 +46,6 @@ export function steeredCircuit(
   corner: HeadCorner = {},
 ): Circuit {
   const base = headCircuit(head, brief, values.drained ? corner : { ...corner, biasAmps: 0 });
-  const siemens = values.drained ? insulationSiemens(capacitor) : 0;
   return {
     ...base,
     celsius: values.celsius,
@@ -63,9 +62,7 @@ export function steeredCircuit(
     },
     capacitor: {
       ...base.capacitor,
-      farads: values.farads,
-      leakageOhms: siemens > 0 ? 1 / siemens : null,
-      leakageAmps: values.drained ? capacitor.leakageAmps : 0,
+      ...(values.drained ? circuitCapacitor(capacitor, values.farads) : { farads: values.farads }),
     },
   };
 }
@@ -133,16 +130,13 @@ function steeredPack(
 ): Candidate<SteeredTimingParts> | null {
   const ideal = idealOhms(frame, diode, brief);
   if (ideal === null) return null;
-  const charge = nearestOffer(shelf, offers, frame.head, ideal.chargeOhms, brief.quantity, null);
+  const nearest = (ohms: number, demand: ResistorDemand) =>
+    nearestResistor({ ohms: shelf.values.ohms, parts: offers }, ohms, (part) =>
+      holdsMore(part, 1, demand, brief.quantity),
+    );
+  const charge = nearest(ideal.chargeOhms, frame.head.demand);
   if (charge === null) return null;
-  const discharge = nearestOffer(
-    shelf,
-    offers,
-    frame.head,
-    ideal.dischargeOhms,
-    brief.quantity,
-    charge,
-  );
+  const discharge = nearest(ideal.dischargeOhms, withOneMore(frame.head.demand, charge));
   if (discharge === null) return null;
   const timing: SteeredTimingParts = { kind: 'steered', charge, discharge, diode };
   if (!leaksLittle(timing, brief)) return null;
@@ -205,32 +199,6 @@ function idealOhms(
   }
   if (outside(chargeOhms, 1) || outside(dischargeOhms, 1)) return null;
   return { chargeOhms, dischargeOhms };
-}
-
-/** The stocked part nearest by ratio; among equals the cheaper, then the lower id. */
-function nearestOffer(
-  { values }: PreparedShelf,
-  offers: Offers,
-  head: Head,
-  ohms: number,
-  quantity: number,
-  beside: StockedResistor | null,
-): StockedResistor | null {
-  const demand = beside === null ? head.demand : withOne(head, beside);
-  const start = firstNotBelow(values.ohms, ohms);
-  const usable = (k: number) => offers[k]?.find((part) => holdsMore(part, 1, demand, quantity));
-  let below = start - 1;
-  while (below >= 0 && !usable(below)) below -= 1;
-  let above = start;
-  while (above < values.ohms.length && !usable(above)) above += 1;
-  const [a, b] = [usable(below), usable(above)];
-  if (!a || !b) return a ?? b ?? null;
-  return ohms / a.ohms <= b.ohms / ohms ? a : b;
-}
-
-function withOne({ thresholds, pullUp, ledResistor, idle }: Head, part: StockedResistor) {
-  const { r1, r2, r3 } = thresholds;
-  return demandOf([r1, r2, r3, pullUp, ledResistor, idle, idle, part]);
 }
 
 /** Half of what the supply's ends alone move ln of a steered pack's rate apart, without bias and leakage. */

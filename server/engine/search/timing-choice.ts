@@ -1,4 +1,5 @@
 import { holdsMore, type ResistorDemand } from './demand.ts';
+import { keptByName } from './kept-with.ts';
 import type { ResistorValues, TimingTable } from './resistor-values.ts';
 import type { StockedResistor } from './shelf.ts';
 
@@ -21,22 +22,9 @@ export type Offers = readonly (readonly StockedResistor[])[];
 /** A pack takes at most this many pieces of one resistor: R1–R3, two for idle sections, four more. */
 const mostOfOne = 9;
 
-const known = new WeakMap<ResistorValues, Map<number, Offers>>();
-
 /** Lists the offers of every value; see `Offers`. Kept with the values. */
-export function listOffers(values: ResistorValues, quantity: number): Offers {
-  const kept = known.get(values) ?? new Map<number, Offers>();
-  known.set(values, kept);
-  let offers = kept.get(quantity);
-  if (!offers) {
-    offers = findOffers(values, quantity);
-    kept.set(quantity, offers);
-  }
-  return offers;
-}
-
-function findOffers(values: ResistorValues, quantity: number): Offers {
-  return values.parts.map((parts) => {
+export const listOffers = keptByName((values: ResistorValues, quantity: number): Offers =>
+  values.parts.map((parts) => {
     if (parts.length === 1) return parts[0]!.available >= quantity ? parts : [];
     const settled = new Set<string>();
     return parts.filter((part) => {
@@ -46,8 +34,8 @@ function findOffers(values: ResistorValues, quantity: number): Offers {
       if (part.available >= mostOfOne * quantity) settled.add(kind);
       return true;
     });
-  });
-}
+  }),
+);
 
 /** What the shelf lends to one head: timing table, offers, what the head itself takes, how often. */
 export interface TimingStock {
@@ -126,31 +114,22 @@ export function chosenParts(
   };
 }
 
-const knownDeep = new WeakMap<Offers, Map<number, Uint8Array>>();
-
 /** Which values the shelf holds so deep that no pack of this quantity can run short of them. */
-function deepValues(offers: Offers, quantity: number): Uint8Array {
-  const kept = knownDeep.get(offers) ?? new Map<number, Uint8Array>();
-  knownDeep.set(offers, kept);
-  let deep = kept.get(quantity);
-  if (!deep) {
-    const isDeep = (part: StockedResistor) => part.available >= mostOfOne * quantity;
-    deep = Uint8Array.from(offers, (parts) => (parts.some(isDeep) ? 1 : 0));
-    kept.set(quantity, deep);
-  }
-  return deep;
-}
+const deepValues = keptByName((offers: Offers, quantity: number) => {
+  const isDeep = (part: StockedResistor) => part.available >= mostOfOne * quantity;
+  return Uint8Array.from(offers, (parts) => (parts.some(isDeep) ? 1 : 0));
+});
 
 /** Whether the shelf holds any choice for entry `k`. Quicker than finding the cheapest. */
 export function isMakeable(stock: TimingStock, k: number): boolean {
   const { table, offers, demand, quantity } = stock;
   const deep = deepValues(offers, quantity);
-  const second = table.second[k]!;
-  if (deep[table.first[k]!] === 1 && (second < 0 || deep[second] === 1)) return true;
-  const firstOffers = offers[table.first[k]!]!;
-  if (firstOffers.length === 0) return false;
+  const firstAt = table.first[k]!;
   const secondAt = table.second[k]!;
-  if (secondAt >= 0 && secondAt !== table.first[k]) {
+  if (deep[firstAt] === 1 && (secondAt < 0 || deep[secondAt] === 1)) return true;
+  const firstOffers = offers[firstAt]!;
+  if (firstOffers.length === 0) return false;
+  if (secondAt >= 0 && secondAt !== firstAt) {
     // Two values share no part, so each needs only one of its own.
     return (
       firstOffers.some((part) => holdsMore(part, 1, demand, quantity)) &&

@@ -1,3 +1,4 @@
+import { keptByName, keptWith } from './kept-with.ts';
 import type { ResistorValues } from './resistor-values.ts';
 import type { Offers } from './timing-choice.ts';
 
@@ -40,55 +41,41 @@ function mixAll(kinds: readonly TimingKind[]): TimingKind[] {
   ]);
 }
 
-const knownAll = new WeakMap<Offers, readonly TimingKind[]>();
-
 /** The kinds of timing resistance that all offers can form, singly or two mixed. Kept with the offers. */
-export function mixedKinds(offers: Offers): readonly TimingKind[] {
-  let mixed = knownAll.get(offers);
-  if (!mixed) {
-    mixed = mixAll(kindsOf(offers));
-    knownAll.set(offers, mixed);
-  }
-  return mixed;
-}
-
-const knownNear = new WeakMap<Offers, Map<number, readonly TimingKind[]>>();
+export const mixedKinds = keptWith((offers: Offers): readonly TimingKind[] =>
+  mixAll(kindsOf(offers)),
+);
 
 /**
  * The kinds that a timing resistance of about `ohms` can be of: singly or mixed by parts within a
  * factor of four, which make a quarter of it or more, with a little of any other. Kept with the offers.
  */
 export function kindsNear(
-  { ohms: values }: ResistorValues,
+  values: ResistorValues,
   offers: Offers,
   ohms: number,
 ): readonly TimingKind[] {
-  const known = knownNear.get(offers) ?? new Map<number, readonly TimingKind[]>();
-  knownNear.set(offers, known);
-  const octave = Math.floor(Math.log2(ohms));
-  let kinds = known.get(octave);
-  if (!kinds) {
+  return kindsOfOctave(offers, Math.floor(Math.log2(ohms)), values);
+}
+
+const kindsOfOctave = keptByName(
+  (offers: Offers, octave: number, { ohms }: ResistorValues): readonly TimingKind[] => {
     // The rate may be off by half as much again, and so the resistance.
     const [from, to] = [2 ** octave / nearFactor / 1.6, 2 ** (octave + 1) * nearFactor * 1.6];
-    const near = kindsOf(offers.filter((_, k) => values[k]! >= from && values[k]! <= to));
-    const far = kindsOf(offers).filter(
-      (kind) =>
-        !near.some(
-          (one) =>
-            one.tolerance === kind.tolerance &&
-            one.coefficientPerKelvin === kind.coefficientPerKelvin,
-        ),
-    );
-    kinds =
-      near.length === 0
-        ? mixedKinds(offers)
-        : [
-            ...mixAll(near),
-            ...near.flatMap((one) =>
-              far.flatMap((other) => smallShares.map((share) => mix(one, other, share))),
-            ),
-          ];
-    known.set(octave, kinds);
-  }
-  return kinds;
-}
+    const near = kindsOf(offers.filter((_, k) => ohms[k]! >= from && ohms[k]! <= to));
+    if (near.length === 0) return mixedKinds(offers);
+    const isNear = (kind: TimingKind) =>
+      near.some(
+        (one) =>
+          one.tolerance === kind.tolerance &&
+          one.coefficientPerKelvin === kind.coefficientPerKelvin,
+      );
+    const far = kindsOf(offers).filter((kind) => !isNear(kind));
+    return [
+      ...mixAll(near),
+      ...near.flatMap((one) =>
+        far.flatMap((other) => smallShares.map((share) => mix(one, other, share))),
+      ),
+    ];
+  },
+);

@@ -13,6 +13,8 @@ import {
   type Corner,
 } from './head-corners.ts';
 import { cornerReducer, type Head } from './heads.ts';
+import { keptWith } from './kept-with.ts';
+import { conditionsOf } from './kit-effects.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
 import { limits } from './rules.ts';
 import { holdsMore } from './demand.ts';
@@ -139,33 +141,26 @@ interface SetHead {
   conditions: readonly { celsius: number; prepared: PreparedSingle }[];
 }
 
-const knownSets = new WeakMap<Head, readonly SetHead[]>();
-
 /** For each extreme kit, the head at 25 °C and the nominal supply, and at the ends of both. */
-function setHeads(head: Head, brief: SearchBrief): readonly SetHead[] {
-  let sets = knownSets.get(head);
-  if (!sets) {
-    const reduce = cornerReducer(head, brief);
-    const supplies = [...new Set([brief.minSupplyVolts, brief.maxSupplyVolts])];
-    const kits = comparatorCorners(head, brief).filter(
-      (kit) => kit.supplyVolts === brief.minSupplyVolts,
-    );
-    sets = (['slow', 'fast'] as Corner[]).flatMap((corner) =>
-      kits.map((kit): SetHead => {
-        const at = (celsius: number, supplyVolts: number) =>
-          reduce({ ...passiveCorner(head, corner, celsius), ...kit, supplyVolts });
-        return {
-          atSetting: at(25, brief.supplyVolts),
-          conditions: extremeCelsius(brief).flatMap((celsius) =>
-            supplies.map((volts) => ({ celsius, prepared: at(celsius, volts) })),
-          ),
-        };
-      }),
-    );
-    knownSets.set(head, sets);
-  }
-  return sets;
-}
+const setHeads = keptWith((head: Head, brief: SearchBrief): readonly SetHead[] => {
+  const reduce = cornerReducer(head, brief);
+  const kits = comparatorCorners(head, brief).filter(
+    (kit) => kit.supplyVolts === brief.minSupplyVolts,
+  );
+  return (['slow', 'fast'] as Corner[]).flatMap((corner) =>
+    kits.map((kit): SetHead => {
+      const at = (celsius: number, supplyVolts: number) =>
+        reduce({ ...passiveCorner(head, corner, celsius), ...kit, supplyVolts });
+      return {
+        atSetting: at(25, brief.supplyVolts),
+        conditions: conditionsOf(brief).map(({ celsius, volts }) => ({
+          celsius,
+          prepared: at(celsius, volts),
+        })),
+      };
+    }),
+  );
+});
 
 /** How far off a maker leaves a trimmed kit at most, as a fraction of the rate. */
 export function settingError(ohms: number, trimmer: StockedTrimmer): number {

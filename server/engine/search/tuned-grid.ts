@@ -1,8 +1,8 @@
 import { aimFrame, type Frame } from './aim.ts';
-import type { ResistorDemand } from './demand.ts';
 import type { Head } from './heads.ts';
+import { keptByName } from './kept-with.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
-import { firstNotBelow, type ResistorValues } from './resistor-values.ts';
+import { firstNotBelow } from './resistor-values.ts';
 import { limits } from './rules.ts';
 import type { SearchBrief, StockedResistor } from './shelf.ts';
 import {
@@ -10,6 +10,7 @@ import {
   listOffers,
   type Offers,
   type SingleTimingParts,
+  type TimingStock,
 } from './timing-choice.ts';
 
 /** The stocked resistances that a tuned kit may take R4 from, once its capacitor is measured. */
@@ -41,7 +42,6 @@ export function tunedClassOf({ first, second }: SingleTimingParts): number {
 
 /** Every resistance of a class that the shelf can make beside a head, with what its gaps amount to. */
 interface ClassGrid {
-  offers: Offers;
   tolerance: number;
   coefficientsPerKelvin: readonly number[];
   /** Ascending; gap k lies between entries k and k + 1, in ln R. */
@@ -56,48 +56,35 @@ interface ClassGrid {
 
 const blockLength = 64;
 
-const knownGrids = new WeakMap<ResistorValues, Map<string, ClassGrid>>();
-const knownOffers = new WeakMap<Offers, Map<number, Offers>>();
-
-/** The offers of a class of tolerance. */
+/** The offers of a class of tolerance. Kept with the shelf's offers. */
 export function classOffers(shelf: PreparedShelf, limit: number, quantity: number): Offers {
-  const all = listOffers(shelf.values, quantity);
-  const known = knownOffers.get(all) ?? new Map<number, Offers>();
-  knownOffers.set(all, known);
-  let offers = known.get(limit);
-  if (!offers) {
-    const suits = (part: StockedResistor) => part.tolerance <= limit * (1 + 1e-9);
-    offers = all.map((parts) => (parts.every(suits) ? parts : parts.filter(suits)));
-    known.set(limit, offers);
-  }
-  return offers;
+  return offersWithin(listOffers(shelf.values, quantity), limit);
 }
 
-/** The grid of a class beside what a head takes, kept with the values as long as the stock stands. */
+const offersWithin = keptByName((offers: Offers, limit: number): Offers => {
+  const suits = (part: StockedResistor) => part.tolerance <= limit * (1 + 1e-9);
+  return offers.map((parts) => (parts.every(suits) ? parts : parts.filter(suits)));
+});
+
+/** The grid of a class beside what a head takes, kept with the offers as long as the stock stands. */
 function classGrid(
-  shelf: PreparedShelf,
+  { table, values }: PreparedShelf,
   limit: number,
   { demand }: Head,
   quantity: number,
 ): ClassGrid {
-  const known = knownGrids.get(shelf.values) ?? new Map<string, ClassGrid>();
-  knownGrids.set(shelf.values, known);
-  const key = [limit, quantity, ...demand.ids, ...demand.counts].join();
-  let grid = known.get(key);
-  if (!grid) {
-    grid = formGrid(shelf, classOffers(shelf, limit, quantity), demand, quantity);
-    known.set(key, grid);
-  }
-  return grid;
+  const offers = offersWithin(listOffers(values, quantity), limit);
+  const beside = [...demand.ids, ...demand.counts].join();
+  return gridBeside(offers, beside, { table, offers, demand, quantity });
 }
 
-function formGrid(
-  { table }: PreparedShelf,
-  offers: Offers,
-  demand: ResistorDemand,
-  quantity: number,
-): ClassGrid {
-  const makeable = makeableEntries({ table, offers, demand, quantity });
+const gridBeside = keptByName((_offers: Offers, _beside: string, stock: TimingStock) =>
+  formGrid(stock),
+);
+
+function formGrid(stock: TimingStock): ClassGrid {
+  const { table, offers } = stock;
+  const makeable = makeableEntries(stock);
   const places = Int32Array.from(makeable);
   const ohms = Float64Array.from(makeable, (k) => table.ohms[k]!);
   const cubesBefore = new Float64Array(ohms.length + 1);
@@ -113,7 +100,6 @@ function formGrid(
   const least = coefficients.reduce((a, b) => Math.min(a, b), Number.POSITIVE_INFINITY);
   const most = coefficients.reduce((a, b) => Math.max(a, b), Number.NEGATIVE_INFINITY);
   return {
-    offers,
     tolerance: all.reduce((worst, part) => Math.max(worst, part.tolerance), 0),
     coefficientsPerKelvin: all.length === 0 ? [] : [...new Set([least, most])],
     ohms,

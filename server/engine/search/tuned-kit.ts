@@ -1,14 +1,12 @@
 import { aimFrame, type Frame } from './aim.ts';
-import { byCloseness } from './candidate.ts';
-import { formCandidate } from './closest.ts';
 import type { ResistorDemand } from './demand.ts';
-import { promise, type RankedPack } from './find-packs.ts';
 import type { GuaranteedBand } from './guaranteed-band.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
+import { promise, type RankedPack } from './promise.ts';
 import { lowestTimingOhms } from './rules.ts';
 import type { SearchBrief } from './shelf.ts';
-import { cheapestChoice, type SingleTimingParts } from './timing-choice.ts';
-import { classOffers, gridAround } from './tuned-grid.ts';
+import type { SingleTimingParts } from './timing-choice.ts';
+import { gridCandidates } from './tuned.ts';
 
 /** One kit with its very capacitor measured and its timing resistance chosen for it. */
 export type TunedKit = RankedPack & { timing: SingleTimingParts };
@@ -39,15 +37,10 @@ export function tunedKits(
   const measured = measuredFrame(frame, farads, one, shelf);
   const { ohms, reaches } = aimFrame(measured, one);
   if (!reaches) return [];
-  const offers = classOffers(shelf, limit, one.quantity);
-  const stock = { table: shelf.table, offers, demand: nothingElse, quantity: one.quantity };
-  return gridAround(measured.head, ohms, limit, one, shelf)
-    .flatMap((place) => {
-      const timing = cheapestChoice(stock, place);
-      return (timing && formCandidate(measured, timing, one)) ?? [];
-    })
-    .sort(byCloseness)
-    .map((candidate) => ({ ...promise(candidate, one, shelf), timing: candidate.timing }));
+  return gridCandidates(measured, ohms, limit, one, shelf).map((candidate) => ({
+    ...promise(candidate, one, shelf),
+    timing: candidate.timing,
+  }));
 }
 
 /** The sold frame with its capacitor as it was measured, and the least timing resistance it may have. */

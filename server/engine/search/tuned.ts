@@ -1,8 +1,9 @@
+import type { Frame } from './aim.ts';
 import { byCloseness, type Candidate } from './candidate.ts';
 import { formCandidate, type AimedFrame } from './closest.ts';
 import type { PreparedShelf } from './prepared-shelf.ts';
 import type { SearchBrief } from './shelf.ts';
-import { cheapestChoice } from './timing-choice.ts';
+import { cheapestChoice, type SingleTimingParts } from './timing-choice.ts';
 import { classOffers, gridAround, tunedClasses, tunedClassOf, tunedGrid } from './tuned-grid.ts';
 
 /**
@@ -34,11 +35,28 @@ function nearestOnGrid(
   brief: SearchBrief,
   shelf: PreparedShelf,
 ): Candidate | null {
-  const stock = { ...frame.stock, offers: classOffers(shelf, limit, brief.quantity) };
-  const found = gridAround(frame.head, frame.idealOhms, limit, brief, shelf).flatMap((place) => {
-    const timing = cheapestChoice(stock, place);
-    return (timing && formCandidate(frame, timing, brief)) ?? [];
-  });
-  const [nearest] = found.sort(byCloseness);
+  const [nearest] = gridCandidates(frame, frame.idealOhms, limit, brief, shelf);
   return nearest && tunedClassOf(nearest.timing) === limit ? nearest : null;
+}
+
+/**
+ * What the grid of a class makes of a frame: the resistances next below and above `ohms`, the nearest
+ * to the target first.
+ */
+export function gridCandidates(
+  frame: Frame,
+  ohms: number,
+  limit: number,
+  brief: SearchBrief,
+  shelf: PreparedShelf,
+): Candidate<SingleTimingParts>[] {
+  const { quantity } = brief;
+  const offers = classOffers(shelf, limit, quantity);
+  const stock = { table: shelf.table, offers, demand: frame.head.demand, quantity };
+  return gridAround(frame.head, ohms, limit, brief, shelf)
+    .flatMap((place) => {
+      const timing = cheapestChoice(stock, place);
+      return (timing && formCandidate(frame, timing, brief)) ?? [];
+    })
+    .sort(byCloseness);
 }

@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { createNormal, createRandom } from '../../../server/engine/random.ts';
-import { findPacks, type RankedPack } from '../../../server/engine/search/find-packs.ts';
+import { findPacks } from '../../../server/engine/search/find-packs.ts';
+import type { RankedPack } from '../../../server/engine/search/promise.ts';
 import { prepareShelf } from '../../../server/engine/search/prepared-shelf.ts';
 import type { SearchBrief } from '../../../server/engine/search/shelf.ts';
 import { kitHz, type Draw } from './drawn-kits.ts';

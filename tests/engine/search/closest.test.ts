@@ -1,7 +1,8 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import { analyseCycle } from '../../../server/engine/cycle.ts';
-import { findPacks, type RankedPack } from '../../../server/engine/search/find-packs.ts';
+import { findPacks } from '../../../server/engine/search/find-packs.ts';
+import type { RankedPack } from '../../../server/engine/search/promise.ts';
 import { prepareShelf } from '../../../server/engine/search/prepared-shelf.ts';
 import type { Shelf } from '../../../server/engine/search/shelf.ts';
 import { everyKit, isOnTheShelf, priceOf, rateOf } from './exhaustive-search.ts';

@@ -1,7 +1,8 @@
 import fc from 'fast-check';
 import { beforeAll, describe, expect, it } from 'vitest';
 import { createNormal, createRandom } from '../../../server/engine/random.ts';
-import { findPacks, type RankedPack } from '../../../server/engine/search/find-packs.ts';
+import { findPacks } from '../../../server/engine/search/find-packs.ts';
+import type { RankedPack } from '../../../server/engine/search/promise.ts';
 import { guaranteedBand } from '../../../server/engine/search/guaranteed-band.ts';
 import { prepareShelf } from '../../../server/engine/search/prepared-shelf.ts';
 import type { SearchBrief, Shelf, StockedResistor } from '../../../server/engine/search/shelf.ts';

@@ -1,11 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { createNormal, createRandom } from '../../../server/engine/random.ts';
-import {
-  findPacks,
-  promise,
-  type Rank,
-  type RankedPack,
-} from '../../../server/engine/search/find-packs.ts';
+import { findPacks } from '../../../server/engine/search/find-packs.ts';
+import { promise, type Rank, type RankedPack } from '../../../server/engine/search/promise.ts';
 import { guaranteedBand, worseEnd } from '../../../server/engine/search/guaranteed-band.ts';
 import { kitYield } from '../../../server/engine/search/kit-yield.ts';
 import { prepareShelf } from '../../../server/engine/search/prepared-shelf.ts';
